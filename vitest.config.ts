@@ -16,7 +16,12 @@ export default defineConfig({
         extends: true,
         test: {
           name: "unit",
-          include: ["lib/**/*.test.ts", "components/**/*.test.{ts,tsx}", "tests/architecture/**/*.test.ts", "tests/unit/**/*.test.ts"],
+          include: [
+            "lib/**/*.test.ts",
+            "components/**/*.test.{ts,tsx}",
+            "tests/architecture/**/*.test.ts",
+            "tests/unit/**/*.test.ts",
+          ],
           environment: "node",
           testTimeout: 120_000,
         },

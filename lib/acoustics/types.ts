@@ -172,7 +172,11 @@ export type AdviseResult = {
   /** Unmeasured keys, best first, with the mean half-width after reading each. */
   next: { midi: number; meanBandCents: number }[];
   enough: boolean;
-  widest: { register: "bass" | "tenor" | "middle" | "treble" | "top"; meanBandCents: number; toleranceCents: number };
+  widest: {
+    register: "bass" | "tenor" | "middle" | "treble" | "top";
+    meanBandCents: number;
+    toleranceCents: number;
+  };
 };
 
 /** A rejected input: `path` names the field, as in "readings[3].hz". */
