@@ -1,0 +1,7 @@
+export * from "./auth";
+export * from "./customers";
+export * from "./instruments";
+export * from "./plans";
+export * from "./readings";
+export * from "./shop";
+export * from "./visits";
