@@ -70,7 +70,13 @@ export type FitResult = {
   warnings: FitWarning[];
 };
 
-export type Observation = { midi: number; b: number; bSigma: number };
+export type Observation = {
+  midi: number;
+  b: number;
+  bSigma: number;
+  /** Root mean square residual of the note's own fit, cents; the plan's band uses it in place of the register's. */
+  residualCents?: number;
+};
 
 export type KeyboardInput = {
   observations: readonly Observation[];
@@ -90,6 +96,8 @@ export type KeyEstimate = {
   z: number | null;
   /** Smallest relative change of B this sheet could have detected on a measured key, e.g. 0.12. */
   detectableChange: number | null;
+  /** As given with the observation. */
+  residualCents?: number;
 };
 
 export type KeyboardResult = {
