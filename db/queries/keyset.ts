@@ -1,0 +1,55 @@
+import { type SQL, sql } from "drizzle-orm";
+import { AppError } from "@/lib/errors";
+
+/**
+ * Pages by key, not by offset: a page begins after the last row of the one before, so rows added meanwhile
+ * neither repeat nor vanish. The order is one expression (never null) and the id.
+ */
+export type Order = { by: SQL; direction: "asc" | "desc"; id: SQL };
+
+export type Page = { cursor?: string | undefined; most: number };
+
+type Key = { value: string; id: string };
+
+function decode(cursor: string): Key {
+  try {
+    const [value, id] = JSON.parse(Buffer.from(cursor, "base64url").toString("utf8"));
+    if (typeof value === "string" && typeof id === "string") return { value, id };
+  } catch {
+    // Falls through to the error: a cursor is only ever one of ours.
+  }
+  throw new AppError("invalid", "This page is gone. Start from the first one.", {
+    fields: { cursor: "Not a cursor of this list." },
+  });
+}
+
+/** The condition that begins a page, or nothing for the first one. `type` is the expression's SQL type. */
+export function pageStart(
+  order: Order,
+  page: Page,
+  type: "text" | "timestamptz" | "integer",
+): SQL | undefined {
+  if (!page.cursor) return undefined;
+  const { value, id } = decode(page.cursor);
+  const comparison = sql.raw(order.direction === "asc" ? ">" : "<");
+  return sql`(${order.by}, ${order.id}) ${comparison} (${value}::${sql.raw(type)}, ${id}::uuid)`;
+}
+
+export function orderBy(order: Order): SQL {
+  const direction = sql.raw(order.direction);
+  return sql`${order.by} ${direction}, ${order.id} ${direction}`;
+}
+
+/** Takes one row more than asked as the sign that there is another page. Rows carry `orderKey` as text. */
+export function paged<Row extends { id: string; orderKey: string }>(
+  rows: Row[],
+  page: Page,
+): { items: Omit<Row, "orderKey">[]; next: string | null } {
+  const shown = rows.slice(0, page.most);
+  const last = shown.at(-1);
+  const next =
+    rows.length > page.most && last
+      ? Buffer.from(JSON.stringify([last.orderKey, last.id])).toString("base64url")
+      : null;
+  return { items: shown.map(({ orderKey: _, ...row }) => row), next };
+}
