@@ -20,6 +20,8 @@ export type FitInput = {
   /** Partials a person wants kept or dropped whatever the computation says. */
   kept?: readonly number[];
   dropped?: readonly number[];
+  /** Highest partial used unless kept by hand. Default 16: in the bass B depends on the range. */
+  maxPartial?: number;
 };
 
 export type RejectionReason =
@@ -27,6 +29,7 @@ export type RejectionReason =
   | "wrong-partial-number"
   | "neighbouring-note"
   | "duplicate"
+  | "beyond-range"
   | "dropped-by-hand";
 
 export type Rejection = {
@@ -46,7 +49,9 @@ export type FitWarning =
   | "b-not-significant"
   | "few-partials"
   | "first-partial-unreliable"
-  | "kept-off-curve";
+  | "kept-off-curve"
+  | "ambiguous-outlier"
+  | "scatter-exceeds-sigma";
 
 export type Quality = "good" | "usable" | "repeat";
 
