@@ -1,0 +1,110 @@
+"use client";
+
+import { type ReactNode, useEffect, useRef } from "react";
+import type { FieldErrors } from "react-hook-form";
+import { Button, type ButtonProps } from "../ui/button";
+import { cx } from "../ui/class-names";
+import { Sign } from "../ui/sign";
+import type { ActionForm as State } from "./use-action-form";
+
+/** The frame of a form made with useActionForm: summary of errors on top, fields, then its button. */
+export function ActionForm({
+  state,
+  children,
+  className,
+  label,
+}: {
+  state: State;
+  children: ReactNode;
+  className?: string;
+  label?: string;
+}) {
+  return (
+    <form noValidate onSubmit={state.submit} className={cx("grid gap-4", className)} aria-label={label}>
+      <FormError state={state} />
+      {children}
+    </form>
+  );
+}
+
+/**
+ * Says why nothing was saved and takes the focus after every failed attempt. Each field error is a link
+ * to its field; a network failure offers to send the same thing again.
+ */
+export function FormError({ state }: { state: State }) {
+  const box = useRef<HTMLDivElement>(null);
+  const { failure, attempts, form, busy } = state;
+  const errors = listErrors(form.formState.errors);
+  const shown = attempts > 0 && (failure !== null || errors.length > 0);
+
+  useEffect(() => {
+    if (attempts > 0) box.current?.focus();
+  }, [attempts]);
+
+  if (!shown) return null;
+  return (
+    <div
+      ref={box}
+      tabIndex={-1}
+      role="alert"
+      className="border-l-3 border-rust! bg-rust-wash py-3 pr-3 pl-4 text-ink"
+    >
+      <p className="flex items-start gap-1.5 font-semibold">
+        <Sign name="attention" className="mt-[3px] text-rust" />
+        <span>{failure?.message ?? summary(errors.length)}</span>
+      </p>
+      {errors.length > 0 ? (
+        <ul className="mt-1 grid gap-0.5 pl-5">
+          {errors.map(({ path, message }) => (
+            <li key={path}>
+              <button
+                type="button"
+                className="link rounded-sm text-left text-ink!"
+                onClick={() => form.setFocus(path)}
+              >
+                {message}
+              </button>
+            </li>
+          ))}
+        </ul>
+      ) : null}
+      {failure?.kind === "network" ? (
+        <Button type="submit" size="small" busy={busy} className="mt-2 ml-5">
+          Send again
+        </Button>
+      ) : null}
+    </div>
+  );
+}
+
+export function SubmitButton({
+  state,
+  children,
+  kind = "primary",
+  ...rest
+}: Omit<ButtonProps, "busy" | "type"> & { state: Pick<State, "busy"> }) {
+  return (
+    <Button type="submit" kind={kind} busy={state.busy} {...rest}>
+      {children}
+    </Button>
+  );
+}
+
+function summary(count: number): string {
+  return count === 1 ? "One field needs another look." : `${count} fields need another look.`;
+}
+
+type ListedError = { path: string; message: string };
+
+/** Flattens nested field errors into paths such as "lines.0.quantity". */
+export function listErrors(errors: FieldErrors, prefix = ""): ListedError[] {
+  const listed: ListedError[] = [];
+  for (const [key, value] of Object.entries(errors)) {
+    if (!value || typeof value !== "object" || key === "ref") continue;
+    const path = prefix ? `${prefix}.${key}` : key;
+    if ("message" in value && typeof value.message === "string")
+      listed.push({ path, message: value.message });
+    else listed.push(...listErrors(value as FieldErrors, path));
+  }
+  return listed;
+}
