@@ -1,7 +1,11 @@
 export type { Beat, BeatingInterval, BeatsInput, BeatsResult, TunedNote } from "./beats";
 export { BEATING_INTERVALS, beatRates, beats, beatsPerSecond, evenness, harmonicNotes } from "./beats";
+export type { Expectation, Expected, FrequencyCheck } from "./expected";
+export { ASK_BEYOND_CENTS, checkFrequency, expectedPartial } from "./expected";
 export { fit } from "./fit";
+export { assumedSigma, irregularitySigma } from "./fit-prior";
 export { DEFAULT_MAX_PARTIAL } from "./fit-state";
+export { keyboard } from "./keyboard";
 export {
   centsBetween,
   equalTemperedHz,
@@ -25,6 +29,24 @@ export {
   partialHzFromF0,
   partialHzFromF1,
 } from "./partials";
+export type { PlainString, StringState, WoundString } from "./string";
+export {
+  breakingShare,
+  COPPER_DENSITY,
+  gaugeDiameterMm,
+  inharmonicityOf,
+  leastTensileMpa,
+  plainString,
+  STEEL_DENSITY,
+  STEEL_MODULUS,
+  tension,
+  waveSpeed,
+  woundString,
+  youngCents,
+  youngConstant,
+} from "./string";
 export type { TemperamentInput, TemperamentResult } from "./temperament";
 export { describeTemperament, TEMPERAMENT_NAMES, temperamentOffsets, temperedFifths } from "./temperament";
 export * from "./types";
+export type { Gauge, GaugeSystem } from "./wire-tables";
+export { WIRE_GAUGES } from "./wire-tables";
