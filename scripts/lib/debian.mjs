@@ -56,7 +56,7 @@ async function install(packages, { report, preamble = "", byHand }) {
     title: `Installing ${packages.join(" ")}`,
     // A package manager cut short leaves a machine to repair.
     stopSignal: null,
-    onOutput: (text) => report(text.trimEnd().split("\n").pop() ?? ""),
+    onOutput: report,
   });
 }
 

@@ -1,3 +1,5 @@
+import { stripVTControlCharacters } from "node:util";
+
 export const verbose = process.env.VERBOSE === "1";
 
 const isTerminal = process.stdout.isTTY === true && !verbose;
@@ -46,7 +48,8 @@ export async function step(label, work) {
     }
   }, 1000);
   if (isTerminal) process.stdout.write(`         …  ${label}`);
-  const report = (line) => {
+  const report = (text) => {
+    const line = stripVTControlCharacters(text).trim().split("\n").pop() ?? "";
     latest = line.trim().slice(0, 90) || latest;
   };
   try {
