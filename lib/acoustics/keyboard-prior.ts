@@ -19,7 +19,7 @@ export const effectCount = effectSigmas.length;
 /** Correlation length of a bridge's departure from the two-exponential curve, in keys. */
 const lengthKeys = 12;
 
-type Knot = readonly [midi: number, value: number];
+export type Knot = readonly [midi: number, value: number];
 
 /** Standard deviation of g: largest about the break, where bridges differ most from the sum's smooth valley. */
 const curveSigmas: readonly Knot[] = [
@@ -41,7 +41,8 @@ const scatterSigmas: readonly Knot[] = [
   [108, 0.08],
 ];
 
-function interpolate(knots: readonly Knot[], x: number): number {
+/** Straight lines between knots in rising order, constant beyond them. */
+export function interpolate(knots: readonly Knot[], x: number): number {
   let previous: Knot | undefined;
   for (const knot of knots) {
     if (x <= knot[0]) {

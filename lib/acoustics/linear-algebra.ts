@@ -32,6 +32,28 @@ export function choleskyInPlace(matrix: Float64Array, n: number): void {
   }
 }
 
+/**
+ * Cholesky factor of a positive semidefinite matrix in place, lower triangle: a pivot that vanishes against its original
+ * diagonal gives a column of zeros.
+ */
+export function choleskySemidefiniteInPlace(matrix: Float64Array, n: number): void {
+  for (let j = 0; j < n; j += 1) {
+    const rowJ = j * n;
+    const original = at(matrix, rowJ + j);
+    let pivot = original;
+    for (let k = 0; k < j; k += 1) pivot -= at(matrix, rowJ + k) ** 2;
+    const vanishes = !(pivot > 1e-12 * original);
+    const root = vanishes ? 0 : Math.sqrt(pivot);
+    matrix[rowJ + j] = root;
+    for (let i = j + 1; i < n; i += 1) {
+      const rowI = i * n;
+      let sum = at(matrix, rowI + j);
+      for (let k = 0; k < j; k += 1) sum -= at(matrix, rowI + k) * at(matrix, rowJ + k);
+      matrix[rowI + j] = vanishes ? 0 : sum / root;
+    }
+  }
+}
+
 /** Solves L y = b in place, b at `offset` of `vector`. */
 export function forwardSolve(factor: Float64Array, n: number, vector: Float64Array, offset = 0): void {
   for (let i = 0; i < n; i += 1) {
