@@ -47,6 +47,9 @@ export const visit = pgTable(
     state: visitState("state").notNull().default("offered"),
     startsLocal: timestamp("starts_local", { mode: "string" }).notNull(),
     endsLocal: timestamp("ends_local", { mode: "string" }).notNull(),
+    /** Which of the two, where clocks go back and the wall time occurs twice: 0 the first, 1 the second. */
+    startsFold: smallint("starts_fold").notNull().default(0),
+    endsFold: smallint("ends_fold").notNull().default(0),
     timeZone: text("time_zone").notNull(),
     during: timeRange("during").notNull().default(sql`'empty'`),
     /** Where this visit went when it was moved. */
@@ -65,6 +68,7 @@ export const visit = pgTable(
     index("visit_by_start").on(table.shopId, table.startsLocal, table.id),
     index("visit_of_site").on(table.shopId, table.siteId, table.startsLocal),
     check("visit_ends_after_start", sql`${table.endsLocal} > ${table.startsLocal}`),
+    check("visit_fold", sql`${table.startsFold} in (0, 1) and ${table.endsFold} in (0, 1)`),
     check("visit_within_a_day", sql`${table.endsLocal} <= ${table.startsLocal} + interval '24 hours'`),
     ...shopWall(
       "visit",

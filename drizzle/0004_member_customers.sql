@@ -1,0 +1,2 @@
+ALTER TABLE "invitation" ADD CONSTRAINT "invitation_customer" FOREIGN KEY ("shop_id","customer_id") REFERENCES "public"."customer"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE "member" ADD CONSTRAINT "member_customer" FOREIGN KEY ("shop_id","customer_id") REFERENCES "public"."customer"("shop_id","id") ON DELETE no action ON UPDATE no action;
