@@ -18,6 +18,7 @@ import {
 } from "drizzle-orm/pg-core";
 import type { IntervalRule } from "@/lib/acoustics/types";
 import { instant, shopKey, stamps, versioned } from "./columns";
+import { customer } from "./customers";
 import { appRole, currentCustomer, currentShop, shopWall } from "./walls";
 
 export const shop = pgTable(
@@ -76,6 +77,11 @@ export const member = pgTable(
   (table) => [
     primaryKey({ columns: [table.shopId, table.id] }),
     foreignKey({ columns: [table.shopId], foreignColumns: [shop.id] }).onDelete("cascade"),
+    foreignKey({
+      name: "member_customer",
+      columns: [table.shopId, table.customerId],
+      foreignColumns: [customer.shopId, customer.id],
+    }),
     uniqueIndex("member_person").on(table.shopId, table.personId).where(sql`ended_at is null`),
     index("member_of_person").on(table.personId),
     check("member_customer_named", sql`(${table.role} = 'customer') = (${table.customerId} is not null)`),
@@ -104,6 +110,11 @@ export const invitation = pgTable(
     foreignKey({
       columns: [table.shopId, table.invitedBy],
       foreignColumns: [member.shopId, member.id],
+    }),
+    foreignKey({
+      name: "invitation_customer",
+      columns: [table.shopId, table.customerId],
+      foreignColumns: [customer.shopId, customer.id],
     }),
     uniqueIndex("invitation_open")
       .on(table.shopId, sql`lower(email)`)
