@@ -40,7 +40,7 @@ export const customer = pgTable(
   (table) => [
     primaryKey({ columns: [table.shopId, table.id] }),
     foreignKey({ columns: [table.shopId], foreignColumns: [shop.id] }).onDelete("cascade"),
-    index("customer_by_name").on(table.shopId, sql`lower(name)`, table.id),
+    index("customer_by_name").on(table.shopId, sql`name collate "und-x-icu"`, table.id),
     index("customer_by_change").on(table.shopId, table.updatedAt, table.id),
     index("customer_search").using("gin", table.shopId, sql`search_text gin_trgm_ops`),
     check("customer_name_not_blank", sql`btrim(${table.name}) <> ''`),
@@ -75,7 +75,7 @@ export const site = pgTable(
       columns: [table.shopId, table.customerId],
       foreignColumns: [customer.shopId, customer.id],
     }),
-    index("site_by_name").on(table.shopId, sql`lower(name)`, table.id),
+    index("site_by_name").on(table.shopId, sql`name collate "und-x-icu"`, table.id),
     index("site_by_change").on(table.shopId, table.updatedAt, table.id),
     index("site_of_customer").on(table.shopId, table.customerId),
     index("site_search").using("gin", table.shopId, sql`search_text gin_trgm_ops`),

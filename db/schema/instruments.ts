@@ -42,6 +42,8 @@ export const instrument = pgTable(
     temperament: jsonb("temperament").$type<Temperament>().notNull().default(sql`'"equal"'::jsonb`),
     /** What the player asked for once and for all; people's own words. */
     standingNote: text("standing_note"),
+    /** Maker and model, as an instrument is called and sorted. */
+    name: text("name").notNull().generatedAlwaysAs(sql`btrim(maker || ' ' || model)`),
     searchText: text("search_text")
       .notNull()
       .generatedAlwaysAs(
@@ -54,7 +56,7 @@ export const instrument = pgTable(
   (table) => [
     primaryKey({ columns: [table.shopId, table.id] }),
     foreignKey({ columns: [table.shopId], foreignColumns: [shop.id] }).onDelete("cascade"),
-    index("instrument_by_name").on(table.shopId, sql`lower(maker || ' ' || model)`, table.id),
+    index("instrument_by_name").on(table.shopId, sql`name collate "und-x-icu"`, table.id),
     index("instrument_by_change").on(table.shopId, table.updatedAt, table.id),
     index("instrument_search").using("gin", table.shopId, sql`search_text gin_trgm_ops`),
     check("instrument_maker_not_blank", sql`btrim(${table.maker}) <> ''`),

@@ -1,0 +1,41 @@
+import { describe, expect, it } from "vitest";
+import { dayOf, isDay, isTimeZone, showDay, showDayOf, showWallTime } from "./dates";
+
+describe("dates", () => {
+  it("puts one instant on different days in different zones", () => {
+    expect(dayOf("2026-05-14T23:30:00Z", "Europe/London")).toBe("2026-05-15");
+    expect(dayOf("2026-05-14T23:30:00Z", "America/New_York")).toBe("2026-05-14");
+  });
+
+  it("keeps the day on both sides of a clock change", () => {
+    expect(dayOf("2026-03-28T23:59:59Z", "Europe/London")).toBe("2026-03-28");
+    expect(dayOf("2026-03-29T23:30:00Z", "Europe/London")).toBe("2026-03-30");
+  });
+
+  it("writes the month as a word in every language it is asked for", () => {
+    for (const locale of ["en-GB", "en-US", "de-DE", "fr-FR", "nl-NL", "es-ES"]) {
+      expect(showDay("2026-04-03", locale)).toMatch(/\p{L}{3,}/u);
+      expect(showDay("2026-04-03", locale)).toContain("2026");
+    }
+    expect(showDay("2026-04-03", "en-GB")).toBe("3 Apr 2026");
+  });
+
+  it("does not shift a calendar day or a wall time through a zone", () => {
+    expect(showDay("2026-01-01", "en-GB")).toBe("1 Jan 2026");
+    expect(showWallTime("2026-05-14 09:40:00", "en-GB")).toBe("14 May 2026, 09:40");
+    expect(showDayOf("2026-01-01T04:00:00Z", "en-GB", "America/New_York")).toBe("31 Dec 2025");
+  });
+
+  it("refuses days that are not in the calendar", () => {
+    expect(isDay("2026-02-29")).toBe(false);
+    expect(isDay("2024-02-29")).toBe(true);
+    expect(isDay("26-02-01")).toBe(false);
+    expect(isDay("2026-2-1")).toBe(false);
+  });
+
+  it("knows time zones from nonsense", () => {
+    expect(isTimeZone("Europe/Dublin")).toBe(true);
+    expect(isTimeZone("Europe/Port_Averil")).toBe(false);
+    expect(isTimeZone("+01:00")).toBe(false);
+  });
+});

@@ -1,0 +1,63 @@
+import { TZDate } from "@date-fns/tz";
+import { format, formatISO, isValid, parseISO } from "date-fns";
+
+/**
+ * Calendar days are written YYYY-MM-DD and carry no zone; instants are ISO with an offset. People are shown
+ * months by name, in the shop's language, so that no day can be read as another.
+ */
+export type Day = string;
+
+const dayPattern = /^\d{4}-\d{2}-\d{2}$/;
+
+export function isDay(text: string): boolean {
+  return dayPattern.test(text) && isValid(parseISO(text)) && formatISO(parseISO(text)).startsWith(text);
+}
+
+/** The calendar day of an instant in a time zone: 23:30 in London is already tomorrow in Berlin. */
+export function dayOf(instant: Date | string, timeZone: string): Day {
+  return format(new TZDate(new Date(instant).getTime(), timeZone), "yyyy-MM-dd");
+}
+
+export function isTimeZone(name: string): boolean {
+  try {
+    new Intl.DateTimeFormat("en", { timeZone: name });
+    return /^[A-Z][A-Za-z0-9_+-]*(\/[A-Za-z0-9_+-]+)*$/.test(name);
+  } catch {
+    return false;
+  }
+}
+
+/** "14 May 2026", or as the locale orders it; the month is always a word. */
+export function showDay(day: Day, locale: string): string {
+  return dayFormat(locale, "UTC").format(new Date(`${day}T00:00:00Z`));
+}
+
+/** The day of an instant, as seen in a time zone. */
+export function showDayOf(instant: Date | string, locale: string, timeZone: string): string {
+  return dayFormat(locale, timeZone).format(new Date(instant));
+}
+
+/** "14 May 2026, 09:40". */
+export function showInstant(instant: Date | string, locale: string, timeZone: string): string {
+  return new Intl.DateTimeFormat(locale, {
+    day: "numeric",
+    month: "short",
+    year: "numeric",
+    hour: "2-digit",
+    minute: "2-digit",
+    timeZone,
+  }).format(new Date(instant));
+}
+
+/** Wall time as the database keeps it ("2026-05-14 09:40:00"), shown without shifting it through any zone. */
+export function showWallTime(local: string, locale: string): string {
+  return showInstant(`${local.replace(" ", "T").slice(0, 19)}Z`, locale, "UTC");
+}
+
+export function wallDay(local: string): Day {
+  return local.slice(0, 10);
+}
+
+function dayFormat(locale: string, timeZone: string): Intl.DateTimeFormat {
+  return new Intl.DateTimeFormat(locale, { day: "numeric", month: "short", year: "numeric", timeZone });
+}
