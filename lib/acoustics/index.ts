@@ -1,5 +1,16 @@
 export type { Beat, BeatingInterval, BeatsInput, BeatsResult, TunedNote } from "./beats";
 export { BEATING_INTERVALS, beatRates, beats, beatsPerSecond, evenness, harmonicNotes } from "./beats";
+export { compare } from "./compare";
+export type {
+  CompareInput,
+  CompareResult,
+  NotComparable,
+  NoteComparison,
+  NoteReadings,
+  RegisterPitch,
+  Verdict,
+  VisitReadings,
+} from "./compare-types";
 export type { Expectation, Expected, FrequencyCheck } from "./expected";
 export { ASK_BEYOND_CENTS, checkFrequency, expectedPartial } from "./expected";
 export { fit } from "./fit";
