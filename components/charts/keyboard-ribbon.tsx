@@ -96,6 +96,7 @@ export function KeyboardRibbon(props: Props) {
     );
   }
 
+  const spare = Math.max(0, (44 - total) / 2);
   const current = cursor ?? clampKey(layout.range, 60);
   const kind = kinds.get(current);
 
@@ -113,7 +114,7 @@ export function KeyboardRibbon(props: Props) {
   }
 
   function point(event: PointerEvent<HTMLDivElement>) {
-    const area = event.currentTarget.getBoundingClientRect();
+    const area = (event.currentTarget.firstElementChild ?? event.currentTarget).getBoundingClientRect();
     const overBlackKeys = event.clientY - area.top < blackHeight;
     const next = keyUnder(layout, event.clientX - area.left, overBlackKeys);
     if (next !== cursor) onCursor?.(next);
@@ -138,7 +139,15 @@ export function KeyboardRibbon(props: Props) {
         if (event.buttons > 0) point(event);
       }}
       // Sideways drags move the cursor, up and down still scrolls the page.
-      style={{ touchAction: "pan-y", cursor: "pointer", minHeight: 44, borderRadius: 2, outlineOffset: 4 }}
+      style={{
+        touchAction: "pan-y",
+        cursor: "pointer",
+        borderRadius: 2,
+        outlineOffset: 4,
+        // A low ribbon still is a target of 44 px, without taking more room on the page.
+        paddingBlock: spare,
+        marginBlock: -spare,
+      }}
     >
       {picture}
     </div>

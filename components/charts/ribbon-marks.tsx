@@ -18,7 +18,7 @@ export function RibbonMarks({ layout, height, blackHeight, marks, cursor }: Prop
     if (!key) return null;
     const x = key.x + key.width / 2;
     const y = key.black ? blackHeight - 5 : height - 6;
-    if (mark.kind === "flagged") return <Triangle key={mark.midi} x={x} y={y} black={key.black} />;
+    if (mark.kind === "flagged") return <Triangle key={mark.midi} x={x} y={y} />;
     if (mark.kind === "next") {
       return (
         <circle
@@ -27,7 +27,7 @@ export function RibbonMarks({ layout, height, blackHeight, marks, cursor }: Prop
           cy={y}
           r={small ? 2.3 : 3}
           fill="var(--key-brass)"
-          stroke={key.black ? "var(--key-white)" : "var(--key-black)"}
+          stroke="var(--key-black)"
           strokeWidth={0.75}
         />
       );
@@ -41,12 +41,12 @@ function dotColour(key: KeyShape, cursor: number | null): string {
   return key.midi === cursor ? "var(--key-black)" : "var(--key-white)";
 }
 
-function Triangle({ x, y, black }: { x: number; y: number; black: boolean }) {
+function Triangle({ x, y }: { x: number; y: number }) {
   return (
     <path
       d={`M${x} ${y - 4}l4.5 7h-9z`}
       fill="var(--key-rust)"
-      stroke={black ? "var(--key-white)" : "var(--key-black)"}
+      stroke="var(--key-black)"
       strokeWidth={0.75}
     />
   );

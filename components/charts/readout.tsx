@@ -1,0 +1,110 @@
+import type { ReactNode } from "react";
+import { MINUS } from "./format";
+import { NoteName } from "./note-name";
+
+/**
+ * The numbers of the key in hand, under the ribbon. Columns are as wide as they are told, whatever stands in
+ * them, so nothing moves while the cursor does.
+ */
+
+export type ReadoutCell = {
+  key: string;
+  label: ReactNode;
+  value: ReactNode;
+  /** Width on the desk in pixels; the last cell takes what is left when it has none. */
+  width?: number;
+  /** Left out on the phone, where three cells have room. */
+  deskOnly?: boolean;
+};
+
+type Props = {
+  midi: number;
+  /** What the key is: "plain, predicted". */
+  about?: ReactNode;
+  cells: readonly ReadoutCell[];
+  /** Keys to press, at the right end; only where there is a keyboard. */
+  hint?: ReactNode;
+  noteWidth?: number;
+};
+
+export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
+  const widths = cells.map((cell) => (cell.width ? `${cell.width}px` : "minmax(0,1fr)"));
+  const columns = [`${noteWidth}px`, ...widths, ...(hint ? ["minmax(0,1fr)"] : [])].join(" ");
+  const onPhone = cells.filter((cell) => !cell.deskOnly);
+  return (
+    <div className="@container">
+      <div
+        className="grid items-end gap-y-1 border-hairline border-t pt-2 @xl:h-16 @xl:items-center @xl:border-b @xl:pt-0 @xl:[grid-template-columns:var(--desk)] [grid-template-columns:var(--phone)]"
+        style={
+          {
+            "--desk": columns,
+            "--phone": `64px repeat(${onPhone.length}, minmax(0,1fr))`,
+          } as React.CSSProperties
+        }
+      >
+        <div className="flex items-baseline gap-3">
+          <span className="font-medium font-serif text-28 leading-10 @xl:text-23">
+            <NoteName midi={midi} />
+          </span>
+          {about && <span className="hidden truncate text-12 text-ink-soft @xl:inline">{about}</span>}
+        </div>
+        {cells.map((cell) => (
+          <div
+            key={cell.key}
+            className={`min-w-0 border-hairline @xl:border-l @xl:px-4 ${cell.deskOnly ? "hidden @xl:block" : ""}`}
+          >
+            <div className="truncate text-12 text-ink-soft">{cell.label}</div>
+            <div className="truncate font-medium text-16">{cell.value}</div>
+          </div>
+        ))}
+        {hint && (
+          <div className="hidden items-center justify-end gap-1.5 border-hairline border-l text-12 text-ink-soft @xl:flex">
+            {hint}
+          </div>
+        )}
+      </div>
+      {about && <p className="mt-1 text-12 text-ink-soft @xl:hidden">{about}</p>}
+    </div>
+  );
+}
+
+/** "B × 10⁻⁴" with a raised exponent: the shipped faces lack the superscript minus. */
+export function TimesTenTo({ exponent, of = "B" }: { exponent: number; of?: string }) {
+  return (
+    <>
+      {of} × 10
+      <sup className="text-[.8em] leading-none">
+        {exponent < 0 && MINUS}
+        {Math.abs(exponent)}
+      </sup>
+    </>
+  );
+}
+
+const ARROWS = {
+  left: "M12 7H3M6.5 3.2L2.5 7l4 3.8",
+  right: "M2 7h9M7.5 3.2L11.5 7l-4 3.8",
+} as const;
+
+/** The usual hint: arrow keys move, Enter opens. */
+export function CursorHint({ enter }: { enter?: string }) {
+  const box = "inline-flex h-[18px] items-center rounded-sm border border-edge bg-sheet px-1.5 font-medium";
+  return (
+    <>
+      {(["left", "right"] as const).map((way) => (
+        <kbd key={way} className={`${box} font-sans`}>
+          <svg width={10} height={10} viewBox="0 0 14 14" role="img" aria-label={`${way} arrow`}>
+            <path d={ARROWS[way]} fill="none" stroke="currentColor" strokeWidth={1.5} />
+          </svg>
+        </kbd>
+      ))}
+      move
+      {enter && (
+        <>
+          <kbd className={`${box} ml-2 font-sans`}>Enter</kbd>
+          {enter}
+        </>
+      )}
+    </>
+  );
+}
