@@ -16,7 +16,7 @@ import {
   uniqueIndex,
   uuid,
 } from "drizzle-orm/pg-core";
-import type { IntervalRule } from "@/lib/acoustics/types";
+import type { RegisterRule } from "@/lib/acoustics/styles";
 import { instant, shopKey, stamps, versioned } from "./columns";
 import { customer } from "./customers";
 import { appRole, currentCustomer, currentShop, shopWall } from "./walls";
@@ -129,7 +129,7 @@ export const houseStyle = pgTable(
   {
     ...shopKey,
     name: text("name").notNull(),
-    intervals: jsonb("intervals").$type<IntervalRule[]>().notNull(),
+    intervals: jsonb("intervals").$type<RegisterRule[]>().notNull(),
     smoothness: doublePrecision("smoothness").notNull(),
     toleranceCents: doublePrecision("tolerance_cents").notNull().default(1),
     archivedAt: instant("archived_at"),

@@ -1,0 +1,105 @@
+import type { NoteRow, NoteValues } from "@/db/queries/readings";
+import { AcousticsError, fit, keyboard, keyName } from "@/lib/acoustics";
+import { COMPUTATION_VERSION } from "@/lib/acoustics/version";
+import { invalid } from "@/lib/errors";
+import {
+  type FittedNote,
+  fitInputOf,
+  observationsOf,
+  pitchOf,
+  pitchOffset,
+  questionAbout,
+  readingHz,
+  readingsToAskAbout,
+} from "./rules";
+import type { NoteInput } from "./schema";
+
+type Instrument = { firstMidi: number; lastMidi: number; breakMidi: number | null };
+
+/**
+ * Turns typed readings into what is stored: frequencies with their fit. Faults are named at their reading
+ * under `path`; a frequency far from where it is expected is asked about unless confirmed.
+ */
+export function fitNote({
+  midi,
+  input,
+  sheet,
+  instrument,
+  others,
+  path,
+}: {
+  midi: number;
+  input: NoteInput;
+  sheet: { referenceHz: number };
+  instrument: Instrument;
+  /** The sheet's notes as stored; those of other keys tell what to expect of this one. */
+  others: readonly NoteRow[];
+  path: string;
+}): NoteValues {
+  if (midi < instrument.firstMidi || midi > instrument.lastMidi) {
+    const range = `${keyName(instrument.firstMidi)} to ${keyName(instrument.lastMidi)}`;
+    throw invalid(
+      { midi: `This instrument's keys run from ${range}.` },
+      "This note is not on the instrument.",
+    );
+  }
+  const partials = input.readings.map(({ partial }) => partial);
+  const twice = partials.findIndex((partial, index) => partials.indexOf(partial) < index);
+  if (twice >= 0) throw invalid({ [`${path}.${twice}.partial`]: `Partial ${partials[twice]} stands twice.` });
+
+  const values = {
+    partials,
+    hz: input.readings.map((reading) => readingHz(reading, midi, sheet.referenceHz)),
+    sigmaCents: input.readings.map(({ sigmaCents }) => sigmaCents ?? null),
+    kept: input.kept.filter((partial) => partials.includes(partial)),
+    dropped: input.dropped.filter((partial) => partials.includes(partial) && !input.kept.includes(partial)),
+  };
+  const fitInput = fitInputOf({ ...values, midi, referenceHz: sheet.referenceHz });
+  const elsewhere = others
+    .filter((note) => note.midi !== midi)
+    .map(({ midi: key, fit: fitted }) => ({ ...fitted, midi: key }));
+  const questions = readingsToAskAbout({
+    fitInput,
+    midi,
+    referenceHz: sheet.referenceHz,
+    pitchOffsetCents: pitchOffset(pitchOf(elsewhere, sheet.referenceHz)),
+    model: keyModel(elsewhere, midi, instrument),
+    confirmed: input.confirmed,
+  });
+  if (questions.length > 0) {
+    throw invalid(
+      Object.fromEntries(
+        questions.map((question) => [
+          `${path}.${partials.indexOf(question.partial)}.${field(input, question.partial)}`,
+          questionAbout(question),
+        ]),
+      ),
+      "Some frequencies are far from where they are expected. Correct or confirm them; nothing is lost.",
+    );
+  }
+  try {
+    return { ...values, fit: fit(fitInput), fitVersion: COMPUTATION_VERSION };
+  } catch (error) {
+    if (error instanceof AcousticsError) throw invalid({ [path]: error.message });
+    throw error;
+  }
+}
+
+function field(input: NoteInput, partial: number): "hz" | "cents" {
+  return input.readings.find((reading) => reading.partial === partial)?.cents === undefined ? "hz" : "cents";
+}
+
+function keyModel(
+  notes: readonly FittedNote[],
+  midi: number,
+  { firstMidi, lastMidi, breakMidi }: Instrument,
+) {
+  const { keys } = keyboard({
+    observations: observationsOf(notes),
+    firstMidi,
+    lastMidi,
+    ...(breakMidi === null ? {} : { breakMidi }),
+  });
+  const key = keys.find((estimate) => estimate.midi === midi);
+  return key ? { b: key.b, lnBSigma: key.lnBSigma } : undefined;
+}
