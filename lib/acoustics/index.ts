@@ -1,3 +1,4 @@
+export { adviceFrom, advise } from "./advise";
 export type { Beat, BeatingInterval, BeatsInput, BeatsResult, TunedNote } from "./beats";
 export { BEATING_INTERVALS, beatRates, beats, beatsPerSecond, evenness, harmonicNotes } from "./beats";
 export { compare } from "./compare";
@@ -40,6 +41,9 @@ export {
   partialHzFromF0,
   partialHzFromF1,
 } from "./partials";
+export type { Register } from "./registers";
+export { REGISTERS, registerOf } from "./registers";
+export { planFrom, stretch } from "./stretch";
 export type { PlainString, StringState, WoundString } from "./string";
 export {
   breakingShare,
@@ -56,6 +60,15 @@ export {
   youngCents,
   youngConstant,
 } from "./string";
+export type { RegisterRule, RegisterStyle } from "./styles";
+export {
+  builtInStyle,
+  builtInStyles,
+  defaultStyle,
+  isBuiltInStyle,
+  registerStyles,
+  styleFromRegisters,
+} from "./styles";
 export type { TemperamentInput, TemperamentResult } from "./temperament";
 export { describeTemperament, TEMPERAMENT_NAMES, temperamentOffsets, temperedFifths } from "./temperament";
 export * from "./types";
