@@ -1,4 +1,4 @@
-export { adviceFrom, adviceFrom, advise, advise } from "./advise";
+export { adviceFrom, advise } from "./advise";
 export type { Beat, BeatingInterval, BeatsInput, BeatsResult, TunedNote } from "./beats";
 export { BEATING_INTERVALS, beatRates, beats, beatsPerSecond, evenness, harmonicNotes } from "./beats";
 export { compare } from "./compare";
@@ -41,9 +41,9 @@ export {
   partialHzFromF0,
   partialHzFromF1,
 } from "./partials";
-export type { Register, Register } from "./registers";
-export { REGISTERS, REGISTERS, registerOf, registerOf } from "./registers";
-export { planFrom, planFrom, stretch, stretch } from "./stretch";
+export type { Register } from "./registers";
+export { REGISTERS, registerOf } from "./registers";
+export { planFrom, stretch } from "./stretch";
 export type { PlainString, StringState, WoundString } from "./string";
 export {
   breakingShare,
@@ -60,18 +60,13 @@ export {
   youngCents,
   youngConstant,
 } from "./string";
-export type { RegisterRule, RegisterRule, RegisterStyle, RegisterStyle } from "./styles";
+export type { RegisterRule, RegisterStyle } from "./styles";
 export {
   builtInStyle,
-  builtInStyle,
-  builtInStyles,
   builtInStyles,
   defaultStyle,
   isBuiltInStyle,
-  isBuiltInStyle,
   registerStyles,
-  registerStyles,
-  styleFromRegisters,
   styleFromRegisters,
 } from "./styles";
 export type { TemperamentInput, TemperamentResult } from "./temperament";
