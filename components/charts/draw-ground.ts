@@ -1,6 +1,6 @@
 import { drawWords } from "./draw-words";
 import { hasBreak } from "./key-geometry";
-import { pointAt, type Scene, splitAtBreak } from "./plot-scene";
+import { pointAt, type Scene, splitAtBreak, tickIsNamed, tickSide } from "./plot-scene";
 import type { PlotColours } from "./use-plot-colours";
 
 /** What lies under the data: grid, axis, bands, the string of the break, stems. */
@@ -23,6 +23,7 @@ function stroke(ctx: Ctx, colour: string, width: number, draw: () => void, dash:
 
 export function drawGround(ctx: Ctx, scene: Scene, colours: PlotColours): void {
   drawGrid(ctx, scene, colours);
+  drawTickLabels(ctx, scene, colours);
   drawBands(ctx, scene, colours);
   drawBreak(ctx, scene, colours);
   drawStems(ctx, scene, colours);
@@ -56,20 +57,24 @@ function drawGrid(ctx: Ctx, scene: Scene, colours: PlotColours): void {
   }
 }
 
-/** Drawn last of all, so that on a phone no curve runs through a number. */
-export function drawTickLabels(ctx: Ctx, scene: Scene, colours: PlotColours): void {
+/** On a phone the numbers stand inside the plot, at the end where they cover fewer points. */
+function drawTickLabels(ctx: Ctx, scene: Scene, colours: PlotColours): void {
   const { area, scale, compact } = scene;
-  const outermost = Math.max(...scale.ticks.map((tick) => Math.abs(tick.value)));
+  const atRight = compact && tickSide(scene) === "right";
   for (const tick of scale.ticks) {
-    if (tick.label === null) continue;
-    if (compact && !scale.log && tick.value !== 0 && Math.abs(tick.value) !== outermost) continue;
+    if (tick.label === null || !tickIsNamed(scene, tick)) continue;
     const y = crisp(area.y + scale.y(tick.value, area.height));
-    drawWords(ctx, tick.label, compact ? area.x : area.x - 8, compact ? y - 4 : y + 4, {
-      font: colours.font,
-      colour: colours["ink-soft"],
-      align: compact ? "left" : "right",
-      halo: compact ? colours.sheet : undefined,
-    });
+    drawWords(
+      ctx,
+      tick.label,
+      atRight ? area.x + area.width : compact ? area.x : area.x - 8,
+      compact ? y - 4 : y + 4,
+      {
+        font: colours.font,
+        colour: colours["ink-soft"],
+        align: compact && !atRight ? "left" : "right",
+      },
+    );
   }
 }
 

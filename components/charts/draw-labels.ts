@@ -1,7 +1,7 @@
 import { drawWords, measureWords } from "./draw-words";
 import { noteText } from "./note-spelling";
-import { overlap, placeWords, type Rect, type WordsPlace } from "./place-words";
-import { drawnPoints, pointAt, type Scene } from "./plot-scene";
+import { overlap, type Point, placeWords, type Rect, type WordsPlace } from "./place-words";
+import { drawnPoints, pointAt, type Scene, tickLabelRects, tickSide } from "./plot-scene";
 import type { PlotColours } from "./use-plot-colours";
 
 /** Words on the data: notes that do not belong with their leader, extremes, anchors, the break and the bridges. */
@@ -13,9 +13,9 @@ const LINE = 16;
 
 export function drawLabels(ctx: Ctx, scene: Scene, colours: PlotColours, cursorMidi: number | null): void {
   const points = drawnPoints(scene);
-  const taken: Rect[] = scene.compact ? tickLabelRects(scene) : [];
+  const taken: Rect[] = scene.compact ? tickLabelRects(scene, tickSide(scene)) : [];
   const cursorX = cursorMidi === null ? null : scene.area.x + scene.layout.x(cursorMidi);
-  nameBreak(ctx, scene, colours, taken);
+  nameBreak(ctx, scene, colours, taken, cursorX);
 
   const write = (midi: number, value: number, lines: readonly Line[], reach: "near" | "far") => {
     const at = pointAt(scene, midi, value);
@@ -31,7 +31,7 @@ export function drawLabels(ctx: Ctx, scene: Scene, colours: PlotColours, cursorM
       area: scene.area,
       points: others,
       taken,
-      cursorX: midi === cursorMidi && reach === "near" ? null : cursorX,
+      cursorX,
     });
     taken.push(place);
     if (reach === "far") drawLeader(ctx, at, place, colours);
@@ -67,7 +67,7 @@ export function drawLabels(ctx: Ctx, scene: Scene, colours: PlotColours, cursorM
     }));
     if (lines.length > 0) write(label.midi, label.value, lines, "near");
   }
-  if (scene.last && !scene.compact) nameBridges(ctx, scene, colours, [...taken], points);
+  if (scene.last && !scene.compact) nameBridges(ctx, scene, colours, taken, points, cursorX);
 }
 
 const anchorX = (place: WordsPlace) =>
@@ -77,16 +77,8 @@ const anchorX = (place: WordsPlace) =>
       ? place.x + place.width
       : place.x + place.width / 2;
 
-/** Where the tick labels of a phone stand, inside the plot. */
-function tickLabelRects(scene: Scene): Rect[] {
-  const { area, scale } = scene;
-  return scale.ticks
-    .filter((tick) => tick.label !== null)
-    .map((tick) => ({ x: area.x, y: area.y + scale.y(tick.value, area.height) - 16, width: 46, height: 14 }));
-}
-
 /** From the first line of the words to just short of the mark. */
-function drawLeader(ctx: Ctx, at: { x: number; y: number }, place: WordsPlace, colours: PlotColours): void {
+function drawLeader(ctx: Ctx, at: Point, place: WordsPlace, colours: PlotColours): void {
   const from = { x: place.align === "right" ? place.x + place.width + 8 : place.x - 8, y: place.y + 6.5 };
   const length = Math.hypot(at.x - from.x, at.y - from.y);
   if (length < 20) return;
@@ -101,13 +93,26 @@ function drawLeader(ctx: Ctx, at: { x: number; y: number }, place: WordsPlace, c
   ctx.restore();
 }
 
-function nameBreak(ctx: Ctx, scene: Scene, colours: PlotColours, taken: Rect[]): void {
+/** The middle of words of this half-width, moved off the string if it would run through them. */
+function asideOf(cursorX: number | null, wanted: number, half: number): number {
+  if (cursorX === null || Math.abs(cursorX - wanted) >= half) return wanted;
+  return cursorX >= wanted ? cursorX - half : cursorX + half;
+}
+
+function nameBreak(
+  ctx: Ctx,
+  scene: Scene,
+  colours: PlotColours,
+  taken: Rect[],
+  cursorX: number | null,
+): void {
   const { layout, area } = scene;
   const { breakMidi } = layout.range;
   if (!scene.first || layout.breakX === null || breakMidi == null) return;
   const text = `break ${noteText(breakMidi)} | ${noteText(breakMidi + 1)}`;
   const half = measureWords(ctx, text, { font: colours.font }) / 2;
-  const x = Math.max(half, Math.min(scene.width - half, area.x + layout.breakX));
+  const wanted = area.x + layout.breakX;
+  const x = Math.max(half, Math.min(scene.width - half, asideOf(cursorX, wanted, half + 8)));
   taken.push({ x: x - half, y: area.y - 20, width: 2 * half, height: 14 });
   drawWords(ctx, text, x, area.y - 9, { font: colours.font, colour: colours.ink, align: "center" });
 }
@@ -117,7 +122,8 @@ function nameBridges(
   scene: Scene,
   colours: PlotColours,
   taken: readonly Rect[],
-  points: readonly { x: number; y: number }[],
+  points: readonly Point[],
+  cursorX: number | null,
 ): void {
   const { layout, area } = scene;
   if (layout.breakX === null) return;
@@ -127,7 +133,10 @@ function nameBridges(
     ["treble bridge", "left"],
   ] as const) {
     const width = measureWords(ctx, text, { font: colours.font });
-    const left = align === "right" ? x - 10 - width : x + 10;
+    const way = align === "right" ? -1 : 1;
+    const wanted = x + way * (10 + width / 2);
+    const hit = cursorX !== null && Math.abs(cursorX - wanted) < width / 2 + 8;
+    const left = (hit ? cursorX + way * (8 + width / 2) : wanted) - width / 2;
     const baselines = [area.y + area.height - 8, area.y + 14];
     const free = baselines.find((baseline) => {
       const rect = { x: left, y: baseline - 11, width, height: 14 };
@@ -137,10 +146,10 @@ function nameBridges(
       );
     });
     if (free === undefined) continue;
-    drawWords(ctx, text, align === "right" ? x - 10 : x + 10, free, {
+    drawWords(ctx, text, left, free, {
       font: colours.font,
       colour: colours["ink-soft"],
-      align,
+      align: "left",
       halo: colours.sheet,
     });
   }

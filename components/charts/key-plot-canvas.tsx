@@ -6,19 +6,17 @@ import {
   LinearScale,
   LineController,
   LineElement,
-  LogarithmicScale,
   PointElement,
 } from "chart.js";
 import { type PointerEvent, useEffect, useLayoutEffect, useMemo, useRef } from "react";
 import { Chart } from "react-chartjs-2";
 import { nearestKey } from "./key-geometry";
-import { CursorRings, CursorString } from "./plot-cursor";
 import { type PlotDataset, plotDatasets } from "./plot-datasets";
 import { type Drawing, plotPlugin } from "./plot-plugin";
 import type { Scene } from "./plot-scene";
 import type { PlotColours } from "./use-plot-colours";
 
-ChartJs.register(LineController, LineElement, PointElement, LinearScale, LogarithmicScale);
+ChartJs.register(LineController, LineElement, PointElement, LinearScale);
 
 type XY = { x: number; y: number };
 type Props = {
@@ -28,9 +26,12 @@ type Props = {
   onCursor?: (midi: number) => void;
 };
 
-/** The chart's area is exactly the scene's: nothing of Chart.js's own takes room or moves. */
+/**
+ * Chart.js is given pixels and draws them one to one. Its own scales know neither keys with a gap at the break nor
+ * a range it does not round, and rings and words must meet the points exactly.
+ */
 function chartOptions(scene: Scene): ChartOptions<"line"> {
-  const { area, scale, width, height } = scene;
+  const { area, width, height } = scene;
   return {
     responsive: false,
     maintainAspectRatio: false,
@@ -49,12 +50,7 @@ function chartOptions(scene: Scene): ChartOptions<"line"> {
     },
     scales: {
       x: { type: "linear", display: false, min: 0, max: area.width },
-      y: {
-        type: scale.log ? "logarithmic" : "linear",
-        display: false,
-        min: scale.low,
-        max: scale.high,
-      },
+      y: { type: "linear", display: false, min: 0, max: area.height, reverse: true },
     },
   };
 }
@@ -78,7 +74,7 @@ export function KeyPlotCanvas({ scene, colours, cursor, onCursor }: Props) {
     chart.current?.resize(scene.width, scene.height);
   }, [scene.width, scene.height]);
 
-  // Words make way for the cursor, so the picture depends on it although its data do not.
+  // The string is drawn between grid and data, and words make way for it.
   useEffect(() => {
     chart.current?.draw();
   }, [cursor]);
@@ -91,7 +87,6 @@ export function KeyPlotCanvas({ scene, colours, cursor, onCursor }: Props) {
 
   return (
     <div
-      className="relative"
       style={{ height: scene.height, touchAction: "pan-y", cursor: onCursor ? "crosshair" : undefined }}
       onPointerDown={(event) => {
         if (!onCursor) return;
@@ -102,7 +97,6 @@ export function KeyPlotCanvas({ scene, colours, cursor, onCursor }: Props) {
         if (event.buttons > 0) point(event);
       }}
     >
-      {cursor !== null && <CursorString scene={scene} midi={cursor} />}
       <Chart
         ref={chart}
         type="line"
@@ -110,9 +104,8 @@ export function KeyPlotCanvas({ scene, colours, cursor, onCursor }: Props) {
         options={options}
         plugins={plugins}
         aria-label={`${scene.plot.title}, plotted over the keys. The same numbers stand in its table.`}
-        className="relative block"
+        className="block"
       />
-      {cursor !== null && <CursorRings scene={scene} midi={cursor} />}
     </div>
   );
 }

@@ -21,7 +21,7 @@ type Request = {
 /** Kept between words and curve or cursor. */
 const CLEAR = 8;
 
-const NEAR_DISTANCES = [9, 16, 24, 34];
+const NEAR_DISTANCES = [9, 16, 24, 34, 46, 60];
 const FAR_DISTANCES = [18, 30, 44, 60];
 
 function* candidates({ at, width, height, reach }: Request): Generator<WordsPlace & { cost: number }> {
@@ -34,8 +34,8 @@ function* candidates({ at, width, height, reach }: Request): Generator<WordsPlac
       const beside = index === 2;
       const away = far || beside ? (far ? 26 + distance / 2 : distance + 3) : -6;
       const cost = distance + index * 4;
-      yield { x: at.x - away - width, y, width, height, align: "right", cost: cost + (far ? 0 : 3) };
-      yield { x: at.x + away, y, width, height, align: "left", cost: cost + (far ? 3 : 2) };
+      yield { x: at.x - away - width, y, width, height, align: "right", cost: cost + (far ? 0 : 2) };
+      yield { x: at.x + away, y, width, height, align: "left", cost: cost + 3 };
       if (!far && !beside) yield { x: at.x - width / 2, y, width, height, align: "center", cost };
     }
   }
@@ -48,7 +48,7 @@ const grown = (rect: Rect, by: number): Rect => ({
   height: rect.height + 2 * by,
 });
 
-const holds = (rect: Rect, point: Point) =>
+export const holds = (rect: Rect, point: Point) =>
   point.x > rect.x && point.x < rect.x + rect.width && point.y > rect.y && point.y < rect.y + rect.height;
 
 export function overlap(a: Rect, b: Rect): boolean {

@@ -57,13 +57,16 @@ function markStyle(mark: MarkKind | "flagged" | "older" | "newer", scene: Scene,
   }
 }
 
-/** Datasets from the bottom to the top of the picture. */
+/** Datasets in pixels of the plotting area, from the bottom to the top of the picture. */
 export function plotDatasets(scene: Scene, colours: PlotColours): PlotDataset[] {
   const datasets: PlotDataset[] = [];
   const put = (points: readonly KeyValue[], rest: Partial<PlotDataset>) => {
     datasets.push({
       label: `${datasets.length}`,
-      data: points.map(({ midi, value }) => ({ x: scene.layout.x(midi), y: value })),
+      data: points.map(({ midi, value }) => ({
+        x: scene.layout.x(midi),
+        y: scene.scale.y(value, scene.area.height),
+      })),
       // Chart.js draws the highest order first.
       order: -datasets.length,
       clip: false,

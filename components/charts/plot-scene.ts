@@ -1,7 +1,7 @@
 import { type KeyLayout, type KeyRange, layOutKeys } from "./key-geometry";
-import type { Point, Rect } from "./place-words";
-import { logScale, symmetricScale, type ValueScale } from "./plot-scale";
-import type { KeyPlot, PlotLayer } from "./plot-types";
+import { holds, type Point, type Rect } from "./place-words";
+import { logScale, symmetricScale, type Tick, type ValueScale } from "./plot-scale";
+import type { KeyPlot, KeyValue, PlotLayer } from "./plot-types";
 
 /** Everything needed to draw one plot at one width: measures, scales and where its points fall. Pure. */
 
@@ -79,24 +79,82 @@ export function pointAt(scene: Scene, midi: number, value: number): Point {
   };
 }
 
-/** Points that words must not cover. */
+/** Further apart than this, the points of a line would leave holes that words could fall into. */
+const DENSE = 8;
+
+function along(run: readonly Point[]): Point[] {
+  return run.flatMap((point, index) => {
+    const next = run[index + 1];
+    if (!next) return [point];
+    const steps = Math.max(1, Math.ceil(Math.hypot(next.x - point.x, next.y - point.y) / DENSE));
+    return Array.from({ length: steps }, (_, step) => ({
+      x: point.x + ((next.x - point.x) * step) / steps,
+      y: point.y + ((next.y - point.y) * step) / steps,
+    }));
+  });
+}
+
+/** Points that words must not cover: marks and stems, and lines and edges of bands all along. */
 export function drawnPoints(scene: Scene): Point[] {
-  const at = (midi: number, value: number) => pointAt(scene, midi, value);
+  const line = (points: readonly KeyValue[]) =>
+    splitAtBreak(scene.layout.range, points).flatMap((run) =>
+      along(run.map(({ midi, value }) => pointAt(scene, midi, value))),
+    );
+  const edges = (points: readonly { midi: number; low?: number | null; high?: number | null }[]) =>
+    (["low", "high"] as const).flatMap((edge) =>
+      line(
+        points.flatMap((point) => (point[edge] == null ? [] : [{ midi: point.midi, value: point[edge] }])),
+      ),
+    );
   return scene.plot.layers.flatMap((layer): Point[] => {
     switch (layer.kind) {
       case "curve":
-        return layer.points.flatMap(({ midi, value, low, high }) => [
-          at(midi, value),
-          ...(low != null && high != null ? [at(midi, low), at(midi, high)] : []),
-        ]);
+        return [...line(layer.points), ...edges(layer.points)];
       case "band":
-        return layer.points.flatMap(({ midi, low, high }) => [at(midi, low), at(midi, high)]);
+        return edges(layer.points);
       case "visit":
-        return [...layer.curve, ...layer.measured].map(({ midi, value }) => at(midi, value));
+        return [
+          ...line(layer.curve),
+          ...layer.measured.map(({ midi, value }) => pointAt(scene, midi, value)),
+        ];
       default:
-        return layer.points.map(({ midi, value }) => at(midi, value));
+        return layer.points.flatMap(({ midi, value }) => {
+          const mark = pointAt(scene, midi, value);
+          return layer.stems ? along([mark, pointAt(scene, midi, 0)]) : [mark];
+        });
     }
   });
+}
+
+/** On a phone only zero and the outermost lines of a cents axis are named. */
+export function tickIsNamed(scene: Scene, tick: Tick): boolean {
+  if (tick.label === null) return false;
+  if (!scene.compact || scene.scale.log || tick.value === 0) return true;
+  return Math.abs(tick.value) === Math.max(...scene.scale.ticks.map(({ value }) => Math.abs(value)));
+}
+
+/** Where the numbers of a phone's axis stand, on their lines inside the plot. */
+export function tickLabelRects(scene: Scene, side: "left" | "right"): Rect[] {
+  const { area, scale } = scene;
+  const width = scale.log ? 46 : 26;
+  return scale.ticks
+    .filter((tick) => tickIsNamed(scene, tick))
+    .map((tick) => ({
+      x: side === "left" ? area.x : area.x + area.width - width,
+      y: area.y + scale.y(tick.value, area.height) - 16,
+      width,
+      height: 14,
+    }));
+}
+
+/** The end of the lines where those numbers cover fewer points. */
+export function tickSide(scene: Scene): "left" | "right" {
+  const points = drawnPoints(scene);
+  const covered = (side: "left" | "right") => {
+    const rects = tickLabelRects(scene, side);
+    return points.filter((point) => rects.some((rect) => holds(rect, point))).length;
+  };
+  return covered("right") < covered("left") ? "right" : "left";
 }
 
 export type CursorRing = Point & {

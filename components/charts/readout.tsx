@@ -15,6 +15,8 @@ export type ReadoutCell = {
   width?: number;
   /** Left out on the phone, where three cells have room. */
   deskOnly?: boolean;
+  /** A size smaller, for words instead of a number. */
+  small?: boolean;
 };
 
 type Props = {
@@ -51,14 +53,18 @@ export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
         {cells.map((cell) => (
           <div
             key={cell.key}
-            className={`min-w-0 border-hairline @xl:border-l @xl:px-4 ${cell.deskOnly ? "hidden @xl:block" : ""}`}
+            className={`min-w-0 border-hairline @xl:border-l @xl:pl-4 @xl:not-last:pr-4 ${cell.deskOnly ? "hidden @xl:block" : ""}`}
           >
             <div className="truncate text-12 text-ink-soft">{cell.label}</div>
-            <div className="truncate font-medium text-16">{cell.value}</div>
+            <div
+              className={`truncate font-medium proportional-nums @xl:tabular-nums ${cell.small ? "text-14" : "text-16"}`}
+            >
+              {cell.value}
+            </div>
           </div>
         ))}
         {hint && (
-          <div className="hidden items-center justify-end gap-1.5 border-hairline border-l text-12 text-ink-soft @xl:flex">
+          <div className="hidden items-center justify-end gap-1.5 whitespace-nowrap border-hairline border-l text-12 text-ink-soft @min-[840px]:flex">
             {hint}
           </div>
         )}
