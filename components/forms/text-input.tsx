@@ -89,7 +89,7 @@ export function PasswordInput({
           />
           <button
             type="button"
-            className="link -mr-3 flex h-11 shrink-0 items-center rounded px-3 text-14"
+            className="link -mr-3 flex h-[42px] shrink-0 items-center rounded px-3 text-14"
             aria-pressed={shown}
             aria-label={shown ? "Hide the password" : "Show the password"}
             onClick={() => setShown(!shown)}

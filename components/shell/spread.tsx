@@ -109,13 +109,18 @@ export function WorkHead({
   className?: string;
 }) {
   return (
-    <div className={cx("mt-5 mb-3 flex flex-wrap items-center justify-between gap-x-4 gap-y-3", className)}>
+    <div
+      className={cx(
+        "mt-5 mb-3 flex items-center justify-between gap-x-4 gap-y-3 max-lg:flex-wrap",
+        className,
+      )}
+    >
       <div className="min-w-0">
         <h2>{title}</h2>
         {summary ? <p className="lab mt-1">{summary}</p> : null}
       </div>
       {actions ? (
-        <div className="flex flex-wrap items-center gap-2" data-no-print>
+        <div className="flex shrink-0 flex-wrap items-center gap-2" data-no-print>
           {actions}
         </div>
       ) : null}

@@ -32,7 +32,7 @@ export function Facts({
   return (
     <dl
       className={cx(
-        "grid gap-x-2 gap-y-1",
+        "grid gap-y-1",
         look === "sums"
           ? "grid-cols-[1fr_auto]"
           : "grid-cols-[96px_minmax(0,1fr)] xl:grid-cols-[112px_minmax(0,1fr)]",

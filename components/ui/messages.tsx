@@ -1,90 +1,76 @@
 "use client";
 
-import type { ReactNode } from "react";
-import { Toaster, toast } from "sonner";
+import { type ReactNode, useEffect, useRef, useState, useSyncExternalStore } from "react";
 import { AppLink } from "./app-link";
 import { buttonLook } from "./button-look";
+import {
+  dismissMessage,
+  type MessageKind,
+  type ShownMessage,
+  shownMessages,
+  subscribeToMessages,
+} from "./message-queue";
 import { Sign, type SignName } from "./sign";
 
 /** Eight seconds, and longer while the pointer or the focus rests on it. */
 const duration = 8_000;
 
-export type MessageKind = "done" | "attention" | "waiting";
-
 const signs: Record<MessageKind, SignName> = { done: "tick", attention: "attention", waiting: "clock" };
+const none: readonly ShownMessage[] = [];
 
-export type MessageAction = { label: string; onPress: () => void } | { label: string; href: string };
-
-export type Message = {
-  /** What happened, in one sentence. */
-  text: string;
-  /** What to do or what it means, set after the first sentence. */
-  detail?: string;
-  kind?: MessageKind;
-  action?: MessageAction;
-};
-
-/** Shows a message at the foot of the page and returns its id, for `dismissMessage`. */
-export function showMessage({ text, detail, kind = "done", action }: Message): string | number {
-  return toast.custom(
-    (id) => (
-      <MessageBox kind={kind} onClose={() => toast.dismiss(id)} action={action}>
-        {detail ? <b className="font-semibold">{text}</b> : text}
-        {detail ? ` ${detail}` : null}
-      </MessageBox>
-    ),
-    { duration },
+/**
+ * Where messages appear. Once in the tree, in Providers. Ours rather than a package: the usual ones write
+ * a style element at run time, which the content security policy refuses.
+ */
+export function Messages() {
+  const messages = useSyncExternalStore(subscribeToMessages, shownMessages, () => none);
+  return (
+    <section
+      aria-label="Messages"
+      data-no-print
+      className="pointer-events-none fixed right-4 bottom-[calc(var(--bar)+var(--strip)+12px)] left-4 z-50 sm:left-auto sm:w-[440px] lg:right-5 lg:bottom-5"
+    >
+      <ol aria-live="polite" aria-relevant="additions" className="grid gap-3">
+        {messages.map((message) => (
+          <li key={message.id} className="motion-safe:animate-[row-open_120ms_ease-out]">
+            <MessageBox message={message} />
+          </li>
+        ))}
+      </ol>
+    </section>
   );
 }
 
-export function dismissMessage(id: string | number): void {
-  toast.dismiss(id);
-}
+function MessageBox({ message }: { message: ShownMessage }) {
+  const { id, kind = "done", text, detail, action } = message;
+  const [held, setHeld] = useState(false);
+  const left = useRef(duration);
 
-/**
- * Says what was done and offers to take it back. `undo` runs at most once; if it fails the
- * person is told, because by then the page may already show the old state.
- */
-export function toastWithUndo(text: string, undo: () => unknown): string | number {
-  let used = false;
-  return showMessage({
-    text,
-    action: {
-      label: "Undo",
-      onPress: () => {
-        if (used) return;
-        used = true;
-        Promise.resolve()
-          .then(undo)
-          .catch(() =>
-            showMessage({
-              kind: "attention",
-              text: "That could not be undone.",
-              detail: "Load the page again to see how it stands.",
-            }),
-          );
-      },
-    },
-  });
-}
+  useEffect(() => {
+    if (held) return;
+    const started = Date.now();
+    const timer = setTimeout(() => dismissMessage(id), left.current);
+    return () => {
+      clearTimeout(timer);
+      left.current = Math.max(2_000, left.current - (Date.now() - started));
+    };
+  }, [held, id]);
 
-function MessageBox({
-  kind,
-  action,
-  onClose,
-  children,
-}: {
-  kind: MessageKind;
-  action?: MessageAction;
-  onClose: () => void;
-  children: ReactNode;
-}) {
+  const close = () => dismissMessage(id);
   return (
-    <div className="flex min-h-12 w-full items-center gap-3 rounded bg-sheet py-1.5 pr-2 pl-4 text-14 text-ink shadow-float">
-      <Sign name={signs[kind]} className="self-start mt-2" />
-      <p className="min-w-0 flex-1 py-1">{children}</p>
+    // biome-ignore lint/a11y/noStaticElementInteractions: resting here only holds the clock, nothing is pressed
+    <div
+      className="pointer-events-auto flex min-h-12 items-center gap-3 rounded bg-sheet py-1.5 pr-2 pl-4 shadow-float"
+      onPointerEnter={() => setHeld(true)}
+      onPointerLeave={() => setHeld(false)}
+      onFocus={() => setHeld(true)}
+      onBlur={() => setHeld(false)}
+      onKeyDown={(event) => event.key === "Escape" && close()}
+    >
+      <Sign name={signs[kind]} className="mt-2 self-start" />
+      <Words text={text} detail={detail} />
       {action && "href" in action ? (
-        <AppLink href={action.href} className={buttonLook("quiet")} onClick={onClose}>
+        <AppLink href={action.href} className={buttonLook("quiet")} onClick={close}>
           {action.label}
         </AppLink>
       ) : null}
@@ -93,7 +79,7 @@ function MessageBox({
           type="button"
           className={buttonLook("quiet")}
           onClick={() => {
-            onClose();
+            close();
             action.onPress();
           }}
         >
@@ -102,8 +88,8 @@ function MessageBox({
       ) : null}
       <button
         type="button"
-        className="flex size-9 shrink-0 items-center justify-center rounded text-ink-soft hover:bg-cover touch:size-11"
-        onClick={onClose}
+        className="-ml-2 flex size-9 shrink-0 items-center justify-center rounded text-ink-soft hover:bg-cover touch:size-11"
+        onClick={close}
         aria-label="Close the message"
       >
         <Sign name="cross" size={12} />
@@ -112,19 +98,11 @@ function MessageBox({
   );
 }
 
-/** Where messages appear. Once in the tree, in Providers. */
-export function Messages() {
+function Words({ text, detail }: { text: string; detail?: string }): ReactNode {
   return (
-    <Toaster
-      position="bottom-right"
-      expand
-      gap={12}
-      visibleToasts={3}
-      duration={duration}
-      containerAriaLabel="Messages"
-      offset={{ bottom: 20, right: 20 }}
-      mobileOffset={{ bottom: "calc(var(--bar) + var(--strip) + 12px)", left: 16, right: 16 }}
-      toastOptions={{ unstyled: true, className: "w-full lg:w-[420px]" }}
-    />
+    <p className="min-w-0 flex-1 py-1">
+      {detail ? <b className="font-semibold">{text}</b> : text}
+      {detail ? ` ${detail}` : null}
+    </p>
   );
 }
