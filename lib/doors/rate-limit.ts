@@ -14,3 +14,8 @@ export async function countRequest(key: string, limit: Limit): Promise<Counted> 
   const seen = row?.seen ?? 0;
   return { allowed: seen <= limit.most, retryAfterSeconds: Math.max(1, row?.resets_in ?? limit.seconds) };
 }
+
+/** Begins a count anew, after the success that made the earlier tries harmless. */
+export async function forgetRequests(key: string): Promise<void> {
+  await appDb().execute(sql`select forget_requests(${key})`);
+}

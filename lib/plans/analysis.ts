@@ -1,0 +1,72 @@
+import {
+  adviceFrom,
+  beatRates,
+  centsBetween,
+  equalTemperedHz,
+  type KeyboardResult,
+  keyboard,
+  planFrom,
+  raiseByCents,
+} from "@/lib/acoustics";
+import type { Style, Temperament } from "@/lib/acoustics/types";
+import { COMPUTATION_VERSION } from "@/lib/acoustics/version";
+import { type FittedNote, observationsOf, pitchOf } from "@/lib/readings/rules";
+import type { AnalysisRecord } from "./schema";
+
+export type AnalysisInput = {
+  instrument: { id: string; firstMidi: number; lastMidi: number; breakMidi: number | null };
+  sheet: { id: string; referenceHz: number };
+  notes: readonly FittedNote[];
+  style: { ref: string; name: string; style: Style };
+  temperament: Temperament;
+  referenceHz: number;
+};
+
+/**
+ * Everything the pages draw from one sheet: B of all keys, the plan with its band, beats, evenness and what to
+ * measure next. Pure: the server's answer and the browser's preview are the same code.
+ */
+export function analyse(input: AnalysisInput): { record: AnalysisRecord; keyboard: KeyboardResult } {
+  const { instrument, sheet, notes, style, temperament, referenceHz } = input;
+  const curve = keyboard({
+    observations: observationsOf(notes),
+    firstMidi: instrument.firstMidi,
+    lastMidi: instrument.lastMidi,
+    ...(instrument.breakMidi === null ? {} : { breakMidi: instrument.breakMidi }),
+  });
+  const options = { style: style.style, temperament, referenceHz };
+  const plan = planFrom(curve, options);
+  const tuned = plan.notes.map((note, index) => ({
+    midi: note.midi,
+    f1Hz: note.targetHz,
+    b: curve.keys[index]?.b ?? 0,
+  }));
+  return {
+    keyboard: curve,
+    record: {
+      sheetId: sheet.id,
+      instrumentId: instrument.id,
+      style: { ref: style.ref, name: style.name },
+      temperament: typeof temperament === "string" ? temperament : [...temperament],
+      referenceHz,
+      computationVersion: COMPUTATION_VERSION,
+      breakMidi: curve.breakMidi,
+      breakSource: curve.breakSource,
+      priorOnly: curve.priorOnly,
+      keys: curve.keys.map(({ residualCents: _, ...key }) => key),
+      notes: plan.notes,
+      evenness: plan.evenness,
+      beats: beatRates(tuned),
+      advice: adviceFrom(curve, options),
+      pitch: pitchAt(notes, sheet.referenceHz, referenceHz),
+    },
+  };
+}
+
+/** The pitch as read, against the reference the plan is for rather than the one the sheet was typed at. */
+function pitchAt(notes: readonly FittedNote[], sheetReferenceHz: number, referenceHz: number) {
+  return pitchOf(notes, sheetReferenceHz).map(({ midi, cents }) => {
+    const hz = raiseByCents(equalTemperedHz(midi, sheetReferenceHz), cents);
+    return { midi, cents: centsBetween(equalTemperedHz(midi, referenceHz), hz) };
+  });
+}
