@@ -72,3 +72,11 @@ export async function requireActor(requestHeaders: Headers): Promise<Actor> {
     throw new AppError("signed-out", "You are signed out. Sign in again; what you typed is still here.");
   return person.actor;
 }
+
+/** For doors that a person without a shop may use too: the person, or a 401. */
+export async function requirePerson(requestHeaders: Headers): Promise<SignedInPerson> {
+  const person = await personFrom(requestHeaders);
+  if (!person)
+    throw new AppError("signed-out", "You are signed out. Sign in again; what you typed is still here.");
+  return person;
+}
