@@ -2,7 +2,7 @@ import { keyboard } from "./keyboard";
 import { interpolate, type Knot } from "./keyboard-prior";
 import { at } from "./linear-algebra";
 import { REGISTERS, type Register, registerOf } from "./registers";
-import { flatCovariance, systemFrom } from "./stretch";
+import { flatCovariance, knowledgeOf, systemFrom } from "./stretch";
 import {
   covarianceWithStretch,
   irregularityVariance,
@@ -50,10 +50,7 @@ export function adviceFrom(result: KeyboardResult, options: PlanOptions = {}): A
   const columns = stretchByLnB(system);
   const withStretch = covarianceWithStretch(columns, covariance, n);
   const learned = stretchVariance(columns, withStretch, n);
-  const fixed = irregularityVariance(
-    system,
-    result.keys.map(({ residualCents }) => residualCents),
-  );
+  const fixed = irregularityVariance(system, knowledgeOf(result));
   const now = halfWidths(learned, fixed);
   const meanBandCents = mean(now);
 

@@ -13,7 +13,7 @@ const bassBridge = { slope: -8.47e-2, level: -5.82, pivotMidi: 33 };
 const trebleBridge = { slope: 9.26e-2, level: -13.64, pivotMidi: 69 };
 
 /** Standard deviations of u0, u1 (per octave), v0, v1 (per octave). */
-export const effectSigmas = [0.7, 0.25, 0.2, 0.08] as const;
+export const effectSigmas = [0.65, 0.25, 0.15, 0.065] as const;
 export const effectCount = effectSigmas.length;
 
 /** Correlation length of a bridge's departure from the two-exponential curve, in keys. */
@@ -23,22 +23,22 @@ export type Knot = readonly [midi: number, value: number];
 
 /** Standard deviation of g: largest about the break, where bridges differ most from the sum's smooth valley. */
 const curveSigmas: readonly Knot[] = [
-  [21, 0.3],
-  [45, 0.3],
-  [57, 0.15],
-  [69, 0.1],
-  [93, 0.1],
-  [108, 0.15],
+  [21, 0.28],
+  [40, 0.22],
+  [52, 0.1],
+  [60, 0.065],
+  [90, 0.065],
+  [108, 0.1],
 ];
 
 /** Standard deviation of e: wound strings and short strings are made less alike than the plain middle. */
 const scatterSigmas: readonly Knot[] = [
   [21, 0.1],
   [40, 0.08],
-  [48, 0.05],
-  [57, 0.035],
-  [90, 0.035],
-  [108, 0.08],
+  [52, 0.035],
+  [60, 0.025],
+  [90, 0.025],
+  [108, 0.07],
 ];
 
 /** Straight lines between knots in rising order, constant beyond them. */
@@ -121,15 +121,20 @@ function matern(distance: number): number {
 
 /**
  * Covariance of g + e over consecutive keys, row-major. Two keys share g only while on one bridge; with an uncertain
- * break the covariance is the average over where the break may be, which stays positive definite.
+ * break the covariance is the average over where the break may be, which stays positive definite. `curveScale` widens g.
  */
-export function residualCovariance(firstMidi: number, count: number, belief: BreakBelief): Float64Array {
+export function residualCovariance(
+  firstMidi: number,
+  count: number,
+  belief: BreakBelief,
+  curveScale = 1,
+): Float64Array {
   const matrix = new Float64Array(count * count);
   const sigmas = new Float64Array(count);
   const treble = new Float64Array(count);
   const correlation = new Float64Array(count);
   for (let i = 0; i < count; i += 1) {
-    sigmas[i] = interpolate(curveSigmas, firstMidi + i);
+    sigmas[i] = curveScale * interpolate(curveSigmas, firstMidi + i);
     treble[i] = onTrebleBridge(firstMidi + i, belief);
     correlation[i] = matern(i);
   }

@@ -5,6 +5,11 @@ import { at } from "./linear-algebra";
 
 /** Own scatter of a note set aside: wide enough that it tells its neighbours nothing. */
 const setAsideSigma = 3;
+/**
+ * Notes are judged against curves this much freer than believed: an instrument with an unusual scale is no fault of its
+ * notes. Between near neighbours it costs no power.
+ */
+const judgingCurveScale = 2;
 /** At most this share of the measured notes is set aside: beyond it the sheet, not the notes, is in question. */
 const largestFlaggedShare = 1 / 3;
 /** A note of a flagged run that alone lies within this many σ of the others' prediction is taken back. */
@@ -15,8 +20,7 @@ export type Screened = {
   flagged: ReadonlySet<number>;
   prior: Prior;
   mode: Mode;
-  /** Diagonals of the observations' precision at the mode. */
-  band: Float64Array;
+  /** Of each note against all others, under the freer curves. */
   residuals: DeletedResidual[];
 };
 
@@ -31,38 +35,56 @@ export function screen(
   evidence: readonly Evidence[],
   start?: Float64Array,
 ): Screened {
-  const plain = residualCovariance(firstMidi, count, belief);
+  const judging = residualCovariance(firstMidi, count, belief, judgingCurveScale);
   const flagged = new Set<number>();
   const limit = Math.floor(evidence.length * largestFlaggedShare);
-  let current = solve(firstMidi, count, plain, evidence, flagged, start);
+  let judged = judge(firstMidi, count, judging, evidence, flagged, start);
   for (;;) {
-    const run = worstRun(evidence, current.mode, current.band, flagged);
-    if (run === null || flagged.size + run.length > limit) return current;
+    const run = worstRun(evidence, judged.mode, judged.band, flagged);
+    if (run === null || flagged.size + run.length > limit) break;
     for (const i of run) flagged.add(i);
-    current = solve(firstMidi, count, plain, evidence, flagged, current.mode.effects);
-    const belonging = run.filter((i) => Math.abs(current.residuals[i]?.z ?? belongsZ) < belongsZ);
+    judged = judge(firstMidi, count, judging, evidence, flagged, judged.mode.effects);
+    const belonging = run.filter((i) => Math.abs(judged.residuals[i]?.z ?? belongsZ) < belongsZ);
     if (belonging.length > 0 && belonging.length < run.length) {
       for (const i of belonging) flagged.delete(i);
-      current = solve(firstMidi, count, plain, evidence, flagged, current.mode.effects);
+      judged = judge(firstMidi, count, judging, evidence, flagged, judged.mode.effects);
     }
   }
+  const residual = withSetAside(residualCovariance(firstMidi, count, belief), count, evidence, flagged);
+  const prior = { firstMidi, count, residual };
+  return {
+    flagged,
+    prior,
+    mode: findMode(prior, evidence, judged.mode.effects),
+    residuals: judged.residuals,
+  };
 }
 
-function solve(
+type Judged = { mode: Mode; band: Float64Array; residuals: DeletedResidual[] };
+
+function judge(
   firstMidi: number,
   count: number,
-  plain: Float64Array,
+  judging: Float64Array,
   evidence: readonly Evidence[],
   flagged: ReadonlySet<number>,
   start?: Float64Array,
-): Screened {
-  const residual = Float64Array.from(plain);
-  evidence.forEach(({ key }, i) => {
-    if (flagged.has(i)) residual[key * count + key] = at(residual, key * count + key) + setAsideSigma ** 2;
-  });
-  const prior = { firstMidi, count, residual };
-  const mode = findMode(prior, evidence, start);
+): Judged {
+  const residual = withSetAside(judging, count, evidence, flagged);
+  const mode = findMode({ firstMidi, count, residual }, evidence, start);
   const band = flagBand(mode);
-  const residuals = deletedResiduals(evidence, mode, band, flagged, setAsideSigma);
-  return { flagged: new Set(flagged), prior, mode, band, residuals };
+  return { mode, band, residuals: deletedResiduals(evidence, mode, band, flagged, setAsideSigma) };
+}
+
+function withSetAside(
+  residual: Float64Array,
+  count: number,
+  evidence: readonly Evidence[],
+  flagged: ReadonlySet<number>,
+): Float64Array {
+  const widened = Float64Array.from(residual);
+  evidence.forEach(({ key }, i) => {
+    if (flagged.has(i)) widened[key * count + key] = at(widened, key * count + key) + setAsideSigma ** 2;
+  });
+  return widened;
 }

@@ -1,8 +1,10 @@
 import { irregularitySigma } from "./fit-prior";
+import { interpolate, type Knot } from "./keyboard-prior";
 import { at, choleskySemidefiniteInPlace, solveBand } from "./linear-algebra";
 import { inharmonicCentsSlope } from "./partials";
 import type { StretchSystem } from "./stretch-system";
 
+const unmeasured: Knowledge = { measured: false };
 export const z95 = 1.959964;
 
 /** Low bass partials are pulled by the soundboard: their scatter in cents at A0, fading to none at E2. */
@@ -10,12 +12,26 @@ const pulledPartials: Readonly<Record<number, number>> = { 1: 5, 2: 2, 3: 2, 4: 
 const lastPulledMidi = 40;
 
 /**
- * Scatter of a partial about the stiff-string law, cents, one standard deviation. `residualCents`, the note's own, takes the
- * place of the register's typical scatter.
+ * What a fit leaves of a note's irregularity, as a share of its σ: two parameters through the three or four partials of a top
+ * note take up much of it. 1 − 2/N for N usable partials, under the root; N is common practice, no source.
  */
-export function partialIrregularitySigma(midi: number, partial: number, residualCents?: number): number {
+const leftByFit: readonly Knot[] = [
+  [72, 1],
+  [93, 0.8],
+  [108, 0.65],
+];
+
+/** How a key's B is known: `residualCents` is the root mean square residual of its own fit, if it has one. */
+export type Knowledge = { measured: boolean; residualCents?: number };
+
+/**
+ * Scatter of a partial about the curve used for its note, cents, one standard deviation: typical for the register, or the
+ * note's own residual.
+ */
+export function partialIrregularitySigma(midi: number, partial: number, knowledge: Knowledge): number {
   const share = Math.min(1, Math.max(0, (lastPulledMidi - midi) / 19));
-  return Math.hypot(residualCents ?? irregularitySigma(midi), share * (pulledPartials[partial] ?? 0));
+  const typical = irregularitySigma(midi) * (knowledge.measured ? interpolate(leftByFit, midi) : 1);
+  return Math.hypot(knowledge.residualCents ?? typical, share * (pulledPartials[partial] ?? 0));
 }
 
 /**
@@ -53,10 +69,21 @@ export function covarianceWithStretch(
 ): Float64Array {
   const product = new Float64Array(n * n);
   for (let k = 0; k < n; k += 1) {
-    for (let j = 0; j < n; j += 1) {
-      const value = at(covariance, k * n + j);
-      for (let i = 0; i < n; i += 1)
-        product[k * n + i] = at(product, k * n + i) + value * at(columns, j * n + i);
+    const row = k * n;
+    let j = 0;
+    // Two columns of J per pass: halves the traffic through `product`, which bounds this cubic loop.
+    for (; j + 1 < n; j += 2) {
+      const first = at(covariance, row + j);
+      const second = at(covariance, row + j + 1);
+      const column = j * n;
+      for (let i = 0; i < n; i += 1) {
+        product[row + i] =
+          at(product, row + i) + first * at(columns, column + i) + second * at(columns, column + n + i);
+      }
+    }
+    if (j < n) {
+      const last = at(covariance, row + j);
+      for (let i = 0; i < n; i += 1) product[row + i] = at(product, row + i) + last * at(columns, j * n + i);
     }
   }
   return product;
@@ -76,19 +103,16 @@ export function stretchVariance(columns: Float64Array, withStretch: Float64Array
 /**
  * Diagonal of P·R·Pᵀ, cents²: the plan's share of the partials' irregularity. Irregularities of different partials are independent, so their
  * covariance on the right-hand side of the normal equations is a sparse sum of outer products; its factor is solved
- * through the normal matrix. `residuals[i]` is the own residual of the key at position i, where it has one.
+ * through the normal matrix. `known[i]` tells how the key at position i is known.
  */
-export function irregularityVariance(
-  system: StretchSystem,
-  residuals: readonly (number | undefined)[],
-): Float64Array {
+export function irregularityVariance(system: StretchSystem, known: readonly Knowledge[]): Float64Array {
   const { settings, factor } = system;
   const n = settings.keys.length;
   const { position, partial } = settings.anchor;
   const variance = new Float64Array(n);
   const sides = new Float64Array(n * n);
   for (const { key, number, effects } of effectsByPartial(system)) {
-    const sigma = partialIrregularitySigma(settings.keys[key] ?? 0, number, residuals[key]);
+    const sigma = partialIrregularitySigma(settings.keys[key] ?? 0, number, known[key] ?? unmeasured);
     if (key === position && number === partial && partial > 1) continue;
     for (const [row, left] of effects) {
       for (const [column, right] of effects) {
@@ -114,7 +138,7 @@ export function irregularityVariance(
     for (const [row, effect] of own?.effects ?? []) column[row] = effect;
     solveBand(factor, column);
     for (let i = 0; i < n; i += 1) column[i] = at(column, i) - 1;
-    add(partialIrregularitySigma(settings.keys[position] ?? 0, partial, residuals[position]));
+    add(partialIrregularitySigma(settings.keys[position] ?? 0, partial, known[position] ?? unmeasured));
   }
   return variance;
 }

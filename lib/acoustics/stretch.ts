@@ -7,6 +7,7 @@ import { partialHzFromF1 } from "./partials";
 import {
   covarianceWithStretch,
   irregularityVariance,
+  type Knowledge,
   stretchByLnB,
   stretchVariance,
   z95,
@@ -44,10 +45,7 @@ export function planFrom(result: KeyboardResult, options: PlanOptions = {}): Str
   const n = result.keys.length;
   const columns = stretchByLnB(system);
   const variance = stretchVariance(columns, covarianceWithStretch(columns, flatCovariance(result), n), n);
-  const irregular = irregularityVariance(
-    system,
-    result.keys.map(({ residualCents }) => residualCents),
-  );
+  const irregular = irregularityVariance(system, knowledgeOf(result));
   const bands = Array.from(variance, (value, i) => z95 * Math.sqrt(Math.max(0, value) + at(irregular, i)));
   return resultOf(system, bands);
 }
@@ -62,6 +60,13 @@ export function systemFrom(result: KeyboardResult, options: PlanOptions): Stretc
     settings,
     Float64Array.from(result.keys, ({ b }) => b),
   );
+}
+
+export function knowledgeOf({ keys }: KeyboardResult): Knowledge[] {
+  return keys.map(({ source, residualCents }) => ({
+    measured: source === "measured",
+    ...(residualCents === undefined ? {} : { residualCents }),
+  }));
 }
 
 export function flatCovariance({ keys, covariance }: KeyboardResult): Float64Array {
