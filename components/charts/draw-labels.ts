@@ -32,6 +32,7 @@ export function drawLabels(ctx: Ctx, scene: Scene, colours: PlotColours, cursorM
       points: others,
       taken,
       cursorX,
+      zeroY: scene.scale.log ? null : pointAt(scene, midi, 0).y,
     });
     taken.push(place);
     if (reach === "far") drawLeader(ctx, at, place, colours);

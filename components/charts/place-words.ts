@@ -16,6 +16,8 @@ type Request = {
   taken: readonly Rect[];
   /** x of the string of the cursor, kept clear like the rest. */
   cursorX?: number | null;
+  /** y of the zero line, which words leave alone when another place is as good. */
+  zeroY?: number | null;
 };
 
 /** Kept between words and curve or cursor. */
@@ -55,26 +57,34 @@ export function overlap(a: Rect, b: Rect): boolean {
   return a.x < b.x + b.width && b.x < a.x + a.width && a.y < b.y + b.height && b.y < a.y + a.height;
 }
 
-function outside(rect: Rect, area: Rect): number {
-  return (
-    Math.max(0, area.x - rect.x) +
-    Math.max(0, rect.x + rect.width - area.x - area.width) +
-    Math.max(0, area.y - rect.y) +
-    Math.max(0, rect.y + rect.height - area.y - area.height)
-  );
+/** Held inside the area; words wider or higher than it start at its edge. */
+function inside(place: WordsPlace, area: Rect): WordsPlace {
+  const hold = (at: number, size: number, from: number, room: number) =>
+    Math.max(from, Math.min(from + room - size, at));
+  return {
+    ...place,
+    x: hold(place.x, place.width, area.x, area.width),
+    y: hold(place.y, place.height, area.y, area.height),
+  };
 }
 
 /** The cheapest of the places around the point. Deterministic: the same plot is always labelled alike. */
 export function placeWords(request: Request): WordsPlace {
   let best: WordsPlace | null = null;
   let lowest = Number.POSITIVE_INFINITY;
-  for (const { cost, ...place } of candidates(request)) {
+  for (const { cost, ...wanted } of candidates(request)) {
+    const place = inside(wanted, request.area);
+    const pushed = Math.abs(place.x - wanted.x) + Math.abs(place.y - wanted.y);
+    const onPoint = holds(grown(place, 5), request.at) ? 1 : 0;
     const clear = grown(place, CLEAR);
     const covered = request.points.filter((point) => holds(clear, point)).length;
     const crowded = request.taken.filter((rect) => overlap(grown(place, 4), rect)).length;
     const string = request.cursorX;
     const crossed = string != null && string > clear.x && string < clear.x + clear.width ? 1 : 0;
-    const total = cost + covered * 40 + crowded * 400 + crossed * 60 + outside(place, request.area) * 20;
+    const zero = request.zeroY;
+    const onZero = zero != null && zero > place.y - 2 && zero < place.y + place.height + 2 ? 1 : 0;
+    const total =
+      cost + pushed / 2 + onPoint * 1000 + covered * 40 + crowded * 400 + crossed * 60 + onZero * 25;
     if (total < lowest) {
       best = place;
       lowest = total;
