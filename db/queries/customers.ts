@@ -2,8 +2,8 @@ import { and, eq, isNotNull, isNull, type SQL, sql } from "drizzle-orm";
 import type { Handle } from "@/db/client";
 import { customer } from "@/db/schema";
 import type { CustomerChange, CustomerListQuery, NewCustomer } from "@/lib/customers/schema";
-import { type Order, orderBy, paged, pageStart } from "./keyset";
-import { matching } from "./search";
+import { byName, type Order, orderBy, paged, pageStart } from "./keyset";
+import { matching, matchingOwn, type Reach } from "./search";
 
 const columns = {
   id: customer.id,
@@ -19,11 +19,11 @@ const columns = {
 };
 
 const sorts: Record<CustomerListQuery["sort"], { by: SQL; type: "text" | "timestamptz" }> = {
-  name: { by: sql`lower(${customer.name})`, type: "text" },
+  name: { by: byName(customer.name), type: "text" },
   updated: { by: sql`${customer.updatedAt}`, type: "timestamptz" },
 };
 
-export async function listCustomers(db: Handle, shopId: string, query: CustomerListQuery) {
+export async function listCustomers(db: Handle, shopId: string, query: CustomerListQuery, reach: Reach) {
   const sort = sorts[query.sort];
   const order: Order = { by: sort.by, direction: query.direction, id: sql`${customer.id}` };
   const { notes: _, ...listed } = columns;
@@ -32,8 +32,9 @@ export async function listCustomers(db: Handle, shopId: string, query: CustomerL
       ...listed,
       sites: sql<number>`(select count(*)::int from site s where s.shop_id = ${shopId}
         and s.customer_id = customer.id and s.archived_at is null)`,
-      instruments: sql<number>`(select count(*)::int from instrument_holding h where h.shop_id = ${shopId}
-        and h.owner_id = customer.id and h.until is null)`,
+      instruments: sql<number>`(select count(*)::int from instrument_holding h
+        join instrument i on i.shop_id = ${shopId} and i.id = h.instrument_id and i.archived_at is null
+        where h.shop_id = ${shopId} and h.owner_id = customer.id and h.until is null)`,
       orderKey: sql<string>`(${sort.by})::text`,
     })
     .from(customer)
@@ -41,13 +42,19 @@ export async function listCustomers(db: Handle, shopId: string, query: CustomerL
       and(
         eq(customer.shopId, shopId),
         query.archived === "only" ? isNotNull(customer.archivedAt) : isNull(customer.archivedAt),
-        query.q ? matching("customer", customer.id, query.q) : undefined,
+        query.q ? searched(query.q, query.archived === "only", reach) : undefined,
         pageStart(order, query, sort.type),
       ),
     )
     .orderBy(orderBy(order))
     .limit(query.most + 1);
   return paged(rows, query);
+}
+
+function searched(q: string, archived: boolean, reach: Reach): SQL {
+  return reach === "all"
+    ? matching("customer", customer.id, q, archived)
+    : matchingOwn(sql`${customer.searchText}`, q);
 }
 
 export async function customerById(db: Handle, shopId: string, id: string) {
@@ -73,11 +80,16 @@ export async function updateCustomer(
   db: Handle,
   shopId: string,
   id: string,
-  { version, ...fields }: CustomerChange & { archivedAt?: Date | null },
+  { version, archived, ...fields }: CustomerChange,
 ) {
   const [row] = await db
     .update(customer)
-    .set({ ...fields, version: version + 1, updatedAt: sql`now()` })
+    .set({
+      ...fields,
+      ...(archived === undefined ? {} : { archivedAt: archived ? sql`now()` : null }),
+      version: version + 1,
+      updatedAt: sql`now()`,
+    })
     .where(and(eq(customer.shopId, shopId), eq(customer.id, id), eq(customer.version, version)))
     .returning(columns);
   return row;

@@ -1,4 +1,5 @@
 import { type SQL, sql } from "drizzle-orm";
+import type { PgColumn } from "drizzle-orm/pg-core";
 import { AppError } from "@/lib/errors";
 
 /**
@@ -8,6 +9,11 @@ import { AppError } from "@/lib/errors";
 export type Order = { by: SQL; direction: "asc" | "desc"; id: SQL };
 
 export type Page = { cursor?: string | undefined; most: number };
+
+/** Names in the order people expect, whatever their case and accents; the indexes are made for it. */
+export function byName(column: PgColumn): SQL {
+  return sql`${column} collate "und-x-icu"`;
+}
 
 type Key = { value: string; id: string };
 
@@ -27,7 +33,7 @@ function decode(cursor: string): Key {
 export function pageStart(
   order: Order,
   page: Page,
-  type: "text" | "timestamptz" | "integer",
+  type: "text" | "timestamptz" | "timestamp" | "integer",
 ): SQL | undefined {
   if (!page.cursor) return undefined;
   const { value, id } = decode(page.cursor);

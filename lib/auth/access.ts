@@ -24,6 +24,9 @@ const table = {
   "instruments.read": ["all", "all", "all", "own"],
   "instruments.create": ["all", "all", "none", "none"],
   "instruments.change": ["all", "all", "own", "none"],
+  /** Archive, restore, move, sell: what concerns the customers more than the work. */
+  "instruments.place": ["all", "all", "none", "none"],
+  "search.read": ["all", "all", "all", "none"],
   "visits.read": ["all", "all", "all", "own"],
   "visits.change": ["all", "all", "own", "none"],
   "sheets.read": ["all", "all", "all", "none"],

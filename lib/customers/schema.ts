@@ -1,32 +1,32 @@
 import { z } from "zod";
+import { optionalText } from "@/lib/optional-text";
 import { listOf, listQuery } from "@/lib/pages/list-query";
 
-/** An empty field means "not known", whether a form or a program sends it. */
-export function optionalText(most: number) {
-  return z
-    .string()
-    .trim()
-    .max(most, `At most ${most} characters.`)
-    .transform((text) => (text === "" ? null : text))
-    .nullish()
-    .transform((text) => text ?? null);
-}
-
 export const customerFields = z.object({
-  kind: z.enum(["person", "organisation"]).default("person"),
+  kind: z.enum(["person", "organisation"]).optional(),
   name: z.string().trim().min(1, "Give the customer a name.").max(200, "At most 200 characters."),
   contactName: optionalText(200),
   email: z
-    .union([z.literal("").transform(() => null), z.email("Write an address like anna@example.org.").max(254)])
-    .nullish()
-    .transform((email) => email ?? null),
+    .string()
+    .trim()
+    .max(254, "At most 254 characters.")
+    .refine(
+      (text) => text === "" || z.email().safeParse(text).success,
+      "Write an address like anna@example.org.",
+    )
+    .transform((text) => (text === "" ? null : text))
+    .nullable()
+    .optional(),
   phone: optionalText(60),
   notes: optionalText(5000),
 });
 
 export const newCustomer = customerFields.extend({ id: z.uuid().optional() });
 
-export const customerChange = customerFields.partial().extend({ version: z.int().positive() });
+/** `archived` archives and restores: the same record, out of the lists or back in them. */
+export const customerChange = customerFields
+  .partial()
+  .extend({ version: z.int().positive(), archived: z.boolean().optional() });
 
 export const customerRecord = z.object({
   id: z.uuid(),

@@ -21,8 +21,8 @@ function record(actor: Actor, row: Row): CustomerRecord {
 }
 
 export async function findCustomers(actor: Actor, query: CustomerListQuery): Promise<ListPage<CustomerRow>> {
-  authorise(actor, "customers.read");
-  const page = await withShop(actor, (tx) => listCustomers(tx, actor.shopId, query));
+  const reach = authorise(actor, "customers.read");
+  const page = await withShop(actor, (tx) => listCustomers(tx, actor.shopId, query, reach));
   return {
     next: page.next,
     items: page.items.map((row) => ({
@@ -57,23 +57,14 @@ export async function changeCustomer(
   change: CustomerChange,
 ): Promise<CustomerRecord> {
   authorise(actor, "customers.change");
-  return write(actor, id, change);
-}
-
-export async function archiveCustomer(
-  actor: Actor,
-  id: string,
-  { version, archived }: { version: number; archived: boolean },
-): Promise<CustomerRecord> {
-  authorise(actor, "customers.change");
-  return write(actor, id, { version, archivedAt: archived ? new Date() : null });
-}
-
-function write(actor: Actor, id: string, change: CustomerChange & { archivedAt?: Date | null }) {
   return withShop(actor, async (tx) => {
     const row = await updateCustomer(tx, actor.shopId, id, change);
     if (row) return record(actor, row);
     const current = await customerById(tx, actor.shopId, id);
     throw current ? stale("customer", record(actor, current)) : notFound("customer");
   });
+}
+
+export function archiveCustomer(actor: Actor, id: string, version: number): Promise<CustomerRecord> {
+  return changeCustomer(actor, id, { version, archived: true });
 }

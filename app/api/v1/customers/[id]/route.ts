@@ -31,6 +31,5 @@ export const DELETE = defineRoute({
   query: versionQuery,
   response: customerRecord,
   problems: ["stale"],
-  handle: ({ actor, params, query }) =>
-    archiveCustomer(actor, params.id, { version: query.version, archived: true }),
+  handle: ({ actor, params, query }) => archiveCustomer(actor, params.id, query.version),
 });

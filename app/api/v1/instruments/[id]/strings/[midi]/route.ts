@@ -1,0 +1,22 @@
+import { defineRoute } from "@/lib/doors/define-route";
+import { stringInput, stringParams, stringRecord } from "@/lib/instruments/schema";
+import { removeString, saveString } from "@/lib/instruments/strings/service";
+
+export const PUT = defineRoute({
+  method: "PUT",
+  permission: "instruments.change",
+  summary: "Save the strings of one note",
+  params: stringParams,
+  body: stringInput,
+  response: stringRecord,
+  handle: ({ actor, params, body }) => saveString(actor, params.id, params.midi, body),
+});
+
+export const DELETE = defineRoute({
+  method: "DELETE",
+  permission: "instruments.change",
+  summary: "Remove the strings of one note",
+  params: stringParams,
+  status: 204,
+  handle: ({ actor, params }) => removeString(actor, params.id, params.midi),
+});

@@ -1,0 +1,1 @@
+export const searchKeys = { find: (q: string) => ["search", q] as const };
