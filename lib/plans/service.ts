@@ -14,8 +14,8 @@ import { authorise } from "@/lib/auth/authorise";
 import { AppError, invalid, notFound } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import { analyse } from "./analysis";
+import { chosenStyle } from "./chosen-style";
 import type { AnalysisQuery, AnalysisRecord, PlanInput, PlanRecord, PlanRow } from "./schema";
-import { chosenStyle } from "./styles";
 
 type Choices = Pick<PlanInput, "style" | "temperament" | "referenceHz">;
 

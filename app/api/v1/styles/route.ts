@@ -1,6 +1,6 @@
 import { defineRoute } from "@/lib/doors/define-route";
 import { newStyle, styleList, styleRecord } from "@/lib/plans/schema";
-import { createStyle, getStyles } from "@/lib/plans/styles-service";
+import { createStyle, getStyles } from "@/lib/plans/styles/service";
 
 export const GET = defineRoute({
   method: "GET",

@@ -1,7 +1,7 @@
 import { defineRoute } from "@/lib/doors/define-route";
 import { idParams } from "@/lib/doors/params";
 import { styleChange, styleRecord } from "@/lib/plans/schema";
-import { changeStyle } from "@/lib/plans/styles-service";
+import { changeStyle } from "@/lib/plans/styles/service";
 
 export const PATCH = defineRoute({
   method: "PATCH",

@@ -1,7 +1,7 @@
 import { defineRoute } from "@/lib/doors/define-route";
 import { idParams } from "@/lib/doors/params";
-import { compareQuery, comparisonRecord } from "@/lib/plans/compare-schema";
-import { compareSheets } from "@/lib/plans/compare-service";
+import { compareQuery, comparisonRecord } from "@/lib/plans/compare/schema";
+import { compareSheets } from "@/lib/plans/compare/service";
 
 export const GET = defineRoute({
   method: "GET",

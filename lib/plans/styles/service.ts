@@ -8,8 +8,8 @@ import { authorise } from "@/lib/auth/authorise";
 import { isUniqueViolation } from "@/lib/database-errors";
 import { AppError, invalid, notFound, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
-import { builtInWords } from "./rules";
-import type { NewStyle, StyleChange, StyleList, StyleRecord } from "./schema";
+import { builtInWords } from "../rules";
+import type { NewStyle, StyleChange, StyleList, StyleRecord } from "../schema";
 
 type Row = NonNullable<Awaited<ReturnType<typeof styleById>>>;
 

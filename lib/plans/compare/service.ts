@@ -6,7 +6,7 @@ import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import { invalid, notFound } from "@/lib/errors";
 import { fitInputOf, pitchOf } from "@/lib/readings/rules";
-import type { ComparisonRecord } from "./compare-schema";
+import type { ComparisonRecord } from "./schema";
 
 /** Two sheets of one instrument, the earlier against the later. */
 export async function compareSheets(

@@ -1,0 +1,39 @@
+import type { RouteMap } from "@/lib/doors/openapi";
+import * as customer from "./customers/[id]/route";
+import * as customers from "./customers/route";
+import * as instrumentAdvice from "./instruments/[id]/advice/route";
+import * as instrumentCompare from "./instruments/[id]/compare/route";
+import * as instrumentSheets from "./instruments/[id]/sheets/route";
+import * as planExport from "./plans/[id]/export/route";
+import * as plan from "./plans/[id]/route";
+import * as sheetAnalysis from "./sheets/[id]/analysis/route";
+import * as sheetExport from "./sheets/[id]/export/route";
+import * as sheetNote from "./sheets/[id]/notes/[midi]/route";
+import * as sheetNotes from "./sheets/[id]/notes/route";
+import * as sheetPlans from "./sheets/[id]/plans/route";
+import * as sheet from "./sheets/[id]/route";
+import * as site from "./sites/[id]/route";
+import * as sites from "./sites/route";
+import * as style from "./styles/[id]/route";
+import * as styles from "./styles/route";
+
+/** Every route of the API, for its description. The architecture test holds this against the folder. */
+export const routes: RouteMap = {
+  "/customers": customers,
+  "/customers/{id}": customer,
+  "/instruments/{id}/advice": instrumentAdvice,
+  "/instruments/{id}/compare": instrumentCompare,
+  "/instruments/{id}/sheets": instrumentSheets,
+  "/plans/{id}": plan,
+  "/plans/{id}/export": planExport,
+  "/sheets/{id}": sheet,
+  "/sheets/{id}/analysis": sheetAnalysis,
+  "/sheets/{id}/export": sheetExport,
+  "/sheets/{id}/notes": sheetNotes,
+  "/sheets/{id}/notes/{midi}": sheetNote,
+  "/sheets/{id}/plans": sheetPlans,
+  "/sites": sites,
+  "/sites/{id}": site,
+  "/styles": styles,
+  "/styles/{id}": style,
+};
