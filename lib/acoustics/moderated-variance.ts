@@ -34,7 +34,9 @@ export function digamma(x: number): number {
     z += 1;
   }
   const square = 1 / (z * z);
-  return shift + Math.log(z) - 0.5 / z - square * (1 / 12 - square * (1 / 120 - square / 252));
+  return (
+    shift + Math.log(z) - 0.5 / z - square * (1 / 12 - square * (1 / 120 - square * (1 / 252 - square / 240)))
+  );
 }
 
 /** ψ′(x), x > 0 (Abramowitz & Stegun 6.4.12). */
@@ -47,7 +49,12 @@ export function trigamma(x: number): number {
   }
   const inverse = 1 / z;
   const square = inverse * inverse;
-  return shift + inverse + square / 2 + inverse * square * (1 / 6 - square * (1 / 30 - square / 42));
+  return (
+    shift +
+    inverse +
+    square / 2 +
+    inverse * square * (1 / 6 - square * (1 / 30 - square * (1 / 42 - square / 30)))
+  );
 }
 
 /** x with ψ′(x) = y, by bisection on ln x: ψ′ falls from ∞ to 0. */
