@@ -1,0 +1,336 @@
+import { and, asc, eq, inArray, isNull, ne, type SQL, sql } from "drizzle-orm";
+import type { Handle } from "@/db/client";
+import {
+  customer,
+  instrument,
+  instrumentHolding,
+  job,
+  member,
+  noteReading,
+  readingSheet,
+  site,
+  visit,
+  visitEvent,
+  visitTechnician,
+} from "@/db/schema";
+import type { VisitState } from "@/lib/visits/rules";
+import type { VisitListQuery } from "@/lib/visits/schema";
+import { type Order, orderBy, paged, pageStart } from "./keyset";
+
+/** "2026-05-14T09:00": the wall time without what a timestamp's text has too much. */
+function wall(column: typeof visit.startsLocal | typeof visit.endsLocal) {
+  return sql<string>`to_char(${column}, 'YYYY-MM-DD"T"HH24:MI')`;
+}
+
+const time = {
+  startsLocal: wall(visit.startsLocal),
+  endsLocal: wall(visit.endsLocal),
+  startsFold: visit.startsFold,
+  endsFold: visit.endsFold,
+  timeZone: visit.timeZone,
+};
+
+const summary = {
+  id: visit.id,
+  state: visit.state,
+  ...time,
+  siteId: visit.siteId,
+  siteName: site.name,
+  street: site.street,
+  city: site.city,
+  accessNotes: site.accessNotes,
+  customerName: customer.name,
+  version: visit.version,
+};
+
+type Filter = Partial<Pick<VisitListQuery, "technicianId" | "siteId" | "customerId" | "instrumentId">> & {
+  states?: readonly VisitState[] | undefined;
+  from?: string | undefined;
+  /** The first day no longer in it. */
+  before?: string | undefined;
+};
+
+function chosen(shopId: string, filter: Filter): SQL | undefined {
+  return and(
+    eq(visit.shopId, shopId),
+    filter.states ? inArray(visit.state, [...filter.states]) : undefined,
+    filter.from ? sql`${visit.startsLocal} >= ${filter.from}::date` : undefined,
+    filter.before ? sql`${visit.startsLocal} < ${filter.before}::date` : undefined,
+    filter.siteId ? eq(visit.siteId, filter.siteId) : undefined,
+    filter.customerId ? eq(site.customerId, filter.customerId) : undefined,
+    filter.technicianId
+      ? sql`exists (select 1 from visit_technician t where t.shop_id = ${shopId}
+          and t.visit_id = visit.id and t.member_id = ${filter.technicianId})`
+      : undefined,
+    filter.instrumentId
+      ? sql`exists (select 1 from job j where j.shop_id = ${shopId}
+          and j.visit_id = visit.id and j.instrument_id = ${filter.instrumentId})`
+      : undefined,
+  );
+}
+
+function summaries(db: Handle) {
+  return db
+    .select({ ...summary, orderKey: sql<string>`(${visit.startsLocal})::text` })
+    .from(visit)
+    .innerJoin(site, and(eq(site.shopId, visit.shopId), eq(site.id, visit.siteId)))
+    .innerJoin(customer, and(eq(customer.shopId, site.shopId), eq(customer.id, site.customerId)))
+    .$dynamic();
+}
+
+export async function listVisits(db: Handle, shopId: string, query: VisitListQuery) {
+  const order: Order = {
+    by: sql`${visit.startsLocal}`,
+    direction: query.direction,
+    id: sql`${visit.id}`,
+  };
+  const rows = await summaries(db)
+    .where(
+      and(
+        chosen(shopId, {
+          ...query,
+          states: query.state ? [query.state] : undefined,
+          before: query.to ? nextDay(query.to) : undefined,
+        }),
+        pageStart(order, query, "timestamp"),
+      ),
+    )
+    .orderBy(orderBy(order))
+    .limit(query.most + 1);
+  return paged(rows, query);
+}
+
+function nextDay(day: string): string {
+  return new Date(Date.parse(`${day}T00:00:00Z`) + 86_400_000).toISOString().slice(0, 10);
+}
+
+/** Visits that begin on these days, in order of time. */
+export async function visitsBetween(
+  db: Handle,
+  shopId: string,
+  filter: Filter & { most: number; latestFirst?: boolean },
+) {
+  const direction = filter.latestFirst ? "desc" : "asc";
+  return summaries(db)
+    .where(chosen(shopId, filter))
+    .orderBy(orderBy({ by: sql`${visit.startsLocal}`, direction, id: sql`${visit.id}` }))
+    .limit(filter.most);
+}
+
+export async function visitById(db: Handle, shopId: string, id: string) {
+  const [row] = await db
+    .select({
+      ...summary,
+      postalCode: site.postalCode,
+      customerId: customer.id,
+      customerPhone: customer.phone,
+      notes: visit.notes,
+      movedToId: visit.movedToId,
+      movedFromId: sql<string | null>`(select p.id from visit p where p.shop_id = ${shopId}
+        and p.site_id = visit.site_id and p.moved_to_id = visit.id limit 1)`,
+      updatedAt: visit.updatedAt,
+    })
+    .from(visit)
+    .innerJoin(site, and(eq(site.shopId, visit.shopId), eq(site.id, visit.siteId)))
+    .innerJoin(customer, and(eq(customer.shopId, site.shopId), eq(customer.id, site.customerId)))
+    .where(and(eq(visit.shopId, shopId), eq(visit.id, id)));
+  return row;
+}
+
+/** By visit. Through a definer function, so that a customer's session learns who comes, and no more. */
+export async function techniciansOf(db: Handle, visitIds: readonly string[]) {
+  const byVisit = new Map<string, { id: string; name: string }[]>();
+  if (visitIds.length === 0) return byVisit;
+  const rows = await db.execute<{ visitId: string; id: string; name: string }>(sql`
+    select visit_id as "visitId", member_id as id, name from technicians_of(array[${sql.join(
+      visitIds.map((id) => sql`${id}`),
+      sql`, `,
+    )}]::uuid[])`);
+  for (const { visitId, ...technician } of rows) {
+    byVisit.set(visitId, [...(byVisit.get(visitId) ?? []), technician]);
+  }
+  return byVisit;
+}
+
+/** Jobs of several visits, in their order. A customer's session gets those on its own instruments. */
+export async function jobsOf(db: Handle, shopId: string, visitIds: readonly string[]) {
+  if (visitIds.length === 0) return [];
+  return db
+    .select({
+      id: job.id,
+      visitId: job.visitId,
+      instrumentId: job.instrumentId,
+      maker: instrument.maker,
+      model: instrument.model,
+      room: instrument.room,
+      work: job.work,
+      remarks: job.remarks,
+      version: job.version,
+    })
+    .from(job)
+    .innerJoin(instrument, and(eq(instrument.shopId, job.shopId), eq(instrument.id, job.instrumentId)))
+    .where(and(eq(job.shopId, shopId), inArray(job.visitId, [...visitIds])))
+    .orderBy(asc(job.position), asc(job.id));
+}
+
+export async function sheetsOfJobs(db: Handle, shopId: string, jobIds: readonly string[]) {
+  if (jobIds.length === 0) return [];
+  return db
+    .select({
+      id: readingSheet.id,
+      jobId: readingSheet.jobId,
+      stage: readingSheet.stage,
+      takenAt: readingSheet.takenAt,
+      notes: sql<number>`count(distinct ${noteReading.midi})::int`,
+    })
+    .from(readingSheet)
+    .leftJoin(
+      noteReading,
+      and(eq(noteReading.shopId, readingSheet.shopId), eq(noteReading.sheetId, readingSheet.id)),
+    )
+    .where(
+      and(
+        eq(readingSheet.shopId, shopId),
+        inArray(readingSheet.jobId, [...jobIds]),
+        isNull(readingSheet.archivedAt),
+      ),
+    )
+    .groupBy(readingSheet.shopId, readingSheet.id)
+    .orderBy(asc(readingSheet.takenAt), asc(readingSheet.id));
+}
+
+export async function eventsOf(db: Handle, shopId: string, visitId: string) {
+  return db
+    .select({
+      from: visitEvent.fromState,
+      to: visitEvent.toState,
+      at: visitEvent.at,
+      by: member.name,
+      reason: visitEvent.reason,
+    })
+    .from(visitEvent)
+    .leftJoin(member, and(eq(member.shopId, visitEvent.shopId), eq(member.id, visitEvent.byMemberId)))
+    .where(and(eq(visitEvent.shopId, shopId), eq(visitEvent.visitId, visitId)))
+    .orderBy(asc(visitEvent.at), asc(visitEvent.id));
+}
+
+/** The live visit in the way of these technicians at this time, the earliest first. */
+export async function overlapping(
+  db: Handle,
+  shopId: string,
+  {
+    technicianIds,
+    start,
+    end,
+    exceptId,
+  }: {
+    technicianIds: readonly string[];
+    start: string;
+    end: string;
+    exceptId: string;
+  },
+) {
+  const [row] = await db
+    .select({
+      visitId: visit.id,
+      siteName: site.name,
+      ...time,
+      technicianId: member.id,
+      technicianName: member.name,
+    })
+    .from(visitTechnician)
+    .innerJoin(visit, and(eq(visit.shopId, visitTechnician.shopId), eq(visit.id, visitTechnician.visitId)))
+    .innerJoin(site, and(eq(site.shopId, visit.shopId), eq(site.id, visit.siteId)))
+    .innerJoin(
+      member,
+      and(eq(member.shopId, visitTechnician.shopId), eq(member.id, visitTechnician.memberId)),
+    )
+    .where(
+      and(
+        eq(visitTechnician.shopId, shopId),
+        eq(visitTechnician.live, true),
+        inArray(visitTechnician.memberId, [...technicianIds]),
+        ne(visitTechnician.visitId, exceptId),
+        sql`${visitTechnician.during} && tstzrange(${start}, ${end}, '[)')`,
+      ),
+    )
+    .orderBy(asc(visit.startsLocal), asc(visit.id))
+    .limit(1);
+  return row;
+}
+
+/** When these technicians are taken on one day of a zone, in minutes of its wall clock. */
+export async function busyOn(
+  db: Handle,
+  shopId: string,
+  {
+    technicianIds,
+    day,
+    timeZone,
+    exceptId,
+  }: {
+    technicianIds: readonly string[];
+    day: string;
+    timeZone: string;
+    exceptId: string;
+  },
+) {
+  const midnight = sql`${day}::date::timestamp`;
+  const minutes = (edge: "lower" | "upper") =>
+    sql<number>`(extract(epoch from (${sql.raw(edge)}(${visitTechnician.during}) at time zone ${timeZone}) - ${midnight}) / 60)::int`;
+  return db
+    .select({ start: minutes("lower"), end: minutes("upper") })
+    .from(visitTechnician)
+    .where(
+      and(
+        eq(visitTechnician.shopId, shopId),
+        eq(visitTechnician.live, true),
+        inArray(visitTechnician.memberId, [...technicianIds]),
+        ne(visitTechnician.visitId, exceptId),
+        sql`${visitTechnician.during} && tstzrange(${midnight} at time zone ${timeZone},
+          (${midnight} + interval '1 day') at time zone ${timeZone}, '[)')`,
+      ),
+    );
+}
+
+export async function siteForVisit(db: Handle, shopId: string, siteId: string) {
+  const [row] = await db
+    .select({ id: site.id, name: site.name, timeZone: site.timeZone, archivedAt: site.archivedAt })
+    .from(site)
+    .where(and(eq(site.shopId, shopId), eq(site.id, siteId)));
+  return row;
+}
+
+/** The instruments that stand at a site today. */
+export async function instrumentsAt(db: Handle, shopId: string, siteId: string) {
+  return db
+    .select({
+      id: instrument.id,
+      maker: instrument.maker,
+      model: instrument.model,
+      serial: instrument.serial,
+      room: instrument.room,
+    })
+    .from(instrumentHolding)
+    .innerJoin(
+      instrument,
+      and(eq(instrument.shopId, instrumentHolding.shopId), eq(instrument.id, instrumentHolding.instrumentId)),
+    )
+    .where(
+      and(
+        eq(instrumentHolding.shopId, shopId),
+        eq(instrumentHolding.siteId, siteId),
+        isNull(instrumentHolding.until),
+        isNull(instrument.archivedAt),
+      ),
+    )
+    .orderBy(asc(instrument.room), asc(instrument.maker), asc(instrument.id));
+}
+
+export async function bookableMembers(db: Handle, shopId: string) {
+  return db
+    .select({ id: member.id, name: member.name })
+    .from(member)
+    .where(and(eq(member.shopId, shopId), eq(member.bookable, true), isNull(member.endedAt)))
+    .orderBy(asc(member.name), asc(member.id));
+}
