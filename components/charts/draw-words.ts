@@ -1,4 +1,3 @@
-import { SHARP_PATH } from "./note-name";
 import { SHARP } from "./note-spelling";
 
 export type WordsStyle = {
@@ -10,6 +9,8 @@ export type WordsStyle = {
   halo?: string;
 };
 
+/** Outline of a sharp in a box of 10 by 16. */
+const SHARP_PATH = "M3 1.5v14M7 .5v14M.8 6l8.4-2M.8 12l8.4-2";
 const SIZE = 12;
 const SHARP_WIDTH = 0.5 * SIZE + 0.5;
 

@@ -65,7 +65,7 @@ export function NumbersTable({ id, title, table, cursor = null, onCursor }: Tabl
   return (
     <div ref={box} id={id} className="mt-4">
       <div className="flex items-center gap-3">
-        <h3 className="font-semibold">{title}</h3>
+        <h3>{title}</h3>
         <CopyButton table={table} />
       </div>
       <section
@@ -102,7 +102,7 @@ export function NumbersTable({ id, title, table, cursor = null, onCursor }: Tabl
                 data-midi={row.midi}
                 aria-current={row.midi === cursor ? "true" : undefined}
                 onClick={onCursor && (() => onCursor(row.midi))}
-                className="border-hairline border-b aria-[current]:bg-brass-wash"
+                className="border-hairline border-b transition-none aria-[current]:bg-brass-wash"
               >
                 <th scope="row" className="h-9 pl-3 text-left font-normal font-serif text-16">
                   <NoteName midi={row.midi} />

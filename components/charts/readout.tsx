@@ -1,5 +1,6 @@
 import type { ReactNode } from "react";
-import { MINUS } from "./format";
+import { PowerOfTen } from "@/components/ui/glyphs";
+import { Kbd } from "@/components/ui/kbd";
 import { NoteName } from "./note-name";
 
 /**
@@ -74,15 +75,11 @@ export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
   );
 }
 
-/** "B × 10⁻⁴" with a raised exponent: the shipped faces lack the superscript minus. */
+/** "B × 10⁻⁴", with a raised exponent. */
 export function TimesTenTo({ exponent, of = "B" }: { exponent: number; of?: string }) {
   return (
     <>
-      {of} × 10
-      <sup className="text-[.8em] leading-none">
-        {exponent < 0 && MINUS}
-        {Math.abs(exponent)}
-      </sup>
+      {of} <PowerOfTen exponent={exponent} />
     </>
   );
 }
@@ -92,22 +89,22 @@ const ARROWS = {
   right: "M2 7h9M7.5 3.2L11.5 7l-4 3.8",
 } as const;
 
-/** The usual hint: arrow keys move, Enter opens. */
+/** The usual hint: arrow keys move, Enter does what the page says. */
 export function CursorHint({ enter }: { enter?: string }) {
-  const box = "inline-flex h-[18px] items-center rounded-sm border border-edge bg-sheet px-1.5 font-medium";
   return (
     <>
       {(["left", "right"] as const).map((way) => (
-        <kbd key={way} className={`${box} font-sans`}>
-          <svg width={10} height={10} viewBox="0 0 14 14" role="img" aria-label={`${way} arrow`}>
+        <Kbd key={way}>
+          <svg width={10} height={16} viewBox="0 0 14 14" role="img" aria-label={`${way} arrow`}>
             <path d={ARROWS[way]} fill="none" stroke="currentColor" strokeWidth={1.5} />
           </svg>
-        </kbd>
+        </Kbd>
       ))}
       move
       {enter && (
         <>
-          <kbd className={`${box} ml-2 font-sans`}>Enter</kbd>
+          <span className="w-1" />
+          <Kbd>Enter</Kbd>
           {enter}
         </>
       )}

@@ -1,6 +1,7 @@
 "use client";
 
 import { useEffect, useState } from "react";
+import { flushSync } from "react-dom";
 
 /** Colours of the plots, by the names of the page's CSS variables: a canvas cannot read variables itself. */
 const NAMES = [
@@ -50,6 +51,10 @@ export function usePlotColours(): PlotColours {
     const update = () => setColours(readColours());
     const dark = matchMedia("(prefers-color-scheme: dark)");
     dark.addEventListener("change", update);
+    // Printing takes its picture at once: the light colours must be drawn before it goes on.
+    const print = matchMedia("print");
+    const forPrint = () => flushSync(update);
+    print.addEventListener("change", forPrint);
     const observer = new MutationObserver(update);
     observer.observe(document.documentElement, { attributeFilter: ["data-theme", "class", "style"] });
     let mounted = true;
@@ -59,6 +64,7 @@ export function usePlotColours(): PlotColours {
     return () => {
       mounted = false;
       dark.removeEventListener("change", update);
+      print.removeEventListener("change", forPrint);
       observer.disconnect();
     };
   }, []);
