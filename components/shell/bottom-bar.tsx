@@ -79,7 +79,7 @@ export function BottomBar({
                 aria-current={item.href === chosen ? "page" : undefined}
                 onClick={() => setOpen(false)}
                 className={cx(
-                  "flex h-13 items-center px-3 text-16",
+                  "-mx-4 flex h-13 items-center px-4 text-16",
                   item.href === chosen &&
                     "bg-brass-wash font-semibold shadow-[inset_3px_0_0_var(--brass-fill)]",
                 )}

@@ -111,7 +111,7 @@ export function WorkHead({
   return (
     <div
       className={cx(
-        "mt-5 mb-3 flex items-center justify-between gap-x-4 gap-y-3 max-lg:flex-wrap",
+        "mt-3.5 mb-3 flex items-center justify-between gap-x-4 gap-y-3 max-lg:flex-wrap",
         className,
       )}
     >

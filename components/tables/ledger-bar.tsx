@@ -1,9 +1,10 @@
 "use client";
 
-import { useEffect, useId, useRef, useState } from "react";
+import { useEffect, useRef, useState } from "react";
 import { Checkbox } from "../forms/checkbox";
 import { Button } from "../ui/button";
 import { SelectChip } from "../ui/chip";
+import { Popover } from "../ui/popover";
 import { Sign } from "../ui/sign";
 import type { LedgerAddress } from "./ledger-address";
 import type { LedgerColumn, LedgerFilter, LedgerRow } from "./ledger-types";
@@ -140,39 +141,23 @@ function ColumnChoice<Row extends LedgerRow>({
   chosen: readonly string[];
   onChange: (chosen: string[]) => void;
 }) {
-  const id = useId();
   return (
-    <span className="relative">
-      <button
-        type="button"
-        popoverTarget={id}
-        className="inline-flex h-7 items-center gap-1.5 rounded px-2 text-12 font-semibold text-iron hover:bg-iron-wash touch:h-11 touch:text-14"
-      >
-        Columns
-        <Sign name="chevron-down" size={10} />
-      </button>
-      <fieldset
-        id={id}
-        popover="auto"
-        className="m-auto w-64 rounded bg-sheet px-4 py-3 text-ink shadow-float [&::backdrop]:bg-transparent"
-      >
-        <legend className="serif float-left mb-1 w-full text-19">Columns</legend>
-        {columns.map((column) => {
-          const on = chosen.includes(column.id);
-          return (
-            <Checkbox
-              key={column.id}
-              label={column.header}
-              checked={on}
-              // The title carries the row's link, so it always stays.
-              disabled={column.phone === "title"}
-              onChange={() =>
-                onChange(on ? chosen.filter((other) => other !== column.id) : [...chosen, column.id])
-              }
-            />
-          );
-        })}
-      </fieldset>
-    </span>
+    <Popover label="Columns" title="Columns">
+      {columns.map((column) => {
+        const on = chosen.includes(column.id) || column.phone === "title";
+        return (
+          <Checkbox
+            key={column.id}
+            label={column.header}
+            checked={on}
+            // The title carries the row's link, so it always stays.
+            disabled={column.phone === "title"}
+            onChange={() =>
+              onChange(on ? chosen.filter((other) => other !== column.id) : [...chosen, column.id])
+            }
+          />
+        );
+      })}
+    </Popover>
   );
 }

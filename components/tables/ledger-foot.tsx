@@ -2,16 +2,18 @@
 
 import { type ReactNode, useState } from "react";
 import { Button } from "../ui/button";
+import { cx } from "../ui/class-names";
 import { Kbd } from "../ui/kbd";
 import { showMessage } from "../ui/message-queue";
 import { StateWord } from "../ui/state-word";
 import type { LedgerBulkAction, LedgerRow } from "./ledger-types";
 
-/** Under the rows, staying in sight: what is chosen and what can be done with it, how far the list goes. */
+/** Under the rows: how far the list goes; while rows are chosen it stays in sight with what can be done with them. */
 export function LedgerFoot<Row extends LedgerRow>({
   shown,
   total,
   hasMore,
+  waiting,
   loadingMore,
   moreFailed,
   onMore,
@@ -23,6 +25,8 @@ export function LedgerFoot<Row extends LedgerRow>({
   shown: number;
   total: number | undefined;
   hasMore: boolean;
+  /** The rows still belong to the question before; they are shown until the answer comes. */
+  waiting: boolean;
   loadingMore: boolean;
   moreFailed: boolean;
   onMore: () => void;
@@ -51,7 +55,10 @@ export function LedgerFoot<Row extends LedgerRow>({
 
   return (
     <div
-      className="sticky bottom-[calc(var(--bar)+var(--strip))] z-10 -mt-px flex min-h-14 flex-wrap items-center gap-x-4 gap-y-2 border-t border-edge bg-sheet py-2 print:static"
+      className={cx(
+        "-mt-px flex min-h-14 phone:-mx-4 phone:px-4 flex-wrap items-center gap-x-4 gap-y-2 border-t border-edge bg-sheet py-2",
+        chosen.length > 0 && "sticky bottom-[calc(var(--bar)+var(--strip))] z-10",
+      )}
       data-no-print
     >
       {chosen.length > 0 ? (
@@ -86,12 +93,11 @@ export function LedgerFoot<Row extends LedgerRow>({
           ) : null}
         </>
       ) : null}
-      <span className="lab ml-auto flex items-center gap-x-3" aria-live="polite">
-        {total === undefined
-          ? `${shown} shown`
-          : total === shown
-            ? `${shown} in all`
-            : `1–${shown} of ${total}`}
+      <span
+        className={cx("lab ml-auto flex items-center gap-x-3", chosen.length > 0 && "max-sm:hidden")}
+        aria-live="polite"
+      >
+        {waiting ? "Loading" : extent(shown, total)}
         <span className="flex items-center gap-1 touch:hidden" aria-hidden="true">
           <Kbd>J</Kbd> <Kbd>K</Kbd> move
         </span>
@@ -103,4 +109,9 @@ export function LedgerFoot<Row extends LedgerRow>({
       </span>
     </div>
   );
+}
+
+function extent(shown: number, total: number | undefined): string {
+  if (total === undefined) return `${shown} shown`;
+  return total === shown ? `${shown} in all` : `1–${shown} of ${total}`;
 }

@@ -25,7 +25,7 @@ const from = { sm: "max-sm:hidden", lg: "max-lg:hidden", xl: "max-xl:hidden" } a
 
 /** On the phone a row is two lines: title and aside, then the other cells in a run, the last one at the end. */
 const phonePlace = {
-  title: "phone:order-1 phone:flex-1 phone:basis-0 phone:text-16 phone:font-semibold",
+  title: "phone:order-1 phone:flex-1 phone:basis-0 phone:min-w-0 phone:text-16",
   aside: "phone:order-2 phone:max-w-1/2",
   line: "phone:order-4 phone:text-ink-soft",
   end: "phone:order-5 phone:ml-auto",
@@ -42,7 +42,6 @@ export function LedgerTable<Row extends LedgerRow>({
   selection,
   onChoose,
   onChooseAll,
-  waiting,
 }: {
   table: ReactTable<Features, Row, unknown>;
   label: string;
@@ -53,8 +52,6 @@ export function LedgerTable<Row extends LedgerRow>({
   selection: RowSelectionState;
   onChoose: (id: string) => void;
   onChooseAll: (on: boolean) => void;
-  /** The rows still belong to the question before; they are shown until the answer comes. */
-  waiting: boolean;
 }) {
   const allId = useId();
   const rows = table.getRowModel().rows;
@@ -63,34 +60,22 @@ export function LedgerTable<Row extends LedgerRow>({
   const keys = useRowKeys({ ids, onChoose: selectable ? onChoose : null });
   const visible = table.getVisibleLeafColumns();
   const total = visible.reduce((sum, column) => sum + (byId.get(column.id)?.width ?? 1), 0);
+  const titleId = (columns.find((column) => column.phone === "title") ?? columns[0])?.id;
   const chosenCount = ids.filter((id) => selection[id]).length;
 
   return (
     <table
       role="table"
       aria-label={label}
-      className={cx(
-        "w-full table-fixed border-separate border-spacing-0 phone:block",
-        waiting && "opacity-60",
-      )}
+      className="w-full table-fixed border-separate border-spacing-0 phone:block"
     >
-      <colgroup>
-        {selectable ? <col className="w-9" /> : null}
-        {visible.map((column) => {
-          const own = byId.get(column.id);
-          return (
-            <col
-              key={column.id}
-              className={own?.from && from[own.from]}
-              style={{ width: `${((own?.width ?? 1) / total) * 100}%` }}
-            />
-          );
-        })}
-      </colgroup>
       <thead role="rowgroup" className="phone:sr-only">
         <tr role="row">
           {selectable ? (
-            <th role="columnheader" className="sticky top-0 z-10 border-b border-edge bg-sheet p-0 text-left">
+            <th
+              role="columnheader"
+              className="sticky top-0 z-10 w-9 border-b border-edge bg-sheet p-0 text-left"
+            >
               <label htmlFor={allId} className="flex h-8 items-center pl-2.5 touch:h-11">
                 <CheckMark
                   id={allId}
@@ -112,6 +97,10 @@ export function LedgerTable<Row extends LedgerRow>({
               <th
                 key={header.id}
                 role="columnheader"
+                // The title takes what the others leave, so columns left out on narrow screens leave no hole.
+                style={
+                  column.id === titleId ? undefined : { width: `${((column.width ?? 1) / total) * 100}%` }
+                }
                 aria-sort={column.sortable ? (sorted ?? "none") : undefined}
                 className={cx(
                   "sticky top-0 z-10 h-8 border-b border-edge bg-sheet pr-3 pl-0 text-12 font-medium text-ink-soft last:pr-2",
@@ -226,7 +215,7 @@ function Line<Row extends LedgerRow>({
         >
           <label
             htmlFor={checkId}
-            className="flex h-9 items-center pl-2.5 touch:h-11 phone:h-full phone:w-12 phone:pl-4"
+            className="flex h-[35px] items-center pl-2.5 sm:touch:h-[43px] phone:h-full phone:w-12 phone:pl-4"
           >
             <CheckMark
               id={checkId}
@@ -250,9 +239,9 @@ function Line<Row extends LedgerRow>({
             key={cell.id}
             role={isFirst ? "rowheader" : "cell"}
             className={cx(
-              "h-9 truncate border-b border-hairline pr-3 pl-0 last:pr-2 touch:h-11 phone:h-auto phone:border-0 phone:p-0!",
+              "h-9 border-b border-hairline pr-3 pl-0 last:pr-2 sm:touch:h-11 phone:h-auto phone:border-0 phone:p-0!",
               column.align === "right" && "sm:text-right",
-              isFirst && "font-semibold",
+              isFirst ? "font-semibold" : "truncate",
               column.from && from[column.from],
               phonePlace[place],
               index === 0 && !selectable && cx(bar, "sm:pl-3!"),
@@ -294,7 +283,7 @@ function RowPlace({
     "data-row-focus": "",
     tabIndex: inHand ? 0 : -1,
     onFocus,
-    className: "block truncate rounded-sm -outline-offset-2",
+    className: "-mx-1 block truncate rounded-sm px-1 -outline-offset-1",
   };
   return href ? (
     <AppLink href={href} {...shared}>

@@ -165,12 +165,12 @@ export function Ledger<Row extends LedgerRow>({
           selection={selection}
           onChoose={choose}
           onChooseAll={chooseAll}
-          waiting={result.isPlaceholderData}
         />
         <LedgerFoot
           shown={rows.length}
           total={result.data?.pages[0]?.total}
           hasMore={result.hasNextPage}
+          waiting={result.isPlaceholderData}
           loadingMore={result.isFetchingNextPage}
           moreFailed={result.isFetchNextPageError}
           onMore={() => result.fetchNextPage()}

@@ -67,8 +67,7 @@ function MessageBox({ message }: { message: ShownMessage }) {
       onBlur={() => setHeld(false)}
       onKeyDown={(event) => event.key === "Escape" && close()}
     >
-      <Sign name={signs[kind]} className="mt-2 self-start" />
-      <Words text={text} detail={detail} />
+      <Words kind={kind} text={text} detail={detail} />
       {action && "href" in action ? (
         <AppLink href={action.href} className={buttonLook("quiet")} onClick={close}>
           {action.label}
@@ -98,11 +97,16 @@ function MessageBox({ message }: { message: ShownMessage }) {
   );
 }
 
-function Words({ text, detail }: { text: string; detail?: string }): ReactNode {
+function Words({ kind, text, detail }: { kind: MessageKind; text: string; detail?: string }): ReactNode {
   return (
-    <p className="min-w-0 flex-1 py-1">
-      {detail ? <b className="font-semibold">{text}</b> : text}
-      {detail ? ` ${detail}` : null}
+    <p className="flex min-w-0 flex-1 items-start gap-3 py-1">
+      <span className="flex h-lh items-center">
+        <Sign name={signs[kind]} />
+      </span>
+      <span>
+        {detail ? <b className="font-semibold">{text}</b> : text}
+        {detail ? ` ${detail}` : null}
+      </span>
     </p>
   );
 }

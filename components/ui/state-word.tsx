@@ -47,7 +47,7 @@ export function StateWord({
   return (
     <span
       className={cx(
-        "inline-flex items-start gap-1.5 font-medium",
+        "inline-flex items-start gap-1.5 align-top font-medium",
         !wrap && "whitespace-nowrap",
         colour,
         className,
