@@ -17,10 +17,24 @@ export function byName(column: PgColumn): SQL {
 
 type Key = { value: string; id: string };
 
-function decode(cursor: string): Key {
+type KeyType = "text" | "timestamptz" | "timestamp" | "integer";
+
+const uuidPattern = /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/i;
+
+/** Whether the database can read the value as this type: a made-up cursor is a 422, not a fault of ours. */
+function reads(value: string, type: KeyType): boolean {
+  if (type === "text") return !value.includes("\0");
+  if (type === "integer") return /^-?\d{1,9}$/.test(value);
+  const moment = /^\d{4}-\d{2}-\d{2} \d{2}:\d{2}:\d{2}(\.\d{1,6})?([+-]\d{2}(:\d{2}){0,2})?$/.exec(value);
+  return moment !== null && (moment[2] !== undefined) === (type === "timestamptz");
+}
+
+function decode(cursor: string, type: KeyType): Key {
   try {
     const [value, id] = JSON.parse(Buffer.from(cursor, "base64url").toString("utf8"));
-    if (typeof value === "string" && typeof id === "string") return { value, id };
+    if (typeof value === "string" && typeof id === "string" && uuidPattern.test(id) && reads(value, type)) {
+      return { value, id };
+    }
   } catch {
     // Falls through to the error: a cursor is only ever one of ours.
   }
@@ -30,13 +44,9 @@ function decode(cursor: string): Key {
 }
 
 /** The condition that begins a page, or nothing for the first one. `type` is the expression's SQL type. */
-export function pageStart(
-  order: Order,
-  page: Page,
-  type: "text" | "timestamptz" | "timestamp" | "integer",
-): SQL | undefined {
+export function pageStart(order: Order, page: Page, type: KeyType): SQL | undefined {
   if (!page.cursor) return undefined;
-  const { value, id } = decode(page.cursor);
+  const { value, id } = decode(page.cursor, type);
   const comparison = sql.raw(order.direction === "asc" ? ">" : "<");
   return sql`(${order.by}, ${order.id}) ${comparison} (${value}::${sql.raw(type)}, ${id}::uuid)`;
 }
