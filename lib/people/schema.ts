@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { passwordFault } from "@/lib/auth/passwords";
 import { country, locale, shopName, timeZone } from "@/lib/shop/schema";
 
 export const personName = z
@@ -15,6 +16,11 @@ export const address = z
 const currentPassword = z.string().min(1, "Type your password.").max(1000);
 /** The rules are the server's (lib/auth/passwords.ts): they depend on the person. */
 const newPassword = z.string().min(1, "Choose a password.").max(1000, "Use at most 256 characters.");
+/** For a person without a second step. The server asks once more, knowing names to keep out. */
+const passwordAlone = newPassword.superRefine((password, context) => {
+  const fault = passwordFault(password);
+  if (fault) context.addIssue({ code: "custom", message: fault });
+});
 const next = z.string().max(2000).optional();
 
 export const signInInput = z.object({ email: address, password: currentPassword, stay: z.boolean(), next });
@@ -41,8 +47,9 @@ export const openShopInput = z.object({
 export const signUpInput = openShopInput.extend({
   name: personName,
   email: address,
-  password: newPassword,
+  password: passwordAlone,
 });
+export const signUpForm = signUpInput.extend({ next });
 
 export const resetRequest = z.object({ email: address });
 export const resetInput = z.object({ token: z.string().min(1).max(200), password: newPassword });
@@ -64,7 +71,7 @@ export const invitationId = z.object({ id: z.uuid() });
 export const acceptAsNewInput = z.object({
   token: z.string().min(1).max(200),
   name: personName,
-  password: newPassword,
+  password: passwordAlone,
 });
 export const acceptInput = z.object({ token: z.string().min(1).max(200) });
 

@@ -1,0 +1,32 @@
+import type { Metadata } from "next";
+import { ForgotPasswordForm } from "@/components/people/forgot-password-form";
+import { AuthPage } from "@/components/shell/auth-page";
+import { AppLink } from "@/components/ui/app-link";
+import { env } from "@/lib/env";
+import { mailConfigured } from "@/lib/mail/send";
+import { requestResetAction } from "./actions";
+
+export const metadata: Metadata = { title: "Forgotten password" };
+
+export default function ForgotPasswordPage() {
+  const localMailbox = Boolean(env().LOCAL_SERVICES && env().MAILBOX_URL);
+  return (
+    <AuthPage
+      title="Forgotten password"
+      subtitle="We mail you a link that lets you set a new one."
+      footer={
+        <AppLink href="/sign-in" className="link">
+          Back to sign-in
+        </AppLink>
+      }
+    >
+      <ForgotPasswordForm
+        action={requestResetAction}
+        mailboxHref={localMailbox ? "/mailbox" : null}
+        unavailable={
+          mailConfigured() ? null : "This server sends no mail. Ask whoever runs it to set SMTP_URL."
+        }
+      />
+    </AuthPage>
+  );
+}

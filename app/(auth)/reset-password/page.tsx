@@ -1,0 +1,40 @@
+import type { Metadata } from "next";
+import { ResetPasswordForm } from "@/components/people/reset-password-form";
+import { AuthPage } from "@/components/shell/auth-page";
+import { AppLink } from "@/components/ui/app-link";
+import { LinkButton } from "@/components/ui/button";
+import { ErrorState } from "@/components/ui/states";
+import { resetPasswordAction } from "./actions";
+
+export const metadata: Metadata = { title: "Set a new password" };
+
+/** Opening the link changes nothing: programs that look through mail open links too. The button uses it. */
+export default async function ResetPasswordPage({
+  searchParams,
+}: {
+  searchParams: Promise<Record<string, string | string[] | undefined>>;
+}) {
+  const { token } = await searchParams;
+  return (
+    <AuthPage
+      title="Set a new password"
+      subtitle={typeof token === "string" ? "Every device is signed out when it is set." : undefined}
+      footer={
+        <AppLink href="/sign-in" className="link">
+          Back to sign-in
+        </AppLink>
+      }
+    >
+      {typeof token === "string" && token ? (
+        <ResetPasswordForm action={resetPasswordAction} token={token} />
+      ) : (
+        <ErrorState
+          title="This link is not whole"
+          action={<LinkButton href="/forgot-password">Ask for a new link</LinkButton>}
+        >
+          Copy all of it from the mail, or ask for a new one.
+        </ErrorState>
+      )}
+    </AuthPage>
+  );
+}

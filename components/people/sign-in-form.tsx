@@ -1,0 +1,68 @@
+"use client";
+
+import { ActionForm, SubmitButton } from "@/components/forms/action-form";
+import { Checkbox } from "@/components/forms/checkbox";
+import { PasswordInput, TextInput } from "@/components/forms/text-input";
+import { useActionForm } from "@/components/forms/use-action-form";
+import { AppLink } from "@/components/ui/app-link";
+import { signInInput } from "@/lib/people/schema";
+import { type DemoPeople, DemoSignIns } from "./demo-sign-ins";
+import { type GoingOn, goTo } from "./go-to";
+
+export function SignInForm({
+  action,
+  next,
+  demo,
+}: {
+  action: GoingOn;
+  next: string;
+  demo: DemoPeople | null;
+}) {
+  const state = useActionForm({
+    schema: signInInput,
+    action,
+    defaultValues: { email: "", password: "", stay: true, next },
+    onSuccess: goTo,
+  });
+  return (
+    <>
+      <ActionForm state={state} label="Sign in">
+        <TextInput
+          label="Mail address"
+          type="email"
+          autoComplete="username"
+          autoCapitalize="none"
+          spellCheck={false}
+          {...state.field("email")}
+        />
+        <PasswordInput
+          label="Password"
+          aside={
+            <AppLink href="/forgot-password" className="link">
+              Forgotten?
+            </AppLink>
+          }
+          {...state.field("password")}
+        />
+        <Checkbox
+          label="Stay signed in on this device for 30 days"
+          className="-mt-2"
+          {...state.form.register("stay")}
+        />
+        <SubmitButton state={state} size="big" busyLabel="Signing in">
+          Sign in
+        </SubmitButton>
+      </ActionForm>
+      {demo ? (
+        <DemoSignIns
+          demo={demo}
+          onChoose={(email) => {
+            state.form.setValue("email", email);
+            state.form.setValue("password", demo.password);
+            state.form.clearErrors();
+          }}
+        />
+      ) : null}
+    </>
+  );
+}
