@@ -9,8 +9,14 @@ const key = (message: string) => z.int(message).min(9, message).max(120, message
 
 export const day = z.string().trim().refine(isDay, "Choose a day of the calendar.");
 
+const offset = z
+  .number("Write each offset in cents.")
+  .min(-100, "Between −100 and 100 cents.")
+  .max(100, "Between −100 and 100 cents.");
+
+/** A named temperament, or twelve offsets in cents from equal, C to B. */
 export const temperament = z.union(
-  [z.enum(TEMPERAMENT_NAMES), z.array(z.number().min(-100).max(100)).length(12)],
+  [z.enum(TEMPERAMENT_NAMES), z.array(offset).length(12, "Give twelve offsets, C to B.")],
   "Choose a temperament, or give twelve offsets between −100 and 100 cents.",
 );
 
