@@ -1,4 +1,5 @@
 import { complain, muteSteps } from "./output.mjs";
+import { isAlive, npmAbove } from "./process-identity.mjs";
 import { killEverything, stopEverything } from "./processes.mjs";
 
 const parentPollMs = 1000;
@@ -50,10 +51,10 @@ export function endOnSignals({ codeFor, announce }) {
   for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(signal, () => ask(signal));
 
   // npm passes signals on, but not SIGKILL: without this its death would leave the servers running unseen.
-  if (process.env.npm_lifecycle_event) {
-    const parent = process.ppid;
+  const npm = process.env.npm_lifecycle_event ? npmAbove() : undefined;
+  if (npm) {
     setInterval(() => {
-      if (process.ppid !== parent) ask("parent");
+      if (!isAlive(npm)) ask("parent");
     }, parentPollMs).unref();
   }
 }
