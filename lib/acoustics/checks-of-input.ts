@@ -3,6 +3,8 @@ import { AcousticsError, type FitInput } from "./types";
 /** Most readings one sheet may hold: a hundred partials, some read several times. */
 export const MOST_READINGS = 1000;
 export const HIGHEST_PARTIAL = 128;
+const LOWEST_HZ = 1e-3;
+const HIGHEST_HZ = 1e6;
 const SMALLEST_SIGMA = 1e-4;
 const LARGEST_SIGMA = 1200;
 
@@ -64,8 +66,9 @@ export function checkFitInput(input: FitInput): void {
     if (hz === undefined && cents === undefined) {
       throw new AcousticsError("missing-frequency", "This reading has no frequency.", path);
     }
-    if (hz !== undefined && !isPositive(hz)) {
-      throw new AcousticsError("bad-frequency", "A frequency must be a number above 0 Hz.", `${path}.hz`);
+    if (hz !== undefined && !(isPositive(hz) && hz >= LOWEST_HZ && hz <= HIGHEST_HZ)) {
+      const message = "A frequency must be a number above 0 Hz, and one that sound can have.";
+      throw new AcousticsError("bad-frequency", message, `${path}.hz`);
     }
     if (cents !== undefined) {
       if (!(typeof cents === "number" && Math.abs(cents) <= 12_000)) {

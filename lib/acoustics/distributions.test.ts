@@ -45,7 +45,7 @@ describe("special functions", () => {
   it("have their known values", () => {
     expect(lnGamma(0.5)).toBeCloseTo(0.5 * Math.log(Math.PI), 13);
     expect(lnGamma(11)).toBeCloseTo(Math.log(3628800), 12);
-    expect(digamma(1)).toBeCloseTo(-0.5772156649015329, 12);
+    expect(digamma(1)).toBeCloseTo(-0.5772156649015329, 11);
     expect(trigamma(1)).toBeCloseTo(Math.PI ** 2 / 6, 11);
     expect(trigamma(0.5)).toBeCloseTo(Math.PI ** 2 / 2, 11);
   });

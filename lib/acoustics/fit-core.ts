@@ -155,16 +155,23 @@ export function solve(sheet: Sheet, mask: Uint8Array, startB: number, skip = -1)
   return { c, b, weightSum, slopeMean, information, chi2, used, iterations };
 }
 
+/**
+ * 1 + B·n², kept above 0 for a reading outside the fit whose partial lies where a negative B has no meaning any more:
+ * its distance from the curve is then very large, not undefined.
+ */
+function stiffening(b: number, square: number): number {
+  return Math.max(1 + b * square, 1e-6);
+}
+
 /** Residual of reading `i` in cents from a solution. */
 export function residualAt(sheet: Sheet, i: number, { c, b }: Pick<Solution, "c" | "b">): number {
-  return (
-    (sheet.cents[i] ?? 0) - c - CENTS_PER_LN_SQUARE * Math.log((1 + b * (sheet.squares[i] ?? 0)) / (1 + b))
-  );
+  const square = sheet.squares[i] ?? 0;
+  return (sheet.cents[i] ?? 0) - c - CENTS_PER_LN_SQUARE * Math.log(stiffening(b, square) / (1 + b));
 }
 
 /** Variance of the curve at partial² `square`, in cents² per unit of scale: from C, B and their covariance. */
 export function curveVariance(square: number, solution: Solution): number {
   const { b, weightSum, slopeMean, information } = solution;
-  const g = (CENTS_PER_LN_SQUARE * (square - 1)) / ((1 + b * square) * (1 + b)) - slopeMean;
+  const g = (CENTS_PER_LN_SQUARE * (square - 1)) / (stiffening(b, square) * (1 + b)) - slopeMean;
   return 1 / weightSum + (g * g) / information;
 }

@@ -12,8 +12,9 @@ import { REJECTION_PRIOR_DOF, TYPICAL_LN_B_SIGMA } from "./fit-prior";
 
 /** One clean reading in a thousand is taken for an outlier. */
 export const REJECTION_LEVEL = 1e-3;
-/** χ² so high that outliers may be hiding one another. */
+/** χ² so high that outliers may be hiding one another, when σ is given; and per degree of freedom, when it is assumed. */
 const MASKING_LEVEL = 1e-3;
+const MASKING_SCALE = 9;
 /** χ² by which the best explanation must beat the next one not to be called ambiguous. */
 const CLEAR_LEAD = 2;
 const MOST_ROUNDS = 12;
@@ -71,7 +72,7 @@ export function offCurveRatio(
 export function select(input: SelectionInput): Selection {
   const { sheet, open } = input;
   const whole = solve(sheet, open, regressionStart(sheet, open));
-  if (whole.used < 3 || looksClean(input, open, whole)) {
+  if (whole.used < 3 || (looksClean(input, open, whole) && !mayHide(input, whole))) {
     return { mask: open.slice(), solution: whole, ambiguous: false };
   }
   const stepped = stepwise(input, whole);
@@ -87,6 +88,14 @@ function looksClean(input: SelectionInput, mask: Uint8Array, solution: Solution)
     if (mask[i] === 1 && input.kept[i] !== 1 && offCurveRatio(input, mask, solution, i) > 1) return false;
   }
   return true;
+}
+
+function mayHide({ sheet, assumed, open }: SelectionInput, { chi2, used }: Solution): boolean {
+  const dof = used - 2;
+  for (let i = 0; i < sheet.count; i += 1) {
+    if (open[i] === 1 && assumed[i] === 1) return chi2 > MASKING_SCALE * dof;
+  }
+  return chiSquareUpperTail(chi2, dof) < MASKING_LEVEL;
 }
 
 /**
