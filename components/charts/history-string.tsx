@@ -1,6 +1,15 @@
-import type { ReactNode } from "react";
+"use client";
+
+import { type ReactNode, useRef } from "react";
 import { fixed, signed } from "./format";
-import { type HistoryPlace, historyLimit, historyPlace } from "./history-scale";
+import {
+  type HistoryMeasures,
+  historyLimit,
+  historyMeasures,
+  historyPlace,
+  numberSide,
+} from "./history-scale";
+import { useWidth } from "./use-width";
 
 /** The dated history of an instrument, hung on the string at pitch: newest first. */
 
@@ -15,10 +24,6 @@ export type HistoryEntry = {
   humidityPercent: number | null;
 };
 
-/** Room for the drawing on either side of the string, numbers included. */
-const REACH = 62;
-const NUMBER_ROOM = 44;
-const LANE = 2 * (REACH + NUMBER_ROOM);
 const ROW = 44;
 const LINE = 18;
 
@@ -29,43 +34,74 @@ export function HistoryString({
   entries: readonly HistoryEntry[];
   ground?: string;
 }) {
+  const box = useRef<HTMLDivElement>(null);
+  const measures = historyMeasures(useWidth(box, 332));
   const values = entries
     .flatMap((entry) => [entry.asFoundCents, entry.asLeftCents])
     .filter((v) => v !== null);
   const limit = historyLimit(values);
   return (
-    <div className="relative text-12 text-ink-soft tabular-nums" style={{ minWidth: 288 }}>
-      {/* The string itself: one line behind all rows. Its place is that of the lane's middle. */}
-      <div className="relative h-[18px] border-hairline border-b">
-        <span className="-translate-x-1/2 absolute top-0 leading-4" style={{ right: 118 }}>
-          <span className="absolute right-0 translate-x-1/2 whitespace-nowrap">pitch, cents</span>
+    <div ref={box} className="text-12 text-ink-soft tabular-nums">
+      <div className="relative h-[18px] border-hairline border-b leading-4">
+        <span
+          className="absolute top-0 translate-x-1/2 whitespace-nowrap"
+          style={{ right: measures.stringFromRight }}
+        >
+          pitch, cents
         </span>
-        <span className="absolute top-0 right-0 leading-4">humidity</span>
+        <span className="absolute top-0 right-0">humidity</span>
       </div>
-      <ol className="relative">
-        <li aria-hidden="true" className="absolute inset-y-0 w-px bg-edge" style={{ right: 117.5 }} />
-        {entries.map((entry, index) => (
-          <li
-            key={entry.id}
-            className={`relative ${index > 0 ? "border-hairline border-t" : ""}`}
-            style={{ height: ROW }}
-          >
-            <div className="absolute top-2 left-0 leading-4" style={{ right: 118 + 8 }}>
-              <div className="font-semibold text-ink">{entry.date}</div>
-            </div>
-            <div className="absolute top-6 left-0 max-w-full truncate leading-4" style={{ right: 118 + 6 }}>
-              {entry.work}
-            </div>
-            <HistoryMark entry={entry} limit={limit} ground={ground} />
-            <span className="absolute right-0 leading-4 text-ink" style={{ top: LINE - 8 }}>
-              <span className="sr-only">humidity </span>
-              {entry.humidityPercent === null ? "–" : `${fixed(entry.humidityPercent, 0)} %`}
-            </span>
-          </li>
-        ))}
-      </ol>
+      <div className="relative">
+        <div
+          className="absolute inset-y-0 w-px bg-edge"
+          style={{ right: measures.stringFromRight - 0.5 }}
+          aria-hidden="true"
+        />
+        <ol>
+          {entries.map((entry, index) => (
+            <HistoryRow
+              key={entry.id}
+              entry={entry}
+              first={index === 0}
+              limit={limit}
+              measures={measures}
+              ground={ground}
+            />
+          ))}
+        </ol>
+      </div>
       <HistoryKey />
     </div>
+  );
+}
+
+type RowProps = {
+  entry: HistoryEntry;
+  first: boolean;
+  limit: number;
+  measures: HistoryMeasures;
+  ground: string;
+};
+
+function HistoryRow({ entry, first, limit, measures, ground }: RowProps) {
+  const { stringFromRight, reach } = measures;
+  const farFlat =
+    entry.asFoundCents !== null && historyPlace(entry.asFoundCents, limit, reach).offset <= -reach;
+  return (
+    <li className={`relative leading-4 ${first ? "" : "border-hairline border-t"}`} style={{ height: ROW }}>
+      <div className="absolute top-2.5 left-0 font-semibold text-ink">{entry.date}</div>
+      <div
+        className="absolute top-[26px] left-0 truncate"
+        style={{ right: stringFromRight + (farFlat ? reach + 22 : 6) }}
+      >
+        {entry.work}
+      </div>
+      <HistoryMark entry={entry} limit={limit} measures={measures} ground={ground} />
+      <span className="absolute top-2.5 right-0 text-ink">
+        <span className="sr-only">humidity </span>
+        {entry.humidityPercent === null ? "–" : `${fixed(entry.humidityPercent, 0)} %`}
+      </span>
+    </li>
   );
 }
 
@@ -77,55 +113,69 @@ function words({ asFoundCents, asLeftCents }: HistoryEntry): string {
   return parts.length > 0 ? parts.join(", ") : "pitch not read";
 }
 
-function HistoryMark({ entry, limit, ground }: { entry: HistoryEntry; limit: number; ground: string }) {
-  const middle = LANE / 2;
-  const found = entry.asFoundCents === null ? null : historyPlace(entry.asFoundCents, limit, REACH);
-  const left = entry.asLeftCents === null ? null : historyPlace(entry.asLeftCents, limit, REACH);
-  const from = middle + (left?.offset ?? 0);
+function HistoryMark({ entry, limit, measures, ground }: Omit<RowProps, "first">) {
+  const { reach, stringFromRight } = measures;
+  const found = entry.asFoundCents === null ? null : historyPlace(entry.asFoundCents, limit, reach);
+  const left = entry.asLeftCents === null ? null : historyPlace(entry.asLeftCents, limit, reach);
+  const from = left?.offset ?? 0;
   return (
+    // Zero of the drawing is the string; the words reach out on either side.
     <svg
-      width={LANE}
+      width={1}
       height={ROW}
-      viewBox={`0 0 ${LANE} ${ROW}`}
       role="img"
       aria-label={words(entry)}
       className="pointer-events-none absolute top-0 overflow-visible"
-      style={{ right: 118 - middle, fontSize: 12 }}
+      style={{ right: stringFromRight - 1, fontSize: 12 }}
     >
       {found && entry.asFoundCents !== null && (
-        <Found place={found} from={from} middle={middle} text={signed(entry.asFoundCents, 1)} />
+        <Found offset={found.offset} beyond={found.beyond} from={from} measures={measures}>
+          {signed(entry.asFoundCents, 1)}
+        </Found>
       )}
       {left ? (
         <circle cx={from} cy={LINE} r={4} fill="var(--felt)" />
       ) : (
-        <circle cx={middle} cy={LINE} r={3.5} fill={ground} stroke="var(--ink-soft)" />
+        <circle cx={0} cy={LINE} r={3.5} fill={ground} stroke="var(--ink-soft)" />
       )}
     </svg>
   );
 }
 
-type FoundProps = { place: HistoryPlace; from: number; middle: number; text: string };
+type FoundProps = {
+  offset: number;
+  beyond: boolean;
+  from: number;
+  measures: HistoryMeasures;
+  children: string;
+};
 
-function Found({ place, from, middle, text }: FoundProps) {
-  const x = middle + place.offset;
-  const way = place.offset < 0 ? -1 : 1;
+function Found({ offset, beyond, from, measures, children }: FoundProps) {
+  const way = offset < 0 ? -1 : 1;
+  const side = numberSide(offset, measures);
   return (
     <>
-      <path d={`M${from} ${LINE}H${x}`} stroke="var(--iron)" strokeWidth={1.5} />
-      {place.beyond ? (
-        <path d={`M${x + way * 2} ${LINE}l${-way * 7} -4v8z`} fill="var(--iron)" />
+      <path d={`M${from} ${LINE}H${offset}`} stroke="var(--iron)" strokeWidth={1.5} />
+      {beyond ? (
+        <path d={`M${offset + way * 2} ${LINE}l${-way * 7} -4v8z`} fill="var(--iron)" />
       ) : (
-        <rect x={x - 3.5} y={LINE - 3.5} width={7} height={7} fill="var(--iron)" />
+        <rect x={offset - 3.5} y={LINE - 3.5} width={7} height={7} fill="var(--iron)" />
       )}
-      <text
-        // Off the scale the number goes below the arrow, clear of the date.
-        x={place.beyond ? x : x + way * 8}
-        y={place.beyond ? LINE + 18 : LINE + 4}
-        textAnchor={place.beyond ? "middle" : way < 0 ? "end" : "start"}
-        fill="var(--ink)"
-      >
-        {text}
-      </text>
+      {beyond ? (
+        // Off the scale the number goes below the arrow, clear of date and humidity.
+        <text x={offset} y={LINE + 18} textAnchor="middle" fill="var(--ink)">
+          {children}
+        </text>
+      ) : (
+        <text
+          x={side === way ? offset + side * 8 : side * 10}
+          y={LINE + 4}
+          textAnchor={side < 0 ? "end" : "start"}
+          fill="var(--ink)"
+        >
+          {children}
+        </text>
+      )}
     </>
   );
 }

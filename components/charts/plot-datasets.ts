@@ -17,7 +17,7 @@ const square = (side: number) => (side / 2) * Math.SQRT2;
 /** And a triangle by the radius of the circle around it. */
 const triangle = (base: number) => base / Math.sqrt(3);
 
-export function faded(colour: string, share: number): string {
+function faded(colour: string, share: number): string {
   return color(colour).alpha(share).rgbString() ?? colour;
 }
 

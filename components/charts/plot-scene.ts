@@ -20,9 +20,8 @@ export type Scene = {
   last: boolean;
 };
 
-export const TITLE_LINE = 20;
 /** From the plotting area of the last plot down to the ribbon. */
-export const TO_RIBBON = 12;
+const TO_RIBBON = 12;
 const AXIS_WIDTH = 56;
 
 export const isCompact = (width: number) => width < 560;
@@ -41,12 +40,12 @@ function layerValues(layer: PlotLayer): number[] {
   }
 }
 
-export function plotScale(plot: KeyPlot): ValueScale {
+function plotScale(plot: KeyPlot): ValueScale {
   const values = plot.layers.flatMap(layerValues);
   return plot.axis.kind === "log" ? logScale(values, plot.axis) : symmetricScale(values, plot.axis.atLeast);
 }
 
-export function plotHeight(plot: KeyPlot, compact: boolean): number {
+function plotHeight(plot: KeyPlot, compact: boolean): number {
   return compact ? (plot.phoneHeight ?? 176) : (plot.height ?? 276);
 }
 

@@ -1,7 +1,7 @@
 import { renderToStaticMarkup } from "react-dom/server";
 import { describe, expect, it } from "vitest";
 import { BandProgress, progressTicks } from "./band-progress";
-import { historyLimit, historyPlace } from "./history-scale";
+import { historyLimit, historyMeasures, historyPlace, numberSide } from "./history-scale";
 import { HistoryString } from "./history-string";
 import { NoteName, SharpText } from "./note-name";
 import { tableAsText } from "./plot-table";
@@ -68,6 +68,17 @@ describe("the history on its string", () => {
   it("turns what lies beyond into an arrow at the edge", () => {
     expect(historyPlace(-31, 12.5, 62)).toEqual({ offset: -62, beyond: true });
     expect(historyPlace(6.25, 12.5, 62)).toEqual({ offset: 31, beyond: false });
+  });
+
+  it("sets a number on the free side of the string rather than on the date or the humidity", () => {
+    for (const width of [260, 332, 600]) {
+      const measures = historyMeasures(width);
+      for (let offset = -measures.reach; offset <= measures.reach; offset++) {
+        const side = numberSide(offset, measures);
+        const along = Math.sign(offset) === side ? Math.abs(offset) + 44 : 44;
+        expect(along).toBeLessThanOrEqual(side < 0 ? measures.leftRoom : measures.rightRoom);
+      }
+    }
   });
 
   it("says each visit in words", () => {
