@@ -1,6 +1,6 @@
 import { SHARP } from "./note-spelling";
 
-export type WordsStyle = {
+type WordsStyle = {
   font: string;
   colour: string;
   align: "left" | "center" | "right";

@@ -39,7 +39,7 @@ const MARK_WORDS: Record<KeyMark["kind"], string> = {
 };
 
 /** The key that a key press on the ribbon leads to, or null when the press means nothing here. */
-export function steppedKey(range: KeyRange, cursor: number, key: string): number | null {
+function steppedKey(range: KeyRange, cursor: number, key: string): number | null {
   switch (key) {
     case "ArrowLeft":
     case "ArrowDown":

@@ -10,7 +10,7 @@ export function isBlackKey(midi: number): boolean {
 }
 
 /** "C" or "C♯". */
-export function noteLetter(midi: number): string {
+function noteLetter(midi: number): string {
   return LETTERS[((midi % 12) + 12) % 12] ?? "C";
 }
 
