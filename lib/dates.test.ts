@@ -1,5 +1,15 @@
 import { describe, expect, it } from "vitest";
-import { dayOf, isDay, isTimeZone, showDay, showDayOf, showWallTime } from "./dates";
+import {
+  addDays,
+  dayOf,
+  isDay,
+  isTimeZone,
+  showDay,
+  showDayOf,
+  showTime,
+  showWallTime,
+  showWeekday,
+} from "./dates";
 
 describe("dates", () => {
   it("puts one instant on different days in different zones", () => {
@@ -37,5 +47,17 @@ describe("dates", () => {
     expect(isTimeZone("Europe/Dublin")).toBe(true);
     expect(isTimeZone("Europe/Port_Averil")).toBe(false);
     expect(isTimeZone("+01:00")).toBe(false);
+  });
+
+  it("counts days over months, leap days and clock changes", () => {
+    expect(addDays("2024-02-28", 1)).toBe("2024-02-29");
+    expect(addDays("2026-03-28", 2)).toBe("2026-03-30");
+    expect(addDays("2026-01-01", -1)).toBe("2025-12-31");
+  });
+
+  it("shows the weekday with the day, and a written time as it was written", () => {
+    expect(showWeekday("2026-05-14", "en-GB")).toBe("Thursday 14 May");
+    expect(showTime("2026-05-14T09:05:00+02:00", "en-GB")).toBe("9:05");
+    expect(showTime("2026-05-14T23:05:00-10:00", "en-GB")).toBe("23:05");
   });
 });

@@ -58,6 +58,27 @@ export function wallDay(local: string): Day {
   return local.slice(0, 10);
 }
 
+export function addDays(day: Day, days: number): Day {
+  return new Date(Date.parse(`${day}T00:00:00Z`) + days * 86_400_000).toISOString().slice(0, 10);
+}
+
+/** "Thursday 14 May": a day near enough that its year is plain. */
+export function showWeekday(day: Day, locale: string, length: "long" | "short" = "long"): string {
+  return new Intl.DateTimeFormat(locale, {
+    weekday: length,
+    day: "numeric",
+    month: length,
+    timeZone: "UTC",
+  }).format(new Date(`${day}T00:00:00Z`));
+}
+
+/** The clock's time of an RFC 3339 text as it was written, whatever its offset. */
+export function showTime(written: string, locale: string): string {
+  return new Intl.DateTimeFormat(locale, { hour: "numeric", minute: "2-digit", timeZone: "UTC" }).format(
+    new Date(`${written.slice(0, 16)}Z`),
+  );
+}
+
 function dayFormat(locale: string, timeZone: string): Intl.DateTimeFormat {
   return new Intl.DateTimeFormat(locale, { day: "numeric", month: "short", year: "numeric", timeZone });
 }

@@ -1,0 +1,61 @@
+import "server-only";
+import { withShop } from "@/db/client";
+import { bookableMembers, instrumentsAt } from "@/db/queries/visits";
+import type { Actor } from "@/lib/auth/actor";
+import { authorise } from "@/lib/auth/authorise";
+import type { Day } from "@/lib/dates";
+import { dayOf } from "@/lib/dates";
+import { invalid } from "@/lib/errors";
+import { addMinutes, withOffset } from "@/lib/wall-time";
+import { instrumentName } from "../record";
+import type { VisitPlan, VisitRecord } from "../schema";
+import { bookableSite, createVisit } from "../service";
+import { siteTime } from "../times";
+
+export type BookingChoices = {
+  site: { id: string; name: string; timeZone: string; today: Day };
+  instruments: { id: string; name: string; room: string; serial: string }[];
+  technicians: { id: string; name: string }[];
+};
+
+/** What a visit at this site can be made of. */
+export async function bookingChoices(actor: Actor, siteId: string): Promise<BookingChoices> {
+  authorise(actor, "visits.change");
+  return withShop(actor, async (tx) => {
+    const { id, name, timeZone } = await bookableSite(tx, actor, siteId);
+    const instruments = await instrumentsAt(tx, actor.shopId, siteId);
+    return {
+      site: { id, name, timeZone, today: dayOf(new Date(), timeZone) },
+      instruments: instruments.map((instrument) => ({
+        id: instrument.id,
+        name: instrumentName(instrument),
+        room: instrument.room,
+        serial: instrument.serial,
+      })),
+      technicians: await bookableMembers(tx, actor.shopId),
+    };
+  });
+}
+
+export async function bookableTechnicians(actor: Actor): Promise<{ id: string; name: string }[]> {
+  authorise(actor, "visits.read");
+  return withShop(actor, (tx) => bookableMembers(tx, actor.shopId));
+}
+
+/** Books by the site's wall clock. Where a time occurs twice, the first is meant; the API can say the second. */
+export async function planVisit(actor: Actor, plan: VisitPlan): Promise<VisitRecord> {
+  authorise(actor, "visits.change");
+  const { date, time, minutes, ...fields } = plan;
+  const { timeZone } = await withShop(actor, (tx) => bookableSite(tx, actor, plan.siteId));
+  const wall = `${date}T${time}`;
+  const start = withOffset(wall, timeZone, 0);
+  const end = withOffset(addMinutes(wall, minutes), timeZone, 0);
+  const read = siteTime({ start, end }, timeZone);
+  if ("faults" in read) {
+    throw invalid({
+      ...(read.faults.start ? { time: read.faults.start } : {}),
+      ...(read.faults.end ? { minutes: read.faults.end } : {}),
+    });
+  }
+  return createVisit(actor, { ...fields, start, end });
+}
