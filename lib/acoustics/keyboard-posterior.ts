@@ -1,5 +1,13 @@
 import { effectCount, effectSigmas, meanGradient, meanLnB } from "./keyboard-prior";
-import { at, backwardSolve, choleskyInPlace, forwardSolve, logDeterminant } from "./linear-algebra";
+import {
+  at,
+  backwardSolve,
+  choleskyInPlace,
+  dot,
+  forwardSolve,
+  logDeterminant,
+  transposedInverseOfFactor,
+} from "./linear-algebra";
 
 /** One observed key. On the log scale `sigma` is of ln B, on the linear scale of B itself. */
 export type Evidence = { key: number; scale: "log" | "linear"; value: number; sigma: number };
@@ -16,7 +24,7 @@ export type Mode = {
   effects: Float64Array;
   /** Cholesky factor L of R. */
   factor: Float64Array;
-  /** L⁻¹ H, observations × offsets. */
+  /** (L⁻¹ H)ᵀ, offsets × observations. */
   reducedGradients: Float64Array;
   /** Cholesky factor of Hᵀ R⁻¹ H + Σ⁻¹: the precision of the offsets. */
   effectFactor: Float64Array;
@@ -131,11 +139,9 @@ function solveLinearised(
   backwardSolve(effectFactor, k, next);
 
   const weights = innovation;
-  const reducedGradients = new Float64Array(n * k);
   for (let i = 0; i < n; i += 1) {
     let value = at(weights, i);
     for (let e = 0; e < k; e += 1) {
-      reducedGradients[i * k + e] = at(columns, e * n + i);
       value -= at(columns, e * n + i) * at(next, e);
     }
     weights[i] = value;
@@ -145,17 +151,11 @@ function solveLinearised(
   return {
     effects: next,
     factor,
-    reducedGradients,
+    reducedGradients: columns,
     effectFactor,
     weights,
     logEvidence: -0.5 * (total - explained + determinant),
   };
-}
-
-function dot(left: Float64Array, i: number, right: Float64Array, j: number, length: number): number {
-  let sum = 0;
-  for (let k = 0; k < length; k += 1) sum += at(left, i + k) * at(right, j + k);
-  return sum;
 }
 
 /** Mean and covariance (row-major) of ln B over all keys (Rasmussen & Williams 2006, eq. 2.41 and 2.42). */
@@ -181,9 +181,7 @@ export function posteriorOverKeys(
     mean[m] = meanLnB(firstMidi + m, mode.effects) + shift;
     meanGradient(firstMidi + m, mode.effects, remaining, m * k);
     for (let e = 0; e < k; e += 1) {
-      let value = at(remaining, m * k + e);
-      for (let i = 0; i < n; i += 1) value -= at(reduced, m * n + i) * at(mode.reducedGradients, i * k + e);
-      remaining[m * k + e] = value;
+      remaining[m * k + e] = at(remaining, m * k + e) - dot(reduced, m * n, mode.reducedGradients, e * n, n);
     }
     forwardSolve(mode.effectFactor, k, remaining, m * k);
   }
@@ -208,39 +206,20 @@ export function posteriorOverKeys(
 export function precisionBand(mode: Mode, reach: number): Float64Array {
   const n = mode.weights.length;
   const k = effectCount;
-  const inverse = inverseOfFactor(mode.factor, n);
+  const inverse = transposedInverseOfFactor(mode.factor, n);
   const scaled = new Float64Array(n * k);
   for (let i = 0; i < n; i += 1) {
     for (let e = 0; e < k; e += 1) {
-      let sum = 0;
-      for (let row = i; row < n; row += 1)
-        sum += at(inverse, row * n + i) * at(mode.reducedGradients, row * k + e);
-      scaled[i * k + e] = sum;
+      scaled[i * k + e] = dot(inverse, i * n + i, mode.reducedGradients, e * n + i, n - i);
     }
     forwardSolve(mode.effectFactor, k, scaled, i * k);
   }
   const band = new Float64Array(n * (reach + 1));
   for (let i = 0; i < n; i += 1) {
-    for (let d = 0; d <= reach && i + d < n; d += 1) {
-      let sum = -dot(scaled, i * k, scaled, (i + d) * k, k);
-      for (let row = i + d; row < n; row += 1) sum += at(inverse, row * n + i) * at(inverse, row * n + i + d);
-      band[i * (reach + 1) + d] = sum;
+    for (let j = i; j <= i + reach && j < n; j += 1) {
+      band[i * (reach + 1) + j - i] =
+        dot(inverse, i * n + j, inverse, j * n + j, n - j) - dot(scaled, i * k, scaled, j * k, k);
     }
   }
   return band;
-}
-
-function inverseOfFactor(factor: Float64Array, n: number): Float64Array {
-  const inverse = new Float64Array(n * n);
-  for (let i = 0; i < n; i += 1) {
-    const diagonal = at(factor, i * n + i);
-    for (let k = 0; k < i; k += 1) {
-      const value = at(factor, i * n + k);
-      for (let j = 0; j <= k; j += 1)
-        inverse[i * n + j] = at(inverse, i * n + j) - value * at(inverse, k * n + j);
-    }
-    for (let j = 0; j < i; j += 1) inverse[i * n + j] = at(inverse, i * n + j) / diagonal;
-    inverse[i * n + i] = 1 / diagonal;
-  }
-  return inverse;
 }

@@ -13,7 +13,7 @@ const bassBridge = { slope: -8.47e-2, level: -5.82, pivotMidi: 33 };
 const trebleBridge = { slope: 9.26e-2, level: -13.64, pivotMidi: 69 };
 
 /** Standard deviations of u0, u1 (per octave), v0, v1 (per octave). */
-export const effectSigmas = [0.65, 0.25, 0.15, 0.065] as const;
+export const effectSigmas = [0.6, 0.25, 0.15, 0.06] as const;
 export const effectCount = effectSigmas.length;
 
 /** Correlation length of a bridge's departure from the two-exponential curve, in keys. */
@@ -23,11 +23,12 @@ export type Knot = readonly [midi: number, value: number];
 
 /** Standard deviation of g: largest about the break, where bridges differ most from the sum's smooth valley. */
 const curveSigmas: readonly Knot[] = [
-  [21, 0.28],
-  [40, 0.22],
+  [21, 0.24],
+  [40, 0.2],
   [52, 0.1],
-  [60, 0.065],
-  [90, 0.065],
+  [60, 0.07],
+  [78, 0.09],
+  [96, 0.09],
   [108, 0.1],
 ];
 

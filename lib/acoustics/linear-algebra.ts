@@ -6,6 +6,35 @@
 /** Element of a typed array; an index out of range gives NaN, which surfaces in the result instead of hiding. */
 export const at = (values: Float64Array, index: number): number => values[index] ?? Number.NaN;
 
+/** Inner product of `length` elements from offset i of `left` and j of `right`. */
+export function dot(left: Float64Array, i: number, right: Float64Array, j: number, length: number): number {
+  let sum = 0;
+  for (let k = 0; k < length; k += 1) sum += at(left, i + k) * at(right, j + k);
+  return sum;
+}
+
+/** Product of two n × n row-major matrices, two inner terms a pass: memory traffic bounds this loop. */
+export function product(left: Float64Array, right: Float64Array, n: number): Float64Array {
+  const result = new Float64Array(n * n);
+  for (let row = 0; row < n * n; row += n) {
+    let j = 0;
+    for (; j + 1 < n; j += 2) {
+      const first = at(left, row + j);
+      const second = at(left, row + j + 1);
+      const source = j * n;
+      for (let i = 0; i < n; i += 1) {
+        result[row + i] =
+          at(result, row + i) + first * at(right, source + i) + second * at(right, source + n + i);
+      }
+    }
+    if (j < n) {
+      const last = at(left, row + j);
+      for (let i = 0; i < n; i += 1) result[row + i] = at(result, row + i) + last * at(right, j * n + i);
+    }
+  }
+  return result;
+}
+
 /** Thrown when a matrix is not positive definite: the caller says what that means for its subject. */
 export class NotPositiveDefinite extends Error {
   constructor(readonly row: number) {
@@ -74,6 +103,20 @@ export function backwardSolve(factor: Float64Array, n: number, vector: Float64Ar
       vector[offset + k] = at(vector, offset + k) - at(factor, row + k) * value;
     }
   }
+}
+
+/** (L⁻¹)ᵀ of a Cholesky factor: row i holds column i of L⁻¹, zero left of the diagonal. */
+export function transposedInverseOfFactor(factor: Float64Array, n: number): Float64Array {
+  const inverse = new Float64Array(n * n);
+  for (let column = 0; column < n; column += 1) {
+    const row = column * n;
+    inverse[row + column] = 1 / at(factor, column * n + column);
+    for (let i = column + 1; i < n; i += 1) {
+      const sum = dot(factor, i * n + column, inverse, row + column, i - column);
+      inverse[row + i] = -sum / at(factor, i * n + i);
+    }
+  }
+  return inverse;
 }
 
 /** Sum of the logarithms of the squared diagonal of a Cholesky factor: ln det of the matrix it came from. */

@@ -1,6 +1,6 @@
 import { irregularitySigma } from "./fit-prior";
 import { interpolate, type Knot } from "./keyboard-prior";
-import { at, choleskySemidefiniteInPlace, solveBand } from "./linear-algebra";
+import { at, choleskySemidefiniteInPlace, product, solveBand } from "./linear-algebra";
 import { inharmonicCentsSlope } from "./partials";
 import type { StretchSystem } from "./stretch-system";
 
@@ -61,32 +61,13 @@ export function stretchByLnB(system: StretchSystem): Float64Array {
   return columns;
 }
 
-/** cov(ln B) (row-major, symmetric) times Jᵀ: row k holds the covariance of ln B_k with every key's stretch. */
+/** cov(ln B)·Jᵀ: row k holds the covariance of ln B_k with every key's stretch. */
 export function covarianceWithStretch(
   columns: Float64Array,
   covariance: Float64Array,
   n: number,
 ): Float64Array {
-  const product = new Float64Array(n * n);
-  for (let k = 0; k < n; k += 1) {
-    const row = k * n;
-    let j = 0;
-    // Two columns of J per pass: halves the traffic through `product`, which bounds this cubic loop.
-    for (; j + 1 < n; j += 2) {
-      const first = at(covariance, row + j);
-      const second = at(covariance, row + j + 1);
-      const column = j * n;
-      for (let i = 0; i < n; i += 1) {
-        product[row + i] =
-          at(product, row + i) + first * at(columns, column + i) + second * at(columns, column + n + i);
-      }
-    }
-    if (j < n) {
-      const last = at(covariance, row + j);
-      for (let i = 0; i < n; i += 1) product[row + i] = at(product, row + i) + last * at(columns, j * n + i);
-    }
-  }
-  return product;
+  return product(covariance, columns, n);
 }
 
 /** Diagonal of J·cov(ln B)·Jᵀ, cents², from J's columns and `covarianceWithStretch`. */

@@ -32,8 +32,8 @@ export type StretchSystem = {
   departure: Float64Array;
 };
 
-/** Stands for the limit of vanishing smoothness: the error it leaves is of the order of 1e-6 cents. */
-const vanishingSmoothness = 1e-6;
+/** Stands for the limit of vanishing smoothness, as a share of the largest weight: it moves a plan by less than 1e-4 cent. */
+const vanishingSmoothness = 1e-8;
 
 /**
  * Least squares over coincident partials: with u = s − t, minimise
@@ -46,7 +46,7 @@ export function solveStretch(settings: PlanSettings, b: Float64Array): StretchSy
   const coincidences = listCoincidences(settings);
   const width = coincidences.reduce((widest, { lower, upper }) => Math.max(widest, upper - lower), 2);
   const factor = bandMatrix(n, Math.min(width, n - 1));
-  addSmoothness(factor, settings);
+  addSmoothness(factor, settings, coincidences);
   const departure = new Float64Array(n);
   for (const { lower, upper, lowerPartial, upperPartial, weight, wanted } of coincidences) {
     addToBand(factor, lower, lower, weight);
@@ -108,8 +108,13 @@ function weightAt({ weights }: IntervalRule, index: number): number {
 }
 
 /** Second differences over neighbouring keys; where keys are missing, divided differences over the gap. */
-function addSmoothness(matrix: BandMatrix, { keys, style }: PlanSettings): void {
-  const lambda = style.smoothness > 0 ? style.smoothness : vanishingSmoothness;
+function addSmoothness(
+  matrix: BandMatrix,
+  { keys, style }: PlanSettings,
+  coincidences: readonly Coincidence[],
+): void {
+  const largest = coincidences.reduce((weight, coincidence) => Math.max(weight, coincidence.weight), 0);
+  const lambda = style.smoothness > 0 ? style.smoothness : vanishingSmoothness * largest;
   for (let i = 1; i + 1 < keys.length; i += 1) {
     const below = (keys[i] ?? 0) - (keys[i - 1] ?? 0);
     const above = (keys[i + 1] ?? 0) - (keys[i] ?? 0);
