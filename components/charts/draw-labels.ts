@@ -110,7 +110,7 @@ function nameBreak(
   const { layout, area } = scene;
   const { breakMidi } = layout.range;
   if (!scene.first || layout.breakX === null || breakMidi == null) return;
-  const text = `break ${noteText(breakMidi)} | ${noteText(breakMidi + 1)}`;
+  const text = `break ${noteText(breakMidi - 1)} | ${noteText(breakMidi)}`;
   const half = measureWords(ctx, text, { font: colours.font }) / 2;
   const wanted = area.x + layout.breakX;
   const x = Math.max(half, Math.min(scene.width - half, asideOf(cursorX, wanted, half + 8)));

@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { breakGap, clampKey, keyUnder, layOutKeys, nearestKey } from "./key-geometry";
 import { isBlackKey } from "./note-spelling";
 
-const grand = { firstMidi: 21, lastMidi: 108, breakMidi: 40 };
+const grand = { firstMidi: 21, lastMidi: 108, breakMidi: 41 };
 
 /** Compasses built by piano makers: 85, 88, 92 and 97 keys (common practice, no source). */
 const compasses = [
@@ -39,7 +39,7 @@ describe("where keys lie", () => {
 
   it("keeps every point over its own key", () => {
     for (const compass of compasses) {
-      const layout = layOutKeys({ ...compass, breakMidi: 40 }, 800);
+      const layout = layOutKeys({ ...compass, breakMidi: 41 }, 800);
       for (const key of layout.keys) {
         const point = layout.x(key.midi);
         expect(point).toBeGreaterThan(key.x);
@@ -57,22 +57,22 @@ describe("where keys lie", () => {
   });
 
   it("never lets a black key reach across the gap at the break", () => {
-    for (let breakMidi = 21; breakMidi < 108; breakMidi++) {
+    for (let breakMidi = 22; breakMidi <= 108; breakMidi++) {
       for (const width of [358, 800]) {
         const layout = layOutKeys({ firstMidi: 21, lastMidi: 108, breakMidi }, width);
-        const below = layout.keys.filter((key) => key.midi <= breakMidi);
-        const above = layout.keys.filter((key) => key.midi > breakMidi);
+        const below = layout.keys.filter((key) => key.midi < breakMidi);
+        const above = layout.keys.filter((key) => key.midi >= breakMidi);
         expect(Math.max(...below.map((key) => key.x + key.width))).toBeLessThanOrEqual(
           Math.min(...above.map((key) => key.x)) + 1e-9,
         );
-        expect(layout.breakX).toBeGreaterThan(layout.x(breakMidi));
-        expect(layout.breakX).toBeLessThan(layout.x(breakMidi + 1));
+        expect(layout.breakX).toBeGreaterThan(layout.x(breakMidi - 1));
+        expect(layout.breakX).toBeLessThan(layout.x(breakMidi));
       }
     }
   });
 
   it("ignores a break outside the compass", () => {
-    expect(layOutKeys({ firstMidi: 21, lastMidi: 108, breakMidi: 108 }, 800).breakX).toBeNull();
+    expect(layOutKeys({ firstMidi: 21, lastMidi: 108, breakMidi: 109 }, 800).breakX).toBeNull();
     expect(layOutKeys({ firstMidi: 21, lastMidi: 108, breakMidi: 12 }, 800).breakX).toBeNull();
   });
 
@@ -93,7 +93,7 @@ describe("where keys lie", () => {
 describe("from pixel to key", () => {
   it("finds every key again from its own point", () => {
     for (const compass of compasses) {
-      const layout = layOutKeys({ ...compass, breakMidi: 40 }, 358);
+      const layout = layOutKeys({ ...compass, breakMidi: 41 }, 358);
       for (let midi = compass.firstMidi; midi <= compass.lastMidi; midi++) {
         expect(nearestKey(layout, layout.x(midi))).toBe(midi);
         expect(keyUnder(layout, layout.x(midi), isBlackKey(midi))).toBe(midi);

@@ -8,7 +8,7 @@ import { isBlackKey } from "./note-spelling";
 export type KeyRange = {
   firstMidi: number;
   lastMidi: number;
-  /** Last key of the bass bridge; null where the bridges are not told apart. */
+  /** First key of the treble bridge; null where the bridges are not told apart. */
   breakMidi?: number | null;
 };
 
@@ -50,7 +50,7 @@ function pointPosition(midi: number): number {
 
 export function hasBreak(range: KeyRange): boolean {
   const { breakMidi, firstMidi, lastMidi } = range;
-  return breakMidi != null && breakMidi >= firstMidi && breakMidi < lastMidi;
+  return breakMidi != null && breakMidi > firstMidi && breakMidi <= lastMidi;
 }
 
 /** Gap between the bridges, in pixels, for a plot of this width. */
@@ -61,7 +61,7 @@ export function breakGap(width: number): number {
 export function layOutKeys(range: KeyRange, width: number, gap = breakGap(width)): KeyLayout {
   const { firstMidi, lastMidi } = range;
   const broken = hasBreak(range);
-  const breakMidi = broken ? (range.breakMidi ?? lastMidi) : lastMidi;
+  const breakMidi = broken ? (range.breakMidi ?? firstMidi) : firstMidi;
   const start = leftEdge(firstMidi);
   // A black key at either end overhangs its white neighbour's place, hence the greater of the last two.
   const end = Math.max(
@@ -69,7 +69,7 @@ export function layOutKeys(range: KeyRange, width: number, gap = breakGap(width)
     lastMidi > firstMidi ? leftEdge(lastMidi - 1) + keyWidth(lastMidi - 1) : 0,
   );
   const unit = Math.max(0, width - (broken ? gap : 0)) / (end - start);
-  const shift = (midi: number) => (midi > breakMidi ? gap : 0);
+  const shift = (midi: number) => (broken && midi >= breakMidi ? gap : 0);
   const x = (midi: number) => (pointPosition(midi) - start) * unit + shift(midi);
   const keys: KeyShape[] = [];
   for (let midi = firstMidi; midi <= lastMidi; midi++) {
@@ -87,7 +87,7 @@ export function layOutKeys(range: KeyRange, width: number, gap = breakGap(width)
     pitch: TWELFTH * unit,
     whiteWidth: unit,
     keys,
-    breakX: broken ? (x(breakMidi) + x(breakMidi + 1)) / 2 : null,
+    breakX: broken ? (x(breakMidi - 1) + x(breakMidi)) / 2 : null,
     x,
   };
 }

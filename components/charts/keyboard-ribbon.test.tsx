@@ -27,7 +27,7 @@ function Held({ onEnter }: { onEnter?: (midi: number) => void }) {
     <KeyboardRibbon
       firstMidi={21}
       lastMidi={108}
-      breakMidi={40}
+      breakMidi={41}
       marks={[{ midi: 88, kind: "flagged" }]}
       cursor={cursor}
       onCursor={setCursor}

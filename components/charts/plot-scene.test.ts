@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { cursorRings, drawnPoints, makeScene, pointAt, splitAtBreak, tickSide } from "./plot-scene";
 import type { KeyPlot } from "./plot-types";
 
-const range = { firstMidi: 21, lastMidi: 108, breakMidi: 40 };
+const range = { firstMidi: 21, lastMidi: 108, breakMidi: 41 };
 const keys = Array.from({ length: 88 }, (_, index) => 21 + index);
 const curve = keys.map((midi) => ({ midi, value: midi - 60, low: midi - 62, high: midi - 58 }));
 const table = { columns: [], rows: [] };

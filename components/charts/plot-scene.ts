@@ -193,7 +193,7 @@ export function splitAtBreak<P extends { midi: number }>(range: KeyRange, points
   const { breakMidi } = range;
   if (breakMidi == null) return sorted.length > 0 ? [sorted] : [];
   return [
-    sorted.filter((point) => point.midi <= breakMidi),
-    sorted.filter((point) => point.midi > breakMidi),
+    sorted.filter((point) => point.midi < breakMidi),
+    sorted.filter((point) => point.midi >= breakMidi),
   ].filter((run) => run.length > 0);
 }
