@@ -95,6 +95,9 @@ export const visitMovePlan = z.object({
   confirmed: z.boolean().default(false),
 });
 
+/** The same as a form sends it, with the visit it is about. */
+export const visitMove = visitMovePlan.extend({ id: z.uuid() });
+
 export const cancelQuery = z.object({
   version: z.coerce.number().int().positive(),
   reason: optionalText(500),

@@ -1,0 +1,139 @@
+import type { Metadata } from "next";
+import { notFound } from "next/navigation";
+import { cache } from "react";
+import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
+import { AppLink } from "@/components/ui/app-link";
+import { LinkButton } from "@/components/ui/button";
+import { DemoBadge } from "@/components/ui/demo-badge";
+import { Facts } from "@/components/ui/facts";
+import { Note } from "@/components/ui/note";
+import { dayWithYear, durationWords, hoursOf, minutesBetween } from "@/components/visits/time-words";
+import { VisitHistory } from "@/components/visits/visit-history";
+import { VisitJobs } from "@/components/visits/visit-jobs";
+import { VisitMoves } from "@/components/visits/visit-moves";
+import { VisitStateWord } from "@/components/visits/visit-state";
+import { may } from "@/lib/auth/access";
+import { idParams } from "@/lib/doors/params";
+import { AppError } from "@/lib/errors";
+import { staffActor } from "@/lib/pages/page-actor";
+import { shopClock } from "@/lib/shop-clock/service";
+import { isOver } from "@/lib/visits/rules";
+import type { VisitRecord } from "@/lib/visits/schema";
+import { getVisit } from "@/lib/visits/service";
+import { moveVisitAction, stepVisitAction } from "../actions";
+
+type Props = PageProps<"/visits/[id]">;
+
+const visitOf = cache(async (id: string): Promise<VisitRecord> => {
+  const read = idParams.safeParse({ id });
+  if (!read.success) notFound();
+  try {
+    return await getVisit(await staffActor(), id);
+  } catch (error) {
+    if (error instanceof AppError && error.code === "not-found") notFound();
+    throw error;
+  }
+});
+
+export async function generateMetadata({ params }: Props): Promise<Metadata> {
+  const visit = await visitOf((await params).id);
+  return { title: `${visit.site.name}, ${dayWithYear(visit.start, "en-GB")}` };
+}
+
+export default async function VisitPage({ params }: Props) {
+  const actor = await staffActor();
+  const visit = await visitOf((await params).id);
+  const { locale, demo, timeZone: shopZone } = await shopClock(actor);
+  const canRecord = visit.canChange && may(actor.role, "sheets.change") && visit.state !== "moved";
+  return (
+    <Spread
+      left={<About visit={visit} locale={locale} shopZone={shopZone} />}
+      right={
+        <RightPage>
+          <WorkHead
+            title={visit.jobs.length === 1 ? "1 instrument" : `${visit.jobs.length} instruments`}
+            summary={`${dayWithYear(visit.start, locale)}, ${hoursOf(visit, locale)}`}
+            actions={
+              <>
+                {demo ? <DemoBadge /> : null}
+                {visit.canChange && !isOver(visit.state) ? (
+                  <LinkButton href={`/visits/${visit.id}/change`} kind="quiet">
+                    Change visit
+                  </LinkButton>
+                ) : null}
+                <VisitMoves visit={visit} locale={locale} step={stepVisitAction} move={moveVisitAction} />
+              </>
+            }
+          />
+          <VisitJobs jobs={visit.jobs} canRecord={canRecord} locale={locale} timeZone={visit.timeZone} />
+          {visit.canChange ? null : (
+            <p className="lab mt-4">
+              This is another technician’s visit: you can read it. The office can put you on it.
+            </p>
+          )}
+        </RightPage>
+      }
+    />
+  );
+}
+
+function About({ visit, locale, shopZone }: { visit: VisitRecord; locale: string; shopZone: string }) {
+  const { site, customer } = visit;
+  const address = [site.street, [site.postalCode, site.city].filter(Boolean).join(" ")].filter(Boolean);
+  return (
+    <LeftPage
+      crumb={[{ label: "Visits", href: "/visits" }, { label: dayWithYear(visit.start, locale) }]}
+      title={site.name}
+      subtitle={`${dayWithYear(visit.start, locale)}, ${hoursOf(visit, locale)}`}
+    >
+      <div className="grid gap-3">
+        <VisitStateWord state={visit.state} />
+        {visit.movedToId ? (
+          <AppLink href={`/visits/${visit.movedToId}`} className="link">
+            See where it moved to
+          </AppLink>
+        ) : null}
+        {visit.movedFromId ? (
+          <AppLink href={`/visits/${visit.movedFromId}`} className="link">
+            Moved here from another time
+          </AppLink>
+        ) : null}
+      </div>
+      <Facts
+        facts={[
+          {
+            name: "Comes",
+            value: visit.technicians.map(({ name }) => name).join(", "),
+          },
+          { name: "Length", value: durationWords(minutesBetween(visit.start, visit.end)) },
+          visit.timeZone !== shopZone && { name: "Time zone", value: visit.timeZone },
+          {
+            name: "Customer",
+            value: (
+              <AppLink href={`/customers/${customer.id}`} className="link">
+                {customer.name}
+              </AppLink>
+            ),
+          },
+          customer.phone !== null && {
+            name: "Telephone",
+            value: (
+              <a href={`tel:${customer.phone.replace(/[^+\d]/g, "")}`} className="link">
+                {customer.phone}
+              </a>
+            ),
+          },
+          address.length > 0 && { name: "Address", value: address.join(", ") },
+        ]}
+      />
+      {site.accessNotes ? <Note by="Getting in">{site.accessNotes}</Note> : null}
+      {visit.notes ? <Note by="Notes on this visit">{visit.notes}</Note> : null}
+      <section aria-labelledby="history">
+        <h2 id="history" className="mb-3 text-19! leading-6!">
+          What happened
+        </h2>
+        <VisitHistory events={visit.events} locale={locale} timeZone={visit.timeZone} />
+      </section>
+    </LeftPage>
+  );
+}

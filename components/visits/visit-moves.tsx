@@ -1,0 +1,172 @@
+"use client";
+
+import { useState } from "react";
+import { ActionStrip } from "@/components/shell/action-strip";
+import { Button, LinkButton } from "@/components/ui/button";
+import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
+import type { ActionResult } from "@/lib/doors/action-result";
+import type { Move, VisitState } from "@/lib/visits/rules";
+import { MoveDialog, type MovedVisit } from "./move-dialog";
+import { moveDone, moveLabel, nextMove } from "./move-words";
+import { ReasonDialog } from "./reason-dialog";
+
+type Stepped = MovedVisit & { version: number; moves: Move[] };
+
+export type StepAction = (input: unknown) => Promise<ActionResult<Stepped>>;
+
+export type MovesProps = {
+  visit: { id: string; version: number; start: string; end: string; moves: readonly Move[] };
+  locale: string;
+  step: StepAction;
+  move: StepAction;
+};
+
+/**
+ * Where the visit goes next. The next step stands at the head of the page on the desk and under the thumb on
+ * the phone; what is rarer stands beside it. Steps are done at once and offered back.
+ */
+export function useVisitMoves({ visit, step }: Pick<MovesProps, "visit" | "step">) {
+  const [busy, setBusy] = useState<VisitState | null>(null);
+  const [refused, setRefused] = useState<string>();
+
+  async function take(move: Move, reason?: string): Promise<boolean> {
+    if (busy) return false;
+    setBusy(move.to);
+    setRefused(undefined);
+    try {
+      const result = await step({ id: visit.id, version: visit.version, to: move.to, reason });
+      if (!result.ok) {
+        setRefused(result.error.fields?.reason ?? result.error.message);
+        showMessage({ kind: "attention", text: "Nothing was changed.", detail: result.error.message });
+        return false;
+      }
+      const { version, moves } = result.data;
+      const back = moves.find((one) => one.back);
+      if (back && !move.back) {
+        toastWithUndo(moveDone(move.to), async () => {
+          const undone = await step({ id: visit.id, version, to: back.to });
+          if (!undone.ok) throw new Error(undone.error.message);
+        });
+      } else showMessage({ text: moveDone(move.to) });
+      return true;
+    } catch {
+      showMessage({
+        kind: "attention",
+        text: "The server did not answer.",
+        detail: "Nothing was changed. Check the connection and try again.",
+      });
+      return false;
+    } finally {
+      setBusy(null);
+    }
+  }
+
+  return { busy, refused, take };
+}
+
+export function VisitMoves({ visit, locale, step, move: moveAction }: MovesProps) {
+  const { busy, refused, take } = useVisitMoves({ visit, step });
+  const [asking, setAsking] = useState<VisitState | null>(null);
+  const next = nextMove(visit.moves);
+  const others = visit.moves.filter((move) => move !== next);
+
+  function press(move: Move) {
+    if (move.asksReason) setAsking(move.to);
+    else take(move);
+  }
+
+  return (
+    <>
+      <div className="flex flex-wrap items-center gap-2" data-no-print>
+        {others.map((move) => (
+          <Button
+            key={move.to}
+            kind={move.back ? "quiet" : "secondary"}
+            busy={busy === move.to}
+            onClick={() => press(move)}
+          >
+            {moveLabel(move)}
+          </Button>
+        ))}
+        {next ? (
+          <Button
+            kind="primary"
+            className="max-lg:hidden"
+            busy={busy === next.to}
+            onClick={() => press(next)}
+          >
+            {moveLabel(next)}
+          </Button>
+        ) : null}
+      </div>
+      {next ? (
+        <ActionStrip>
+          <Button kind="primary" busy={busy === next.to} onClick={() => press(next)}>
+            {moveLabel(next)}
+          </Button>
+        </ActionStrip>
+      ) : null}
+      <ReasonDialog
+        key={asking}
+        to={asking === "moved" ? null : asking}
+        busy={busy !== null}
+        refused={refused}
+        onClose={() => setAsking(null)}
+        onGive={async (reason) => {
+          const move = visit.moves.find(({ to }) => to === asking);
+          if (move && (await take(move, reason))) setAsking(null);
+        }}
+      />
+      <MoveDialog
+        open={asking === "moved"}
+        visit={visit}
+        locale={locale}
+        action={moveAction}
+        onClose={() => setAsking(null)}
+      />
+    </>
+  );
+}
+
+/**
+ * On the day's page: the next step of the visit in hand, or the visit itself where no step is this person's.
+ * `strip` draws it under the thumb instead of at the head.
+ */
+export function NextStep({
+  visit,
+  step,
+  siteName,
+  strip,
+}: Omit<MovesProps, "move" | "locale"> & { siteName: string; strip: boolean }) {
+  const { busy, take } = useVisitMoves({ visit, step });
+  const next = nextMove(visit.moves);
+  const href = `/visits/${visit.id}`;
+  if (!strip) {
+    return (
+      <>
+        <LinkButton href={href}>Open visit</LinkButton>
+        {next ? (
+          <Button kind="primary" busy={busy !== null} onClick={() => take(next)}>
+            {moveLabel(next)}
+          </Button>
+        ) : null}
+      </>
+    );
+  }
+  return (
+    <ActionStrip>
+      {next ? <LinkButton href={href}>Open</LinkButton> : null}
+      {next ? (
+        <Button kind="primary" className="min-w-0" busy={busy !== null} onClick={() => take(next)}>
+          <span className="truncate">
+            {moveLabel(next)}: {siteName}
+          </span>
+        </Button>
+      ) : (
+        <LinkButton kind="primary" href={href} className="min-w-0">
+          <span className="truncate">Open {siteName}</span>
+        </LinkButton>
+      )}
+    </ActionStrip>
+  );
+}
