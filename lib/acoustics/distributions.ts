@@ -97,24 +97,34 @@ function studentDensity(t: number, dof: number): number {
   return Math.exp(front - ((dof + 1) / 2) * Math.log1p((t * t) / dof));
 }
 
-const quantiles = new Map<string, number>();
+/** Quantiles already found, by tail and degrees of freedom: a sheet asks for few, again and again. */
+const quantiles = new Map<number, Map<number, number>>();
+const MOST_REMEMBERED = 1000;
+
+function remembered(twoSided: number): Map<number, number> {
+  const known = quantiles.get(twoSided);
+  if (known && known.size <= MOST_REMEMBERED) return known;
+  if (quantiles.size > MOST_REMEMBERED) quantiles.clear();
+  const fresh = new Map<number, number>();
+  quantiles.set(twoSided, fresh);
+  return fresh;
+}
 
 /**
- * The t with P(|t| > t) = `twoSided`. Newton's method from 0: the tail is convex and falling, so the steps approach
- * the root from below. Asked for again and again with the same arguments, hence the memory.
+ * The t with P(|t| > t) = `twoSided`. Newton's method from below: the tail is convex and falling, so the steps approach the
+ * root from that side. The normal quantile is a start below every Student quantile.
  */
 export function studentQuantile(twoSided: number, dof: number): number {
-  const key = `${twoSided}/${dof}`;
-  const known = quantiles.get(key);
+  const byDof = remembered(twoSided);
+  const known = byDof.get(dof);
   if (known !== undefined) return known;
-  let t = 0;
+  let t = dof === Number.POSITIVE_INFINITY ? 0 : studentQuantile(twoSided, Number.POSITIVE_INFINITY);
   for (let k = 0; k < 200; k += 1) {
     const step = (studentTwoSided(t, dof) - twoSided) / (2 * studentDensity(t, dof));
     t += step;
     if (Math.abs(step) <= 1e-13 * t) break;
   }
-  if (quantiles.size > 5000) quantiles.clear();
-  quantiles.set(key, t);
+  byDof.set(dof, t);
   return t;
 }
 
