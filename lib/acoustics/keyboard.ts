@@ -58,6 +58,10 @@ export function keyboard(input: KeyboardInput): KeyboardResult {
       source: i === undefined ? "predicted" : "measured",
       flag: i !== undefined && screened.flagged.has(i) ? "does-not-belong" : null,
       z: residual?.z ?? null,
+      expectedB:
+        i === undefined || !residual || residual.z === null
+          ? null
+          : Math.exp((evidence[i]?.value ?? median) - residual.z * residual.sigma),
       detectableChange:
         residual === undefined || residual.z === null
           ? null

@@ -99,6 +99,8 @@ export type KeyEstimate = {
   source: "measured" | "predicted";
   flag: null | "does-not-belong";
   z: number | null;
+  /** On a measured key: B as all other notes predict it. */
+  expectedB: number | null;
   /** Smallest relative change of B this sheet could have detected on a measured key, e.g. 0.12. */
   detectableChange: number | null;
   /** As given with the observation. */

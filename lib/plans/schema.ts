@@ -119,6 +119,7 @@ const key = z.object({
   source: z.enum(["measured", "predicted"]),
   flag: z.literal("does-not-belong").nullable(),
   z: z.number().nullable(),
+  expectedB: z.number().nullable(),
   detectableChange: z.number().nullable(),
 });
 
