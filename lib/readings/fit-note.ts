@@ -1,11 +1,11 @@
 import type { NoteRow, NoteValues } from "@/db/queries/readings";
-import { AcousticsError, fit, keyboard, keyName } from "@/lib/acoustics";
+import { AcousticsError, fit, keyName } from "@/lib/acoustics";
 import { COMPUTATION_VERSION } from "@/lib/acoustics/version";
 import { invalid } from "@/lib/errors";
 import {
-  type FittedNote,
   fitInputOf,
-  observationsOf,
+  type KeyRange,
+  keyModel,
   pitchOf,
   pitchOffset,
   questionAbout,
@@ -13,8 +13,6 @@ import {
   readingsToAskAbout,
 } from "./rules";
 import type { NoteInput } from "./schema";
-
-type Instrument = { firstMidi: number; lastMidi: number; breakMidi: number | null };
 
 /**
  * Turns typed readings into what is stored: frequencies with their fit. Faults are named at their reading
@@ -31,7 +29,7 @@ export function fitNote({
   midi: number;
   input: NoteInput;
   sheet: { referenceHz: number };
-  instrument: Instrument;
+  instrument: KeyRange;
   /** The sheet's notes as stored; those of other keys tell what to expect of this one. */
   others: readonly NoteRow[];
   path: string;
@@ -39,7 +37,7 @@ export function fitNote({
   if (midi < instrument.firstMidi || midi > instrument.lastMidi) {
     const range = `${keyName(instrument.firstMidi)} to ${keyName(instrument.lastMidi)}`;
     throw invalid(
-      { midi: `This instrument's keys run from ${range}.` },
+      { [path.replace(/readings$/, "midi")]: `This instrument's keys run from ${range}.` },
       "This note is not on the instrument.",
     );
   }
@@ -87,19 +85,4 @@ export function fitNote({
 
 function field(input: NoteInput, partial: number): "hz" | "cents" {
   return input.readings.find((reading) => reading.partial === partial)?.cents === undefined ? "hz" : "cents";
-}
-
-function keyModel(
-  notes: readonly FittedNote[],
-  midi: number,
-  { firstMidi, lastMidi, breakMidi }: Instrument,
-) {
-  const { keys } = keyboard({
-    observations: observationsOf(notes),
-    firstMidi,
-    lastMidi,
-    ...(breakMidi === null ? {} : { breakMidi }),
-  });
-  const key = keys.find((estimate) => estimate.midi === midi);
-  return key ? { b: key.b, lnBSigma: key.lnBSigma } : undefined;
 }

@@ -1,4 +1,4 @@
-import { centsBetween, checkFrequency, equalTemperedHz, fit, raiseByCents } from "@/lib/acoustics";
+import { centsBetween, checkFrequency, equalTemperedHz, fit, keyboard, raiseByCents } from "@/lib/acoustics";
 import type { FitInput, Observation } from "@/lib/acoustics/types";
 import type { NoteInput } from "./schema";
 
@@ -110,6 +110,24 @@ export function pitchOffset(pitch: readonly { midi: number; cents: number }[]): 
   const half = Math.floor(values.length / 2);
   const upper = values[half] ?? 0;
   return values.length % 2 === 1 ? upper : ((values[half - 1] ?? upper) + upper) / 2;
+}
+
+export type KeyRange = { firstMidi: number; lastMidi: number; breakMidi: number | null };
+
+/** What the other keys' fits tell of B of this one. */
+export function keyModel(
+  others: readonly FittedNote[],
+  midi: number,
+  { firstMidi, lastMidi, breakMidi }: KeyRange,
+): { b: number; lnBSigma: number } | undefined {
+  const { keys } = keyboard({
+    observations: observationsOf(others),
+    firstMidi,
+    lastMidi,
+    ...(breakMidi === null ? {} : { breakMidi }),
+  });
+  const key = keys.find((estimate) => estimate.midi === midi);
+  return key ? { b: key.b, lnBSigma: key.lnBSigma } : undefined;
 }
 
 export type AskAbout = { partial: number; expectedHz: number; awayCents: number; fitsPartial: number | null };

@@ -54,8 +54,8 @@ export const noteInput = z.object({
   dropped: partialList.default([]),
   /** Partials that were asked about because they lie far from where they are expected, and are meant as typed. */
   confirmed: partialList.default([]),
-  /** The version that was changed; left out for a note that was not there. */
-  version: z.int().positive().optional(),
+  /** The version that was changed, 0 where there was no note; left out, the note is written whatever is there. */
+  version: z.int().nonnegative().optional(),
 });
 
 export const midiNumber = z.coerce.number().int().min(9).max(120);

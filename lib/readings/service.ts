@@ -9,6 +9,7 @@ import {
   listSheets,
   type NotePlace,
   type NoteRow,
+  type NoteValues,
   noteForUpdate,
   notesOfSheet,
   sheetById,
@@ -253,8 +254,10 @@ async function storeNote(
   const values = fitNote({ midi, input, sheet, instrument, others, path });
   const place: NotePlace = { sheetId: sheet.id, midi, string: stringNumber(input.string), take: input.take };
   const stored = await noteForUpdate(tx, actor.shopId, place);
-  if (stored && input.version !== undefined && input.version !== stored.version) {
-    throw stale("note", noteRecordOf(stored));
+  if (input.version !== undefined && input.version !== (stored?.version ?? 0)) {
+    // The answer to the first sending may have been lost on the way; the same readings again are no change.
+    if (stored && sameReadings(stored, values)) return noteRecordOf(stored);
+    throw stale("note", stored ? noteRecordOf(stored) : null);
   }
   const saved = stored
     ? await updateNote(tx, actor.shopId, place, stored.version, values)
@@ -262,5 +265,14 @@ async function storeNote(
   if (saved) return noteRecordOf(saved);
   // Somebody else put this note here between our look and our write.
   const current = await noteForUpdate(tx, actor.shopId, place);
+  if (current && sameReadings(current, values)) return noteRecordOf(current);
   throw current ? stale("note", noteRecordOf(current)) : notFound("note");
+}
+
+function sameReadings(stored: NoteRow, values: NoteValues): boolean {
+  return (["partials", "hz", "sigmaCents", "kept", "dropped"] as const).every(
+    (column) =>
+      stored[column].length === values[column].length &&
+      stored[column].every((value, index) => value === values[column][index]),
+  );
 }
