@@ -21,7 +21,8 @@ export function Clash({
 }: {
   clash: Overlap;
   locale: string;
-  onTake: (time: string) => void;
+  /** Where another time can be taken from here. */
+  onTake?: (time: string) => void;
 }) {
   return (
     <div className="border-l-3 border-rust! bg-rust-wash py-3 pr-3 pl-4">
@@ -32,7 +33,7 @@ export function Clash({
         </AppLink>
         , {dayWithYear(clash.start, locale)}, {hoursOf(clash, locale)}.
       </p>
-      {clash.free.length > 0 ? (
+      {onTake && clash.free.length > 0 ? (
         <div className="mt-2 flex flex-wrap items-center gap-2">
           <span>Free that day:</span>
           {clash.free.map((time) => (
@@ -42,11 +43,12 @@ export function Clash({
             </Button>
           ))}
         </div>
-      ) : (
+      ) : null}
+      {onTake && clash.free.length === 0 ? (
         <p className="mt-1">
           No time of this length is free between 8:00 and 19:00 that day. Choose another day.
         </p>
-      )}
+      ) : null}
     </div>
   );
 }

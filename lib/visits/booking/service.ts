@@ -3,13 +3,12 @@ import { withShop } from "@/db/client";
 import { bookableMembers, instrumentsAt } from "@/db/queries/visits";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
-import type { Day } from "@/lib/dates";
-import { dayOf } from "@/lib/dates";
+import { type Day, dayOf } from "@/lib/dates";
 import { invalid } from "@/lib/errors";
 import { addMinutes, withOffset } from "@/lib/wall-time";
 import { instrumentName } from "../record";
 import type { VisitPlan, VisitRecord } from "../schema";
-import { bookableSite, createVisit } from "../service";
+import { bookableSite, createVisit, readVisit } from "../service";
 import { siteTime } from "../times";
 
 export type BookingChoices = {
@@ -17,6 +16,13 @@ export type BookingChoices = {
   instruments: { id: string; name: string; room: string; serial: string }[];
   technicians: { id: string; name: string }[];
 };
+
+type Standing = Awaited<ReturnType<typeof instrumentsAt>>[number];
+
+function choice(instrument: Standing) {
+  const { id, room, serial } = instrument;
+  return { id, name: instrumentName(instrument), room, serial };
+}
 
 /** What a visit at this site can be made of. */
 export async function bookingChoices(actor: Actor, siteId: string): Promise<BookingChoices> {
@@ -26,13 +32,35 @@ export async function bookingChoices(actor: Actor, siteId: string): Promise<Book
     const instruments = await instrumentsAt(tx, actor.shopId, siteId);
     return {
       site: { id, name, timeZone, today: dayOf(new Date(), timeZone) },
-      instruments: instruments.map((instrument) => ({
-        id: instrument.id,
-        name: instrumentName(instrument),
-        room: instrument.room,
-        serial: instrument.serial,
-      })),
+      instruments: instruments.map(choice),
       technicians: await bookableMembers(tx, actor.shopId),
+    };
+  });
+}
+
+/** What a visit can still be made of: what is on it already, and what stands at the site today. */
+export async function correctionChoices(actor: Actor, id: string) {
+  authorise(actor, "visits.change");
+  return withShop(actor, async (tx) => {
+    const visit = await readVisit(tx, actor, id);
+    const there = await instrumentsAt(tx, actor.shopId, visit.site.id);
+    const bookable = await bookableMembers(tx, actor.shopId);
+    const onIt = visit.jobs.map((job) => ({
+      id: job.instrumentId,
+      name: job.instrument,
+      room: job.room,
+      serial: "",
+    }));
+    return {
+      visit,
+      instruments: [
+        ...there.map(choice),
+        ...onIt.filter((one) => !there.some((other) => other.id === one.id)),
+      ],
+      technicians: [
+        ...bookable,
+        ...visit.technicians.filter((one) => !bookable.some((other) => other.id === one.id)),
+      ],
     };
   });
 }

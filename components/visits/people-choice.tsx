@@ -1,0 +1,43 @@
+"use client";
+
+import { Checkbox } from "@/components/forms/checkbox";
+import { FieldError } from "@/components/forms/field";
+
+/** Who comes: one or more of those who can be booked. */
+export function PeopleChoice({
+  people,
+  chosen,
+  fixedId,
+  onChange,
+  error,
+}: {
+  people: readonly { id: string; name: string }[];
+  chosen: readonly string[];
+  /** A technician's own name stays ticked: the visits of others are the office's. */
+  fixedId?: string | undefined;
+  onChange: (ids: string[]) => void;
+  error?: string | undefined;
+}) {
+  return (
+    <fieldset className="min-w-0">
+      <legend className="font-medium">Comes</legend>
+      {people.length === 0 ? (
+        <p className="mt-1 text-ink-soft">Nobody can be booked yet. The owner says who can, under Shop.</p>
+      ) : null}
+      <div className="flex flex-wrap gap-x-6">
+        {people.map(({ id, name }) => (
+          <Checkbox
+            key={id}
+            label={name}
+            checked={chosen.includes(id)}
+            disabled={id === fixedId}
+            onChange={(event) =>
+              onChange(event.target.checked ? [...chosen, id] : chosen.filter((other) => other !== id))
+            }
+          />
+        ))}
+      </div>
+      {error ? <FieldError>{error}</FieldError> : null}
+    </fieldset>
+  );
+}
