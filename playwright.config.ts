@@ -1,0 +1,35 @@
+import { defineConfig } from "@playwright/test";
+
+/** `npm test -- browser` starts a server of its own and says where it is. */
+const baseURL = process.env.BASE_URL;
+if (!baseURL) throw new Error("The browser tests need BASE_URL; run them with: npm test -- browser");
+
+export default defineConfig({
+  testDir: "e2e",
+  outputDir: ".local/browser-tests",
+  forbidOnly: true,
+  retries: 0,
+  workers: 2,
+  timeout: 60_000,
+  expect: { timeout: 10_000 },
+  use: {
+    baseURL,
+    browserName: "chromium",
+    locale: "en-GB",
+    timezoneId: "Europe/London",
+    trace: "retain-on-failure",
+    screenshot: "only-on-failure",
+    launchOptions: {
+      executablePath: "/usr/bin/chromium",
+      args: [
+        "--no-sandbox",
+        "--disable-gpu",
+        "--disable-quic",
+        "--no-first-run",
+        "--disable-background-networking",
+        "--disable-component-update",
+        "--disable-sync",
+      ],
+    },
+  },
+});

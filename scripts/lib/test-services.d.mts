@@ -1,0 +1,4 @@
+export function startIntegrationServices(): Promise<{
+  environment: Record<string, string>;
+  dispose(): Promise<void>;
+}>;
