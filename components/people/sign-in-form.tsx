@@ -47,6 +47,7 @@ export function SignInForm({
         <Checkbox
           label="Stay signed in on this device for 30 days"
           className="-mt-2"
+          defaultChecked
           {...state.form.register("stay")}
         />
         <SubmitButton state={state} size="big" busyLabel="Signing in">

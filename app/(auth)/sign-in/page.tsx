@@ -7,7 +7,7 @@ import { StateWord } from "@/components/ui/state-word";
 import { currentPerson } from "@/lib/auth/actor";
 import { ownPath } from "@/lib/auth/next-path";
 import { env } from "@/lib/env";
-import { demoPassword, demoSignIns } from "@/lib/people/demo-sign-ins";
+import { demoSignIns } from "@/lib/people/demo-sign-ins";
 import { signInAction } from "./actions";
 
 export const metadata: Metadata = { title: "Sign in" };
@@ -41,11 +41,7 @@ export default async function SignInPage({
           </StateWord>
         </p>
       ) : null}
-      <SignInForm
-        action={signInAction}
-        next={goTo}
-        demo={env().LOCAL_SERVICES ? { password: demoPassword, people: demoSignIns } : null}
-      />
+      <SignInForm action={signInAction} next={goTo} demo={env().LOCAL_SERVICES ? demoSignIns : null} />
     </AuthPage>
   );
 }

@@ -4,6 +4,8 @@ import * as customers from "./customers/route";
 import * as instrumentAdvice from "./instruments/[id]/advice/route";
 import * as instrumentCompare from "./instruments/[id]/compare/route";
 import * as instrumentSheets from "./instruments/[id]/sheets/route";
+import * as me from "./me/route";
+import * as members from "./members/route";
 import * as planExport from "./plans/[id]/export/route";
 import * as plan from "./plans/[id]/route";
 import * as sheetAnalysis from "./sheets/[id]/analysis/route";
@@ -24,6 +26,8 @@ export const routes: RouteMap = {
   "/instruments/{id}/advice": instrumentAdvice,
   "/instruments/{id}/compare": instrumentCompare,
   "/instruments/{id}/sheets": instrumentSheets,
+  "/me": me,
+  "/members": members,
   "/plans/{id}": plan,
   "/plans/{id}/export": planExport,
   "/sheets/{id}": sheet,

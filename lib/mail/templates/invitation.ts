@@ -1,17 +1,12 @@
+import type { Role } from "@/lib/auth/access";
 import { letter } from "@/lib/mail/layout";
-
-const works: Record<string, string> = {
-  owner: "as an owner",
-  office: "in the office",
-  technician: "as a technician",
-  customer: "to see your instruments and visits",
-};
+import { roleInvited } from "@/lib/people/role-words";
 
 export function invitationMail(input: {
   to: string;
   shopName: string;
   invitedBy: string;
-  role: string;
+  role: Role;
   link: string;
   days: number;
 }) {
@@ -20,10 +15,10 @@ export function invitationMail(input: {
     subject: `${input.shopName} invites you to its service book`,
     heading: `Join ${input.shopName}`,
     paragraphs: [
-      `${input.invitedBy} invites you ${works[input.role] ?? ""} at ${input.shopName}.`,
-      `The link is yours alone and works for ${input.days} days.`,
+      `${input.invitedBy} invites you to ${input.shopName}, ${roleInvited[input.role]}.`,
+      `The link is yours alone, for this address, and works once within ${input.days} days.`,
     ],
-    button: { label: "Accept the invitation", link: input.link },
+    button: { label: "Open the invitation", link: input.link },
     closing: `Sent by Agraffe for ${input.shopName}. If you do not know them, leave this mail alone.`,
   });
 }

@@ -23,6 +23,7 @@ import { requireMail, sendMail } from "@/lib/mail/send";
 import { invitationMail } from "@/lib/mail/templates/invitation";
 import { constraintOf } from "@/lib/people/constraint";
 import type { InvitationInput, InvitationRecord } from "@/lib/people/schema";
+import { signUpPerson } from "@/lib/people/sign-in/service";
 
 const daysOpen = 7;
 
@@ -193,6 +194,31 @@ async function accept(tx: Tx, shopId: string, hash: string, person: Accepting): 
     bookable: row.role === "technician",
   });
   await updateOpenInvitation(tx, shopId, row.id, { acceptedAt: new Date() });
+}
+
+/**
+ * The link proves the address, so the new person's address is the invitation's and not one that is typed.
+ * Should the invitation be used up meanwhile, the person stays and can sign in.
+ */
+export async function acceptAsNewPerson(
+  requestHeaders: Headers,
+  input: { token: string; name: string; password: string },
+): Promise<{ shopId: string }> {
+  const behind = await invitationBehind(input.token);
+  if (!behind) throw notFound("invitation");
+  if (behind.words) throw new AppError("conflict", behind.words);
+  if (behind.addressKnown) {
+    throw new AppError(
+      "conflict",
+      `${behind.email} has a sign-in already. Sign in with it, then accept the invitation.`,
+    );
+  }
+  const person = await signUpPerson(
+    requestHeaders,
+    { name: input.name, email: behind.email, password: input.password },
+    [behind.shopName],
+  );
+  return acceptInvitation(person, input.token);
 }
 
 function alreadyMember(): AppError {

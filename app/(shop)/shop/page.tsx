@@ -1,0 +1,45 @@
+import type { Metadata } from "next";
+import { redirect } from "next/navigation";
+import { ShopFactsForm } from "@/components/people/shop-facts-form";
+import { WorkHead } from "@/components/shell/spread";
+import { may } from "@/lib/auth/access";
+import { currentPerson } from "@/lib/auth/actor";
+import { countryChoices, currencyChoices, timeZoneChoices } from "@/lib/shop/choices";
+import { currencyCodes, locales } from "@/lib/shop/places";
+import { getShopSettings } from "@/lib/shop/service";
+import { styleWords } from "@/lib/shop/style-words";
+import { changeShopAction } from "./actions";
+
+export const metadata: Metadata = { title: "Shop" };
+
+export default async function ShopPage() {
+  const person = await currentPerson();
+  if (!person) redirect("/sign-in?next=%2Fshop");
+  if (!person.actor) redirect("/open-shop");
+  if (!may(person.actor.role, "styles.read")) redirect("/shop/account");
+  const { shop, houseStyles } = await getShopSettings(person.actor);
+  const canChange = may(person.actor.role, "shop.change");
+  return (
+    <>
+      <WorkHead
+        title="Facts about the shop"
+        summary={
+          canChange
+            ? "What new customers, instruments and visits begin with."
+            : "What new customers, instruments and visits begin with. An owner changes these."
+        }
+      />
+      <ShopFactsForm
+        key={shop.version}
+        action={changeShopAction}
+        shop={shop}
+        canChange={canChange}
+        countries={countryChoices()}
+        currencies={currencyChoices(currencyCodes)}
+        timeZones={timeZoneChoices()}
+        locales={locales}
+        styles={[...styleWords, ...houseStyles.map(({ id, name }) => ({ value: id, label: name }))]}
+      />
+    </>
+  );
+}
