@@ -12,6 +12,7 @@ export type {
   Verdict,
   VisitReadings,
 } from "./compare-types";
+export { studentQuantile } from "./distributions";
 export type { Expectation, Expected, FrequencyCheck } from "./expected";
 export { ASK_BEYOND_CENTS, checkFrequency, expectedPartial } from "./expected";
 export { fit } from "./fit";

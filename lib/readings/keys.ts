@@ -2,5 +2,4 @@
 export const readingKeys = {
   sheets: (instrumentId: string) => ["instruments", instrumentId, "sheets"] as const,
   sheet: (sheetId: string) => ["sheets", sheetId] as const,
-  analysis: (sheetId: string, choices: unknown) => ["sheets", sheetId, "analysis", choices] as const,
 };

@@ -1,0 +1,22 @@
+/** Names of intervals as people say them; the figures are the coincident partials, lower to upper. */
+export const intervalWords: Record<string, string> = {
+  "minor-third": "Minor thirds 6:5",
+  "major-third": "Major thirds 5:4",
+  fourth: "Fourths 4:3",
+  fifth: "Fifths 3:2",
+  "fifth-6-4": "Fifths 6:4",
+  "minor-sixth": "Minor sixths 8:5",
+  "major-sixth": "Major sixths 5:3",
+  "octave-2-1": "Octaves 2:1",
+  "octave-4-2": "Octaves 4:2",
+  "octave-6-3": "Octaves 6:3",
+  "octave-8-4": "Octaves 8:4",
+  "octave-10-5": "Octaves 10:5",
+  "octave-12-6": "Octaves 12:6",
+  "major-tenth": "Major tenths 5:2",
+  twelfth: "Twelfths 3:1",
+  "twelfth-6-2": "Twelfths 6:2",
+  "double-octave-4-1": "Double octaves 4:1",
+  "double-octave-8-2": "Double octaves 8:2",
+  "triple-octave-8-1": "Triple octaves 8:1",
+};
