@@ -6,7 +6,7 @@ const standingHeaders = [
   { key: "X-Content-Type-Options", value: "nosniff" },
   { key: "Referrer-Policy", value: "same-origin" },
   { key: "Cross-Origin-Opener-Policy", value: "same-origin" },
-  { key: "Permissions-Policy", value: "microphone=(self), camera=(self), geolocation=(self), payment=()" },
+  { key: "Permissions-Policy", value: "microphone=(self), camera=(self), geolocation=(), payment=()" },
 ];
 
 /** @type {import("next").NextConfig} */

@@ -21,6 +21,8 @@ import { useRowKeys } from "./use-row-keys";
 
 type Features = typeof ledgerFeatures;
 
+const usualWidth = 104;
+
 const from = { sm: "max-sm:hidden", lg: "max-lg:hidden", xl: "max-xl:hidden" } as const;
 
 /** On the phone a row is two lines: title and aside, then the other cells in a run, the last one at the end. */
@@ -59,7 +61,6 @@ export function LedgerTable<Row extends LedgerRow>({
   const byId = useMemo(() => new Map(columns.map((column) => [column.id, column])), [columns]);
   const keys = useRowKeys({ ids, onChoose: selectable ? onChoose : null });
   const visible = table.getVisibleLeafColumns();
-  const total = visible.reduce((sum, column) => sum + (byId.get(column.id)?.width ?? 1), 0);
   const titleId = (columns.find((column) => column.phone === "title") ?? columns[0])?.id;
   const chosenCount = ids.filter((id) => selection[id]).length;
 
@@ -76,7 +77,7 @@ export function LedgerTable<Row extends LedgerRow>({
               role="columnheader"
               className="sticky top-0 z-10 w-9 border-b border-edge bg-sheet p-0 text-left"
             >
-              <label htmlFor={allId} className="flex h-8 items-center pl-2.5 touch:h-11">
+              <label htmlFor={allId} data-no-print className="flex h-8 items-center pl-2.5 touch:h-11">
                 <CheckMark
                   id={allId}
                   className="size-4!"
@@ -97,10 +98,8 @@ export function LedgerTable<Row extends LedgerRow>({
               <th
                 key={header.id}
                 role="columnheader"
-                // The title takes what the others leave, so columns left out on narrow screens leave no hole.
-                style={
-                  column.id === titleId ? undefined : { width: `${((column.width ?? 1) / total) * 100}%` }
-                }
+                // In pixels, so that figures and dates stay whole on every width; the title takes what they leave.
+                style={column.id === titleId ? undefined : { width: column.width ?? usualWidth }}
                 aria-sort={column.sortable ? (sorted ?? "none") : undefined}
                 className={cx(
                   "sticky top-0 z-10 h-8 border-b border-edge bg-sheet pr-3 pl-0 text-12 font-medium text-ink-soft last:pr-2",
@@ -215,6 +214,7 @@ function Line<Row extends LedgerRow>({
         >
           <label
             htmlFor={checkId}
+            data-no-print
             className="flex h-[35px] items-center pl-2.5 sm:touch:h-[43px] phone:h-full phone:w-12 phone:pl-4"
           >
             <CheckMark

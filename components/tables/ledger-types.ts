@@ -9,7 +9,7 @@ export type LedgerColumn<Row extends LedgerRow> = {
   align?: "left" | "right";
   /** The server can sort by it under this id. */
   sortable?: boolean;
-  /** Share of the width against the other columns; 1 if not given. */
+  /** Pixels, 104 if not given: room for an amount, a date or a state word. The title takes what is left. */
   width?: number;
   /** Narrower than this the column is left out: sm 640, lg 1024, xl 1280. */
   from?: "sm" | "lg" | "xl";
