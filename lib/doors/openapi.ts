@@ -110,10 +110,12 @@ const problemSchema = {
 
 /** OpenAPI 3.1 from the very schemas that validate. */
 export function openApi(routes: RouteMap, serverUrl: string) {
-  const paths = Object.entries(routes).map(([path, module]) => [
-    path,
-    Object.fromEntries(doorsOf(module).map((door) => [door.method.toLowerCase(), operation(path, door)])),
-  ]);
+  const paths: Record<string, Record<string, ReturnType<typeof operation>>> = {};
+  for (const [path, module] of Object.entries(routes)) {
+    paths[path] = Object.fromEntries(
+      doorsOf(module).map((door) => [door.method.toLowerCase(), operation(path, door)]),
+    );
+  }
   return {
     openapi: "3.1.0",
     info: {
@@ -124,7 +126,7 @@ export function openApi(routes: RouteMap, serverUrl: string) {
     },
     servers: [{ url: serverUrl }],
     security: [{ session: [] }],
-    paths: Object.fromEntries(paths),
+    paths,
     components: {
       securitySchemes: { session: { type: "apiKey", in: "cookie", name: "agraffe.session_token" } },
       schemas: { Problem: problemSchema },

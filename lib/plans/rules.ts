@@ -1,5 +1,7 @@
 import type { BuiltInStyle, Temperament, TemperamentName } from "@/lib/acoustics/types";
 
+export const builtInNames = ["close", "even", "wide", "published"] as const satisfies readonly BuiltInStyle[];
+
 export const builtInWords: Record<BuiltInStyle, { title: string; words: string }> = {
   close: { title: "Close", words: "Octaves kept near their low coincidences: least stretch." },
   even: { title: "Even", words: "Octaves, twelfths and double octaves share the compromise." },

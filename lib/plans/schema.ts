@@ -43,7 +43,7 @@ export const styleRecord = styleFields.extend({
   version: z.int(),
 });
 export const styleList = z.object({
-  builtIn: z.array(z.object({ name: z.string(), words: z.string() })),
+  builtIn: z.array(z.object({ name: z.enum(["close", "even", "wide", "published"]), words: z.string() })),
   house: z.array(styleRecord),
   defaultStyle: z.string(),
   canChange: z.boolean(),

@@ -8,7 +8,7 @@ import { authorise } from "@/lib/auth/authorise";
 import { isUniqueViolation } from "@/lib/database-errors";
 import { AppError, invalid, notFound, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
-import { builtInWords } from "../rules";
+import { builtInNames, builtInWords } from "../rules";
 import type { NewStyle, StyleChange, StyleList, StyleRecord } from "../schema";
 
 type Row = NonNullable<Awaited<ReturnType<typeof styleById>>>;
@@ -22,7 +22,7 @@ const nameTaken = () => invalid({ name: "Another style of this shop has this nam
 export async function getStyles(actor: Actor): Promise<StyleList> {
   authorise(actor, "styles.read");
   return withShop(actor, async (tx) => ({
-    builtIn: Object.entries(builtInWords).map(([name, { words }]) => ({ name, words })),
+    builtIn: builtInNames.map((name) => ({ name, words: builtInWords[name].words })),
     house: (await listStyles(tx, actor.shopId)).map(record),
     defaultStyle: await defaultStyleOf(tx, actor.shopId),
     canChange: may(actor.role, "styles.change"),

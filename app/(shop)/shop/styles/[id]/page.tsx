@@ -1,0 +1,29 @@
+import type { Metadata } from "next";
+import { notFound } from "next/navigation";
+import { WorkHead } from "@/components/shell/spread";
+import { StyleEditor } from "@/components/styles/style-editor";
+import { staffActor } from "@/lib/pages/page-actor";
+import { getStyles } from "@/lib/plans/styles/service";
+import { changeStyleAction, createStyleAction } from "../actions";
+
+export const metadata: Metadata = { title: "House style" };
+
+export default async function StylePage({ params }: PageProps<"/shop/styles/[id]">) {
+  const styles = await getStyles(await staffActor());
+  const { id } = await params;
+  const style = styles.house.find((candidate) => candidate.id === id);
+  if (!style) notFound();
+  return (
+    <>
+      <WorkHead title={style.name} summary="Plans already kept stay as they were computed." />
+      <StyleEditor
+        key={style.version}
+        style={style}
+        saved={{ id, version: style.version }}
+        canChange={styles.canChange}
+        create={createStyleAction}
+        change={changeStyleAction}
+      />
+    </>
+  );
+}
