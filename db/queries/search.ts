@@ -7,16 +7,12 @@ export type Kind = "customer" | "site" | "instrument";
 /** "own" is a customer's session. */
 export type Reach = "all" | "own";
 
-/** Most ids a list's search may match: beyond that the words are too common to be a search. */
-const mostMatches = 2000;
-
 /**
- * A list's search condition. Staff go through search_shop, which may use the trigram index under the walls;
+ * A list's search condition. Staff go through search_matches, which may use the trigram index under the walls;
  * it answers no customer's session, which searches the few rows it may see by the search text itself.
  */
 export function matching(kind: Kind, id: PgColumn, query: string, archived: boolean): SQL {
-  return sql`${id} in (select found.id
-    from search_shop(${query}, array[${kind}]::text[], ${mostMatches}, ${archived}) as found)`;
+  return sql`${id} in (select found.id from search_matches(${query}, array[${kind}]::text[], ${archived}) as found)`;
 }
 
 export function matchingOwn(words: SQL, query: string): SQL {
