@@ -35,6 +35,8 @@ export type Solution = {
 /** Highest B any piano string comes near: C8 is about 0.02. */
 export const LARGEST_B = 0.3;
 const MOST_ITERATIONS = 60;
+/** What is left of the error when the iteration stops, as a share of B. */
+const PRECISION = 1e-9;
 
 /** Lowest B tried: keeps 1 + B·n² well above 0 for every partial of the sheet. */
 export function smallestB(largestSquare: number): number {
@@ -86,8 +88,7 @@ let scratch = new Float64Array(64);
 export function solve(sheet: Sheet, mask: Uint8Array, startB: number, skip = -1): Solution {
   const { count, squares, cents, weights } = sheet;
   if (scratch.length < 2 * count) scratch = new Float64Array(4 * count);
-  const residual = scratch.subarray(0, count);
-  const slope = scratch.subarray(count, 2 * count);
+  const work = scratch;
   let used = 0;
   let largest = 1;
   for (let i = 0; i < count; i += 1) {
@@ -100,6 +101,7 @@ export function solve(sheet: Sheet, mask: Uint8Array, startB: number, skip = -1)
   let b = Math.min(Math.max(startB, lowest), LARGEST_B);
   let previousB = b;
   let previousChi2 = Number.POSITIVE_INFINITY;
+  let previousStep = 0;
   let c = 0;
   let weightSum = 0;
   let slopeMean = 0;
@@ -117,10 +119,11 @@ export function solve(sheet: Sheet, mask: Uint8Array, startB: number, skip = -1)
       if (mask[i] !== 1 || i === skip) continue;
       const square = squares[i] ?? 0;
       const w = weights[i] ?? 0;
-      const r = (cents[i] ?? 0) - CENTS_PER_LN_SQUARE * Math.log((1 + b * square) / onePlusB);
-      const g = (slopeFactor * (square - 1)) / (1 + b * square);
-      residual[i] = r;
-      slope[i] = g;
+      const stiff = 1 + b * square;
+      const r = (cents[i] ?? 0) - CENTS_PER_LN_SQUARE * Math.log(stiff / onePlusB);
+      const g = (slopeFactor * (square - 1)) / stiff;
+      work[2 * i] = r;
+      work[2 * i + 1] = g;
       weightSum += w;
       sumR += w * r;
       sumG += w * g;
@@ -133,8 +136,8 @@ export function solve(sheet: Sheet, mask: Uint8Array, startB: number, skip = -1)
     for (let i = 0; i < count; i += 1) {
       if (mask[i] !== 1 || i === skip) continue;
       const w = weights[i] ?? 0;
-      const r = (residual[i] ?? 0) - c;
-      const g = (slope[i] ?? 0) - slopeMean;
+      const r = (work[2 * i] ?? 0) - c;
+      const g = (work[2 * i + 1] ?? 0) - slopeMean;
       information += w * g * g;
       gradient += w * g * r;
       chi2 += w * r * r;
@@ -146,8 +149,16 @@ export function solve(sheet: Sheet, mask: Uint8Array, startB: number, skip = -1)
       continue;
     }
     const step = gradient / information;
+    const contraction = Math.min(1, Math.abs(step / previousStep));
+    if (Math.abs(step) * contraction <= PRECISION * Math.abs(b) + 1e-15) {
+      // The next step would be this one times the contraction: taking it to first order is precise enough.
+      b += step;
+      c -= slopeMean * step;
+      chi2 = Math.max(0, chi2 - gradient * step);
+      break;
+    }
+    previousStep = step;
     const next = Math.min(Math.max(b + step, 0.5 * (b + lowest)), 0.5 * (b + LARGEST_B));
-    if (Math.abs(next - b) <= 1e-11 * Math.abs(b) + 1e-15) break;
     previousB = b;
     previousChi2 = chi2;
     b = next;

@@ -19,7 +19,8 @@ export function irregularitySigma(midi: number): number {
 
 /** Total standard deviation assumed for a reading that comes without one, cents. */
 export function assumedSigma(midi: number): number {
-  return Math.hypot(MEASURING_SIGMA, irregularitySigma(midi));
+  const irregularity = irregularitySigma(midi);
+  return Math.sqrt(MEASURING_SIGMA * MEASURING_SIGMA + irregularity * irregularity);
 }
 
 /** Weight of the assumed scatter, in degrees of freedom, when one reading is judged against the others. */

@@ -1,6 +1,6 @@
 import { chiSquareUpperTail } from "./distributions";
 import { assumedSigma } from "./fit-prior";
-import type { FitResult, FitWarning, Quality } from "./types";
+import type { FitResult, Quality } from "./types";
 
 type Judged = Pick<
   FitResult,
@@ -27,12 +27,13 @@ export function scattersTooMuch(
  */
 export function qualityOf(result: Judged): Quality {
   const { b, bSigma, bHigh, used, rejected } = result;
-  const has = (warning: FitWarning) => result.warnings.includes(warning);
+  const { warnings } = result;
   const mistakes = rejected.filter(({ reason }) => reason !== "dropped-by-hand" && reason !== "beyond-range");
   if (b === null || bSigma === null || bHigh === null || bHigh <= 0) return "repeat";
-  if (has("scatter-exceeds-sigma") || mistakes.length * 3 >= used.length + mistakes.length) return "repeat";
+  if (warnings.includes("scatter-exceeds-sigma") || mistakes.length * 3 >= used.length + mistakes.length)
+    return "repeat";
   const share = bSigma / Math.abs(b);
   if (result.dof === 0 && share > 0.3) return "repeat";
   if (result.dof < 2 || share > 0.1 || mistakes.length > 1) return "usable";
-  return has("ambiguous-outlier") || has("kept-off-curve") ? "usable" : "good";
+  return warnings.includes("ambiguous-outlier") || warnings.includes("kept-off-curve") ? "usable" : "good";
 }

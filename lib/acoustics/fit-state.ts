@@ -1,3 +1,4 @@
+import { HIGHEST_PARTIAL } from "./checks-of-input";
 import { residualAt, type Sheet } from "./fit-core";
 import { assumedSigma, typicalB } from "./fit-prior";
 import { type SelectionInput, select } from "./fit-selection";
@@ -75,10 +76,8 @@ export function prepare(input: FitInput): FitState {
 }
 
 function keepToRange(readings: readonly Reading[], state: FitState, maxPartial: number): void {
-  const inRange = new Set(
-    readings.flatMap(({ partial }, i) => (state.open[i] === 1 && partial <= maxPartial ? [partial] : [])),
-  );
-  if (inRange.size < 3) return;
+  if (!readings.some(({ partial }) => partial > maxPartial)) return;
+  if (distinctPartials(readings, state, maxPartial) < 3) return;
   readings.forEach(({ partial }, i) => {
     if (partial <= maxPartial || state.open[i] !== 1 || state.kept[i] === 1) return;
     state.open[i] = 0;
@@ -86,20 +85,22 @@ function keepToRange(readings: readonly Reading[], state: FitState, maxPartial: 
   });
 }
 
-/** Of several readings of one partial only the one nearest to the curve of the others takes part. */
+/**
+ * Of several readings of one partial only the one nearest to the curve of the others takes part, also when a person keeps
+ * that partial: every fit then rests on different partials.
+ */
 function setDuplicatesAside(readings: readonly Reading[], state: FitState): void {
+  if (distinctPartials(readings, state) === takingPart(state)) return;
   const groups = new Map<number, number[]>();
   readings.forEach(({ partial }, i) => {
-    if (state.open[i] !== 1 || state.kept[i] === 1) return;
+    if (state.open[i] !== 1) return;
     const group = groups.get(partial);
     if (group) group.push(i);
     else groups.set(partial, [i]);
   });
   const repeated = [...groups.values()].filter((group) => group.length > 1);
-  if (repeated.length === 0) return;
   for (const i of repeated.flat()) state.open[i] = 0;
-  const others = new Set(readings.flatMap(({ partial }, i) => (state.open[i] === 1 ? [partial] : [])));
-  const curve = others.size < 2 ? null : select(state).solution;
+  const curve = distinctPartials(readings, state) < 2 ? null : select(state).solution;
   for (const group of repeated) {
     const distance = (i: number) => (curve ? Math.abs(residualAt(state.sheet, i, curve)) : 0);
     const best = group.reduce((nearest, i) => (distance(i) < distance(nearest) ? i : nearest));
@@ -110,7 +111,26 @@ function setDuplicatesAside(readings: readonly Reading[], state: FitState): void
   }
 }
 
-/** How many different partials take part. */
-export function distinctPartials({ readings }: FitInput, { open }: FitState): number {
-  return new Set(readings.flatMap(({ partial }, i) => (open[i] === 1 ? [partial] : []))).size;
+/** How many different partials, up to `maxPartial`, take part. */
+export function distinctPartials(
+  readings: readonly Reading[],
+  { open }: FitState,
+  maxPartial: number = HIGHEST_PARTIAL,
+): number {
+  const seen = new Uint8Array(HIGHEST_PARTIAL + 1);
+  let distinct = 0;
+  for (let i = 0; i < readings.length; i += 1) {
+    const partial = readings[i]?.partial ?? 0;
+    if (open[i] !== 1 || partial > maxPartial || seen[partial] === 1) continue;
+    seen[partial] = 1;
+    distinct += 1;
+  }
+  return distinct;
+}
+
+/** How many readings take part. */
+export function takingPart({ open }: FitState): number {
+  let total = 0;
+  for (let i = 0; i < open.length; i += 1) total += open[i] ?? 0;
+  return total;
 }

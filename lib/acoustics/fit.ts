@@ -6,7 +6,7 @@ import { qualityOf, scattersTooMuch } from "./fit-quality";
 import { rejectionOf } from "./fit-reasons";
 import { offCurveRatio, type Selection, select } from "./fit-selection";
 import { fitOneReading } from "./fit-single";
-import { distinctPartials, type FitState, prepare } from "./fit-state";
+import { distinctPartials, type FitState, prepare, takingPart } from "./fit-state";
 import type { FitInput, FitResult, FitWarning, Reading, Rejection } from "./types";
 
 /** No sheet is better than this, cents: typed digits and the tuning instrument itself. */
@@ -32,7 +32,7 @@ const SIGMA_FLOOR = 0.05;
 export function fit(input: FitInput): FitResult {
   checkFitInput(input);
   const state = prepare(input);
-  const chosen = distinctPartials(input, state) < 2 ? null : choose(state);
+  const chosen = distinctPartials(input.readings, state) < 2 ? null : choose(state);
   return chosen === null ? fitOneReading(input.readings, state) : report(input, state, chosen);
 }
 
@@ -42,7 +42,7 @@ type Chosen = Selection & { scatters: boolean };
 function choose(state: FitState): Chosen | null {
   const selection = select(state);
   const { solution } = selection;
-  const total = state.open.reduce((sum, flag) => sum + flag, 0);
+  const total = takingPart(state);
   if (total === 2 && solution.chi2 > 1e-6) return null;
   const tooMany = Math.max(1, total / 3);
   if (!state.sigmaGiven || total - solution.used <= tooMany) return { ...selection, scatters: false };
@@ -66,7 +66,8 @@ function scaleAssumed(
   const floor = (SIGMA_FLOOR / assumedSigma(state.midi)) ** 2;
   let solution = first;
   let dof = INTERVAL_PRIOR_DOF;
-  const rounds = mask.every((used, i) => used !== 1 || assumed[i] === 1) ? 1 : 8;
+  const allAssumed = mask.every((used, i) => used !== 1 || assumed[i] === 1);
+  const rounds = allAssumed ? 1 : 8;
   for (let round = 0; round < rounds; round += 1) {
     let own = 0;
     let chi2 = 0;
@@ -76,6 +77,7 @@ function scaleAssumed(
       own += 1 - (weights[i] ?? 0) * curveVariance(sheet.squares[i] ?? 0, solution);
       chi2 += (state.sheet.weights[i] ?? 0) * r * r;
     }
+    if (allAssumed) own = solution.used - 2;
     const prior = Math.max(0, INTERVAL_PRIOR_DOF - own);
     dof = prior + own;
     const scale = Math.max(floor, (prior + chi2) / dof);
@@ -107,20 +109,21 @@ function report(
   const rejected: Rejection[] = [];
   const residuals: FitResult["residuals"] = [];
   let keptOffCurve = false;
+  let nMax = 0;
   let squares = 0;
   let chi2 = 0;
-  readings.forEach(({ partial }, i) => {
-    const cents = residualAt(sheet, i, { b, c });
+  for (let i = 0; i < sheet.count; i += 1) {
+    const partial = readings[i]?.partial ?? 0;
+    const cents = residualAt(sheet, i, scaled.solution);
     residuals.push({ partial, cents });
     if (mask[i] === 1) {
       used.push(partial);
+      if (partial > nMax) nMax = partial;
       squares += cents * cents;
       chi2 += (sheet.weights[i] ?? 0) * cents * cents;
       if (state.kept[i] === 1 && offCurveRatio(state, mask, solution, i) > 1) keptOffCurve = true;
-      return;
-    }
-    rejected.push(rejectionOf(partial, cents, state, i, { f1Hz, b }));
-  });
+    } else rejected.push(rejectionOf(partial, cents, state, i, { f1Hz, b }));
+  }
   const dof = used.length - 2;
   const rmsCents = Math.sqrt(squares / used.length);
 
@@ -134,7 +137,7 @@ function report(
   if (scatters || scattersTooMuch({ chi2, dof, rmsCents }, midi, sigmaGiven)) {
     warnings.push("scatter-exceeds-sigma");
   }
-  const result = {
+  const result: FitResult = {
     f1Hz,
     f1SigmaCents: Math.sqrt(f1Variance),
     b,
@@ -145,26 +148,28 @@ function report(
     rmsCents,
     chi2,
     dof,
-    nMax: Math.max(...used),
+    nMax,
     used,
     rejected,
     residuals,
+    quality: "usable",
     warnings,
   };
-  return { ...result, quality: qualityOf(result) };
+  result.quality = qualityOf(result);
+  return result;
 }
 
 /** In the bass the first partial is weak: says when more than half of f1 rests on it alone. */
 function hangsOnFirstPartial(
   { sheet, midi }: FitState,
   mask: Uint8Array,
-  { weightSum, slopeMean, information, b }: Solution,
+  { weightSum, slopeMean, information }: Solution,
   readings: readonly Reading[],
 ): boolean {
   if (midi > LAST_KEY_WITH_WEAK_FIRST_PARTIAL) return false;
   const i = readings.findIndex(({ partial }, index) => partial === 1 && mask[index] === 1);
   if (i < 0) return false;
-  const slopeAtOne = -slopeMean;
-  const share = (sheet.weights[i] ?? 0) * (1 / weightSum - (slopeMean * slopeAtOne) / information);
-  return b !== 0 && share > 0.5;
+  // dI_1/dB is 0, so the first partial stands one mean slope away from the centre.
+  const share = (sheet.weights[i] ?? 0) * (1 / weightSum + (slopeMean * slopeMean) / information);
+  return share > 0.5;
 }
