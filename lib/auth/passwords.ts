@@ -45,21 +45,47 @@ export function passwordFault(
   if (new Set(plain).size < 5) return "This repeats a few characters. Choose something less regular.";
   if (/^(.{1,8})\1+$/u.test(plain)) return "This repeats one piece. Choose something less regular.";
   if (isRun(plain)) return "This is a run of neighbouring characters. Choose something less regular.";
-  for (const word of common) {
-    if (guessableRest(plain, word, shortest))
-      return "This is built on one of the commonest passwords. Choose another.";
-  }
-  for (const word of options.context ?? []) {
-    const name = word.toLowerCase().replace(/[^\p{L}\p{N}]/gu, "");
-    if (name.length >= 4 && guessableRest(plain, name, shortest))
-      return "This is mostly your name, address or shop. Add words a stranger would not guess.";
-  }
+  if (isGuessable(plain, common, shortest))
+    return "This is built on one of the commonest passwords. Choose another.";
+  const names = (options.context ?? [])
+    .map((word) => word.toLowerCase().replace(/[^\p{L}\p{N}]/gu, ""))
+    .filter((name) => name.length >= 4);
+  if (isGuessable(plain, [...names, ...common], shortest))
+    return "This is mostly your name, address or shop. Add words a stranger would not guess.";
   return null;
 }
 
-/** Whether so little is left beside the word that knowing the word gives the password away. */
-function guessableRest(plain: string, word: string, shortest: number): boolean {
-  return plain.includes(word) && plain.replaceAll(word, "").length < shortest / 2;
+/** Whether so little is left beside known words and runs that knowing them gives the password away. */
+function isGuessable(plain: string, words: readonly string[], shortest: number): boolean {
+  const longestFirst = words.filter((word) => plain.includes(word)).sort((a, b) => b.length - a.length);
+  if (longestFirst.length === 0) return false;
+  const rest = longestFirst.reduce((left, word) => left.replaceAll(word, " "), plain);
+  return withoutRuns(rest).replaceAll(" ", "").length < shortest / 2;
+}
+
+/** Takes out what counts up, counts down or repeats over four characters or more: "1234", "dcba", "1111". */
+function withoutRuns(text: string): string {
+  const characters = [...text];
+  let kept = "";
+  for (let at = 0; at < characters.length; ) {
+    const length = runLength(characters, at);
+    if (length < 4) kept += characters[at];
+    at += length < 4 ? 1 : length;
+  }
+  return kept;
+}
+
+function runLength(characters: readonly string[], from: number): number {
+  const step = stepAt(characters, from);
+  if (!(Math.abs(step) <= 1)) return 1;
+  let length = 2;
+  while (stepAt(characters, from + length - 1) === step) length++;
+  return length;
+}
+
+function stepAt(characters: readonly string[], at: number): number {
+  const [here, next] = [characters[at]?.codePointAt(0), characters[at + 1]?.codePointAt(0)];
+  return here === undefined || next === undefined ? Number.NaN : next - here;
 }
 
 function isRun(plain: string): boolean {

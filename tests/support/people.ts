@@ -52,8 +52,8 @@ export function newBrowser(options: { address?: string; origin?: string } = {}) 
       if (/max-age=0/i.test(line)) cookies.delete(name);
       else cookies.set(name, value);
     }
-    const text = await response.text();
-    return { status: response.status, body: text ? JSON.parse(text) : null, set };
+    const isJson = /json/.test(response.headers.get("content-type") ?? "");
+    return { status: response.status, body: isJson ? await response.json() : null, set };
   }
 
   return {
