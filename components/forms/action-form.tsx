@@ -20,7 +20,14 @@ export function ActionForm({
   label?: string;
 }) {
   return (
-    <form noValidate onSubmit={state.submit} className={cx("grid gap-4", className)} aria-label={label}>
+    // "post", so that a press before the scripts are there cannot put what was typed into the address.
+    <form
+      method="post"
+      noValidate
+      onSubmit={state.submit}
+      className={cx("grid gap-4", className)}
+      aria-label={label}
+    >
       <FormError state={state} />
       {children}
     </form>

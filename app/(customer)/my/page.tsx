@@ -2,6 +2,7 @@ import type { Metadata } from "next";
 import { signOutAction } from "@/app/(auth)/sign-out/actions";
 import { SignOutButton } from "@/components/people/sign-out-button";
 import { CustomerPage } from "@/components/shell/customer-page";
+import { LinkButton } from "@/components/ui/button";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { CustomerInstruments } from "@/components/visits/customer-instruments";
 import { CustomerVisits, NextVisit } from "@/components/visits/customer-visits";
@@ -48,7 +49,8 @@ export default async function OwnPage() {
         shopName={actor.shopName}
       />
       <CustomerVisits title="Visits until now" visits={past} locale={clock.locale} />
-      <div className="mt-10">
+      <div className="mt-10 flex flex-wrap items-center gap-2">
+        <LinkButton href="/shop/account">Your account</LinkButton>
         <SignOutButton action={signOutAction} />
       </div>
     </CustomerPage>

@@ -1,27 +1,28 @@
-import { redirect } from "next/navigation";
 import type { ReactNode } from "react";
 import { LeftPage, RightPage, Spread } from "@/components/shell/spread";
 import { Tabs } from "@/components/shell/tabs";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { Facts } from "@/components/ui/facts";
 import { may } from "@/lib/auth/access";
-import { currentPerson } from "@/lib/auth/actor";
+import { signedInActor } from "@/lib/pages/page-actor";
 import { roleMeaning, roleWords } from "@/lib/people/role-words";
 import { getShop } from "@/lib/shop/service";
 
 /** The shop's settings and the person's own, on facing pages: who the shop is, and what can be changed. */
 export default async function ShopSettingsLayout({ children }: { children: ReactNode }) {
-  const person = await currentPerson();
-  if (!person) redirect("/sign-in?next=%2Fshop");
-  if (!person.actor) redirect("/open-shop");
-  const { actor } = person;
+  const actor = await signedInActor();
   const shop = await getShop(actor);
   const regions = new Intl.DisplayNames("en-GB", { type: "region" });
   const staff = may(actor.role, "team.read");
   return (
     <Spread
       left={
-        <LeftPage title={shop.name} subtitle="The shop" aside={shop.demo ? <DemoBadge /> : undefined}>
+        <LeftPage
+          crumb={staff ? undefined : [{ label: "Your instruments and visits", href: "/my" }]}
+          title={shop.name}
+          subtitle="The shop"
+          aside={shop.demo ? <DemoBadge /> : undefined}
+        >
           <Facts
             facts={[
               { name: "Country", value: regions.of(shop.country) },
@@ -32,7 +33,7 @@ export default async function ShopSettingsLayout({ children }: { children: React
           />
           <Facts
             facts={[
-              { name: "You", value: person.name },
+              { name: "You", value: actor.name },
               { name: "Role", value: roleWords[actor.role] },
               { name: "May do", value: roleMeaning[actor.role] },
             ]}

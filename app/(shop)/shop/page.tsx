@@ -3,7 +3,7 @@ import { redirect } from "next/navigation";
 import { ShopFactsForm } from "@/components/people/shop-facts-form";
 import { WorkHead } from "@/components/shell/spread";
 import { may } from "@/lib/auth/access";
-import { currentPerson } from "@/lib/auth/actor";
+import { signedInActor } from "@/lib/pages/page-actor";
 import { countryChoices, currencyChoices, timeZoneChoices } from "@/lib/shop/choices";
 import { currencyCodes, locales } from "@/lib/shop/places";
 import { getShopSettings } from "@/lib/shop/service";
@@ -13,12 +13,10 @@ import { changeShopAction } from "./actions";
 export const metadata: Metadata = { title: "Shop" };
 
 export default async function ShopPage() {
-  const person = await currentPerson();
-  if (!person) redirect("/sign-in?next=%2Fshop");
-  if (!person.actor) redirect("/open-shop");
-  if (!may(person.actor.role, "styles.read")) redirect("/shop/account");
-  const { shop, houseStyles } = await getShopSettings(person.actor);
-  const canChange = may(person.actor.role, "shop.change");
+  const actor = await signedInActor();
+  if (!may(actor.role, "styles.read")) redirect("/shop/account");
+  const { shop, houseStyles } = await getShopSettings(actor);
+  const canChange = may(actor.role, "shop.change");
   return (
     <>
       <WorkHead

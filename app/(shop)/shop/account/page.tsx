@@ -10,6 +10,7 @@ import { PageSection } from "@/components/shell/page-section";
 import { WorkHead } from "@/components/shell/spread";
 import { currentPerson } from "@/lib/auth/actor";
 import { showInstant } from "@/lib/dates";
+import { signedInActor } from "@/lib/pages/page-actor";
 import { listSessions } from "@/lib/people/account/service";
 import { deviceWords } from "@/lib/people/device";
 import { roleWords } from "@/lib/people/role-words";
@@ -29,10 +30,9 @@ import {
 export const metadata: Metadata = { title: "Your account" };
 
 export default async function AccountPage() {
+  const actor = await signedInActor();
   const person = await currentPerson();
-  if (!person) redirect("/sign-in?next=%2Fshop%2Faccount");
-  if (!person.actor) redirect("/open-shop");
-  const { actor } = person;
+  if (!person) redirect("/sign-in");
   const [shop, sessions] = await Promise.all([getShop(actor), listSessions(actor, await headers())]);
   const at = (instant: string) => showInstant(instant, shop.locale, shop.timeZone);
   return (
@@ -66,7 +66,7 @@ export default async function AccountPage() {
             endOthersAction={endOtherSessionsAction}
           />
         </PageSection>
-        <PageSection title="Your shops">
+        <PageSection title={<span id="shops">Your shops</span>}>
           <ShopSwitch
             shops={person.memberships.map(({ shopId, shopName, role }) => ({
               shopId,

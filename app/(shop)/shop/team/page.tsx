@@ -7,9 +7,9 @@ import { PageSection } from "@/components/shell/page-section";
 import { WorkHead } from "@/components/shell/spread";
 import { EmptyState } from "@/components/ui/states";
 import { may } from "@/lib/auth/access";
-import { currentPerson } from "@/lib/auth/actor";
 import { showDayOf } from "@/lib/dates";
 import { mailConfigured } from "@/lib/mail/send";
+import { signedInActor } from "@/lib/pages/page-actor";
 import { listInvitations } from "@/lib/people/invitations/service";
 import { listTeam } from "@/lib/people/service";
 import { getShop } from "@/lib/shop/service";
@@ -24,10 +24,7 @@ import {
 export const metadata: Metadata = { title: "Team" };
 
 export default async function TeamPage() {
-  const person = await currentPerson();
-  if (!person) redirect("/sign-in?next=%2Fshop%2Fteam");
-  if (!person.actor) redirect("/open-shop");
-  const { actor } = person;
+  const actor = await signedInActor();
   if (!may(actor.role, "team.read")) redirect("/shop/account");
   const canChange = may(actor.role, "team.change");
   const [team, invitations, shop] = await Promise.all([
