@@ -2,7 +2,7 @@ import { keyboard } from "./keyboard";
 import { interpolate, type Knot } from "./keyboard-prior";
 import { at } from "./linear-algebra";
 import { REGISTERS, type Register, registerOf } from "./registers";
-import { flatCovariance, knowledgeOf, systemFrom } from "./stretch";
+import { flatCovariance, residualsOf, systemFrom } from "./stretch";
 import {
   covarianceWithStretch,
   irregularityVariance,
@@ -50,7 +50,7 @@ export function adviceFrom(result: KeyboardResult, options: PlanOptions = {}): A
   const columns = stretchByLnB(system);
   const withStretch = covarianceWithStretch(columns, covariance, n);
   const learned = stretchVariance(columns, withStretch, n);
-  const fixed = irregularityVariance(system, knowledgeOf(result));
+  const fixed = irregularityVariance(system, residualsOf(result));
   const now = halfWidths(learned, fixed);
   const meanBandCents = mean(now);
 

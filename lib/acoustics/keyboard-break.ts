@@ -26,9 +26,9 @@ export function inferBreak(
 ): BreakInference {
   const prior = priorBreakBelief();
   const lastCandidate = prior.firstMidi + prior.weights.length - 1;
-  const near = evidence.filter(({ key }) => {
+  const near = evidence.filter(({ key, scale }) => {
     const midi = firstMidi + key;
-    return midi >= prior.firstMidi - marginKeys && midi <= lastCandidate + marginKeys;
+    return scale === "log" && midi >= prior.firstMidi - marginKeys && midi <= lastCandidate + marginKeys;
   });
   const groups = prior.weights.map(
     (_, i) => near.filter(({ key }) => firstMidi + key < prior.firstMidi + i).length,
@@ -38,7 +38,7 @@ export function inferBreak(
   groups.forEach((group, i) => {
     if (logs.has(group)) return;
     const residual = divided(oneBridge, near, count, prior.firstMidi + i - firstMidi);
-    logs.set(group, findMode({ firstMidi, count, residual }, near, effects).logEvidence);
+    logs.set(group, findMode({ firstMidi, count, residual }, near, effects, 2).logEvidence);
   });
   if (logs.size < 2) return { belief: prior, breakMidi: assumedBreakMidi, source: "assumed" };
   const best = Math.max(...logs.values());

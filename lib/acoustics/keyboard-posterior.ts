@@ -41,8 +41,14 @@ const maxStep = 1;
 /**
  * Mode of bridge offsets and ln B by Gauss–Newton: at each step the mean and the readings on the linear scale are linearised
  * and the Gaussian posterior with explicit basis functions is solved exactly (Rasmussen & Williams 2006, section 2.7).
+ * `start` holds bridge offsets to begin from.
  */
-export function findMode(prior: Prior, evidence: readonly Evidence[], start?: Float64Array): Mode {
+export function findMode(
+  prior: Prior,
+  evidence: readonly Evidence[],
+  start?: Float64Array,
+  iterations = maxIterations,
+): Mode {
   const n = evidence.length;
   const effects = Float64Array.from(start ?? new Float64Array(effectCount));
   const fitted = new Float64Array(n);
@@ -52,13 +58,17 @@ export function findMode(prior: Prior, evidence: readonly Evidence[], start?: Fl
   for (let iteration = 1; ; iteration += 1) {
     if (!allLog && iteration > 1) factor = noiseFactor(prior, evidence, fitted);
     const mode = solveLinearised(prior, evidence, effects, fitted, factor);
+    if (allLog) {
+      if (move(effects, mode.effects) < converged || iteration === iterations) return mode;
+      continue;
+    }
     const next = evidence.map(({ key }, i) => {
       const sigma = noise(evidence[i], at(fitted, i));
       const misfit = target(evidence[i], at(fitted, i)) - sigma * sigma * at(mode.weights, i);
       return Number.isFinite(misfit) ? misfit : meanLnB(prior.firstMidi + key, mode.effects);
     });
     const change = Math.max(move(effects, mode.effects), move(fitted, next));
-    if (change < converged || iteration === maxIterations) return mode;
+    if (change < converged || iteration === iterations) return mode;
   }
 }
 

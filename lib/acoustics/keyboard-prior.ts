@@ -13,7 +13,7 @@ const bassBridge = { slope: -8.47e-2, level: -5.82, pivotMidi: 33 };
 const trebleBridge = { slope: 9.26e-2, level: -13.64, pivotMidi: 69 };
 
 /** Standard deviations of u0, u1 (per octave), v0, v1 (per octave). */
-export const effectSigmas = [0.6, 0.25, 0.15, 0.06] as const;
+export const effectSigmas = [0.7, 0.25, 0.16, 0.06] as const;
 export const effectCount = effectSigmas.length;
 
 /** Correlation length of a bridge's departure from the two-exponential curve, in keys. */

@@ -35,6 +35,42 @@ export function product(left: Float64Array, right: Float64Array, n: number): Flo
   return result;
 }
 
+/** Adds scale·v·vᵀ to the lower triangle of an n × n matrix, v given by its non-zero elements. */
+export function addSparseOuter(
+  matrix: Float64Array,
+  n: number,
+  vector: ReadonlyMap<number, number>,
+  scale: number,
+): void {
+  for (const [row, left] of vector) {
+    for (const [column, right] of vector) {
+      if (column > row) continue;
+      matrix[row * n + column] = at(matrix, row * n + column) + scale * left * right;
+    }
+  }
+}
+
+/** Adds the square of each element of `vector` to `sums`. */
+export function addSquares(sums: Float64Array, vector: Float64Array): void {
+  for (let i = 0; i < sums.length; i += 1) sums[i] = at(sums, i) + at(vector, i) ** 2;
+}
+
+/** Column k of a lower triangle, zeros above the diagonal. */
+export function lowerColumn(matrix: Float64Array, n: number, k: number): Float64Array {
+  const column = new Float64Array(n);
+  for (let i = k; i < n; i += 1) column[i] = at(matrix, i * n + k);
+  return column;
+}
+
+/** Sums of products down the columns of two n × n row-major matrices: the diagonal of leftᵀ·right. */
+export function columnDots(left: Float64Array, right: Float64Array, n: number): Float64Array {
+  const sums = new Float64Array(n);
+  for (let row = 0; row < n * n; row += n) {
+    for (let i = 0; i < n; i += 1) sums[i] = at(sums, i) + at(left, row + i) * at(right, row + i);
+  }
+  return sums;
+}
+
 /** Thrown when a matrix is not positive definite: the caller says what that means for its subject. */
 export class NotPositiveDefinite extends Error {
   constructor(readonly row: number) {

@@ -1,10 +1,18 @@
 import { irregularitySigma } from "./fit-prior";
 import { interpolate, type Knot } from "./keyboard-prior";
-import { at, choleskySemidefiniteInPlace, product, solveBand } from "./linear-algebra";
+import {
+  addSparseOuter,
+  addSquares,
+  at,
+  choleskySemidefiniteInPlace,
+  columnDots,
+  lowerColumn,
+  product,
+  solveBand,
+} from "./linear-algebra";
 import { inharmonicCentsSlope } from "./partials";
 import type { StretchSystem } from "./stretch-system";
 
-const unmeasured: Knowledge = { measured: false };
 export const z95 = 1.959964;
 
 /** Low bass partials are pulled by the soundboard: their scatter in cents at A0, fading to none at E2. */
@@ -12,26 +20,22 @@ const pulledPartials: Readonly<Record<number, number>> = { 1: 5, 2: 2, 3: 2, 4: 
 const lastPulledMidi = 40;
 
 /**
- * What a fit leaves of a note's irregularity, as a share of its σ: two parameters through the three or four partials of a top
- * note take up much of it. 1 − 2/N for N usable partials, under the root; N is common practice, no source.
+ * What a fit leaves of a note's irregularity, as a share of its σ: a fit has few partials in the treble, and its two
+ * parameters take up much of their scatter. About sqrt(1 − 2/N); the usable N is common practice, no source.
  */
 const leftByFit: readonly Knot[] = [
   [72, 1],
-  [93, 0.8],
+  [93, 0.85],
   [108, 0.65],
 ];
 
-/** How a key's B is known: `residualCents` is the root mean square residual of its own fit, if it has one. */
-export type Knowledge = { measured: boolean; residualCents?: number };
-
 /**
- * Scatter of a partial about the curve used for its note, cents, one standard deviation: typical for the register, or the
- * note's own residual.
+ * Scatter of a partial about the curve used for its note, cents, one standard deviation: typical for the register, or
+ * `residualCents`, the root mean square residual of the note's own fit.
  */
-export function partialIrregularitySigma(midi: number, partial: number, knowledge: Knowledge): number {
-  const share = Math.min(1, Math.max(0, (lastPulledMidi - midi) / 19));
-  const typical = irregularitySigma(midi) * (knowledge.measured ? interpolate(leftByFit, midi) : 1);
-  return Math.hypot(knowledge.residualCents ?? typical, share * (pulledPartials[partial] ?? 0));
+export function partialIrregularitySigma(midi: number, partial: number, residualCents?: number): number {
+  const pulled = Math.min(1, Math.max(0, (lastPulledMidi - midi) / 19)) * (pulledPartials[partial] ?? 0);
+  return Math.hypot(residualCents ?? irregularitySigma(midi) * interpolate(leftByFit, midi), pulled);
 }
 
 /**
@@ -72,54 +76,49 @@ export function covarianceWithStretch(
 
 /** Diagonal of J·cov(ln B)·Jᵀ, cents², from J's columns and `covarianceWithStretch`. */
 export function stretchVariance(columns: Float64Array, withStretch: Float64Array, n: number): Float64Array {
-  const variance = new Float64Array(n);
-  for (let k = 0; k < n; k += 1) {
-    for (let i = 0; i < n; i += 1) {
-      variance[i] = at(variance, i) + at(columns, k * n + i) * at(withStretch, k * n + i);
-    }
-  }
-  return variance;
+  return columnDots(columns, withStretch, n);
 }
 
 /**
  * Diagonal of P·R·Pᵀ, cents²: the plan's share of the partials' irregularity. Irregularities of different partials are independent, so their
  * covariance on the right-hand side of the normal equations is a sparse sum of outer products; its factor is solved
- * through the normal matrix. `known[i]` tells how the key at position i is known.
+ * through the normal matrix. `residuals[i]` is the own residual of the key at position i, where it has one.
  */
-export function irregularityVariance(system: StretchSystem, known: readonly Knowledge[]): Float64Array {
+export function irregularityVariance(
+  system: StretchSystem,
+  residuals: readonly (number | undefined)[],
+): Float64Array {
   const { settings, factor } = system;
   const n = settings.keys.length;
   const { position, partial } = settings.anchor;
   const variance = new Float64Array(n);
   const sides = new Float64Array(n * n);
+  // The anchor's own partial also shifts the whole plan, unless it is the first, by which stretch is defined.
+  const held = { key: position, number: partial, effects: new Map<number, number>() };
   for (const { key, number, effects } of effectsByPartial(system)) {
-    const sigma = partialIrregularitySigma(settings.keys[key] ?? 0, number, known[key] ?? unmeasured);
-    if (key === position && number === partial && partial > 1) continue;
-    for (const [row, left] of effects) {
-      for (const [column, right] of effects) {
-        if (column <= row)
-          sides[row * n + column] = at(sides, row * n + column) + sigma * sigma * left * right;
-      }
+    if (key === held.key && number === held.number && partial > 1) {
+      held.effects = effects;
+      continue;
     }
+    const sigma = partialIrregularitySigma(settings.keys[key] ?? 0, number, residuals[key]);
+    addSparseOuter(sides, n, effects, sigma * sigma);
   }
   choleskySemidefiniteInPlace(sides, n);
-  const column = new Float64Array(n);
-  const add = (scale: number) => {
-    for (let i = 0; i < n; i += 1) variance[i] = at(variance, i) + (scale * at(column, i)) ** 2;
-  };
   for (let k = 0; k < n; k += 1) {
     if (at(sides, k * n + k) === 0) continue;
-    for (let i = 0; i < n; i += 1) column[i] = i < k ? 0 : at(sides, i * n + k);
+    const column = lowerColumn(sides, n, k);
     solveBand(factor, column);
-    add(1);
+    addSquares(variance, column);
   }
   if (partial > 1) {
-    column.fill(0);
-    const own = effectsByPartial(system).find(({ key, number }) => key === position && number === partial);
-    for (const [row, effect] of own?.effects ?? []) column[row] = effect;
+    const sigma = partialIrregularitySigma(settings.keys[position] ?? 0, partial, residuals[position]);
+    const column = new Float64Array(n);
+    for (const [row, effect] of held.effects) column[row] = effect;
     solveBand(factor, column);
-    for (let i = 0; i < n; i += 1) column[i] = at(column, i) - 1;
-    add(partialIrregularitySigma(settings.keys[position] ?? 0, partial, known[position] ?? unmeasured));
+    addSquares(
+      variance,
+      column.map((value) => sigma * (value - 1)),
+    );
   }
   return variance;
 }

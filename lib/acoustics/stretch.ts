@@ -7,7 +7,6 @@ import { partialHzFromF1 } from "./partials";
 import {
   covarianceWithStretch,
   irregularityVariance,
-  type Knowledge,
   stretchByLnB,
   stretchVariance,
   z95,
@@ -45,7 +44,7 @@ export function planFrom(result: KeyboardResult, options: PlanOptions = {}): Str
   const n = result.keys.length;
   const columns = stretchByLnB(system);
   const variance = stretchVariance(columns, covarianceWithStretch(columns, flatCovariance(result), n), n);
-  const irregular = irregularityVariance(system, knowledgeOf(result));
+  const irregular = irregularityVariance(system, residualsOf(result));
   const bands = Array.from(variance, (value, i) => z95 * Math.sqrt(Math.max(0, value) + at(irregular, i)));
   return resultOf(system, bands);
 }
@@ -62,12 +61,9 @@ export function systemFrom(result: KeyboardResult, options: PlanOptions): Stretc
   );
 }
 
-export function knowledgeOf({ keys }: KeyboardResult): Knowledge[] {
-  return keys.map(({ source, residualCents }) => ({
-    measured: source === "measured",
-    ...(residualCents === undefined ? {} : { residualCents }),
-  }));
-}
+/** Own residual of each key's fit, cents, where the observation brought one. */
+export const residualsOf = ({ keys }: KeyboardResult): (number | undefined)[] =>
+  keys.map(({ residualCents }) => residualCents);
 
 export function flatCovariance({ keys, covariance }: KeyboardResult): Float64Array {
   const flat = new Float64Array(keys.length ** 2);

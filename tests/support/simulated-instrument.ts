@@ -1,6 +1,6 @@
 /**
  * Instruments invented for tests, built otherwise than the model under test: a two-exponential curve with its own offsets, smooth
- * curvature per bridge as sinusoids, a step at the break, saw teeth where the wire gauge changes, and single-note scatter.
+ * curvature per bridge as sinusoids, a step at the break and one where single bass strings give way to pairs, saw teeth where the wire gauge changes, and single-note scatter.
  * Partials depart from the stiff-string law, and B is read from them by least squares as a technician's sheet would be.
  */
 import { inharmonicCentsSlope } from "@/lib/acoustics/partials";
@@ -39,6 +39,8 @@ export function simulateInstrument(random: Random, firstMidi = 21, lastMidi = 10
   const trebleLevel = 0.14 * normal();
   const trebleSlope = 0.06 * normal();
   const step = 0.15 * normal();
+  const pairsFrom = 26 + Math.floor(7 * uniform());
+  const pairStep = 0.2 * normal();
   const bassWave = wave(random, 0.12);
   const trebleWave = wave(random, 0.06);
   let toothLength = 0;
@@ -56,7 +58,11 @@ export function simulateInstrument(random: Random, firstMidi = 21, lastMidi = 10
     const onBass = midi < breakMidi;
     const ends = midi < 45 ? 0.07 : midi > 96 ? 0.05 : 0.015;
     const lnB =
-      Math.log(bass + treble) + (onBass ? step + bassWave(midi) : trebleWave(midi)) + saw + ends * normal();
+      Math.log(bass + treble) +
+      (onBass ? step + bassWave(midi) : trebleWave(midi)) +
+      (midi < pairsFrom ? pairStep : 0) +
+      saw +
+      ends * normal();
     const sigma = irregularityOf(midi);
     const irregularity = Array.from({ length: highestPartial + 1 }, (_, n) => {
       const pulled = midi < 40 && n <= 4 ? (n === 1 ? 4 : 1.5) * ((40 - midi) / 19) : 0;
@@ -74,10 +80,11 @@ function wave({ uniform, normal }: Random, sigma: number): (midi: number) => num
   return (midi) => amplitude * Math.sin((2 * Math.PI * midi) / period + phase);
 }
 
-/** 0.5 to 1.3 cents on real notes, more at the ends of the compass. */
+/** 0.5 to 1.3 cents on real notes; the steps follow the residuals of the recorded notes. */
 function irregularityOf(midi: number): number {
   if (midi < 40) return 1;
-  return midi < 72 ? 0.7 : 1.2;
+  if (midi < 72) return 0.7;
+  return midi < 79 ? 0.9 : 1.2;
 }
 
 const partialsOf = (midi: number): number => {
