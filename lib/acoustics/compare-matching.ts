@@ -52,7 +52,7 @@ function believable(note: NoteReadings, result: FitResult, referenceHz?: number)
   const frequencies = new Map<number, number>();
   note.readings.forEach(({ partial, hz, cents }, i) => {
     const residual = result.residuals[i]?.cents ?? 0;
-    if (mistaken.has(`${partial}/${residual}`)) return;
+    if (mistaken.size > 0 && mistaken.has(`${partial}/${residual}`)) return;
     if (Math.abs(residual) >= (distances.get(partial) ?? Number.POSITIVE_INFINITY)) return;
     distances.set(partial, Math.abs(residual));
     frequencies.set(

@@ -95,7 +95,7 @@ describe("harder pairs", () => {
       (random: Random) => 0.1 * 5 ** random.uniform(),
     ],
   ] as const)("keep the rate with %s", (_, seed, share, spread) => {
-    expect(simulate(seed, share, spread, 600).falseShare).toBeLessThanOrEqual(0.07);
+    expect(simulate(seed, share, spread, 400).falseShare).toBeLessThanOrEqual(0.07);
   });
 });
 

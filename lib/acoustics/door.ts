@@ -25,13 +25,10 @@ function verb<Schema extends z.ZodType>(input: Schema, run: (parsed: z.output<Sc
   return { input, run: (document) => run(checked(input, document)) };
 }
 
-// The functions check names themselves and answer with the list of those there are.
+// JSON brings names as plain text; the functions check them and answer with the list of those there are.
 type Named = { style?: string | Style; temperament?: string | number[] };
 function named<Input extends Named>(input: Input) {
-  return input as Input & { style?: BuiltInStyle | Style; temperament?: Temperament } & Pick<
-      StretchInput,
-      "style"
-    >;
+  return input as Input & { style?: BuiltInStyle | Style; temperament?: Temperament };
 }
 
 export const verbs: Readonly<Record<string, Verb>> = {
@@ -40,9 +37,7 @@ export const verbs: Readonly<Record<string, Verb>> = {
   stretch: verb(stretchSchema, (input) => stretch(named(input))),
   advise: verb(adviseSchema, (input) => advise(named(input))),
   beats: verb(beatsSchema, (input) => beats(named(input))),
-  temperament: verb(temperamentSchema, ({ temperament, referenceHz }) =>
-    describeTemperament({ temperament: temperament as Temperament, referenceHz }),
-  ),
+  temperament: verb(temperamentSchema, (input) => describeTemperament(named(input))),
   compare: verb(compareSchema, compare),
 };
 

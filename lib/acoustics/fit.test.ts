@@ -119,6 +119,19 @@ describe("mistakes are named", () => {
     expect(quality).toBe("repeat");
   });
 
+  it("a row that skipped a partial: every number from there on is one too low", () => {
+    const skipped = sheet(57, 2.2e-4, [1, 2, 3, 4, 5, 6, 8, 9, 10]).map((each, i) => ({
+      ...each,
+      partial: i + 1,
+    }));
+    const { rejected, used, quality } = fit({ midi: 57, readings: skipped });
+    expect(used).toEqual([1, 2, 3, 4, 5, 6]);
+    expect(rejected).toMatchObject(
+      [7, 8, 9].map((partial) => ({ partial, reason: "wrong-partial-number", fitsPartial: partial + 1 })),
+    );
+    expect(quality).toBe("repeat");
+  });
+
   it("of three readings, by what is usual for the key", () => {
     const readings = changed(sheet(84, 2.4e-3, [1, 2, 3]), 2, byCents(90));
     const { rejected, quality } = fit({ midi: 84, readings });

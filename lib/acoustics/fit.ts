@@ -24,7 +24,7 @@ const SIGMA_FLOOR = 0.05;
  * three others remain.
  *
  * Result: f1 in Hz, σ of f1 in cents, B without unit, its σ and 95 % interval (normal when every σ was given, else
- * Student's t), the correlation of f1 and B, and per reading its distance from the curve in cents. With one reading B is
+ * Student's t), the correlation of f1 and B, χ² for the given or assumed σ, and per reading its distance from the curve in cents. With one reading B is
  * null. B may be negative within its error.
  *
  * Errors: AcousticsError, see `checkFitInput`; "all-dropped" when no reading is left.

@@ -5,6 +5,7 @@ import {
   gaugeDiameterMm,
   leastTensileMpa,
   plainString,
+  ROUND_WRAP_FILL,
   tension,
   waveSpeed,
   woundString,
@@ -84,6 +85,11 @@ describe("Young's formula", () => {
 });
 
 describe("wound strings", () => {
+  it("are wrapped by a wire that fills π/4 of its annulus", () => {
+    // Geometry: Pappus's theorem.
+    expect(ROUND_WRAP_FILL).toBeCloseTo(checkNumber("wrap.packing"), 12);
+  });
+
   it.each(["string.A0_wound", "string.A0_short_wound"])(
     "have mass from the wrap, stiffness from the core: %s",
     (id) => {
