@@ -85,6 +85,17 @@ const fitReason = z.enum([
   "dropped-by-hand",
 ]);
 
+const fitWarning = z.enum([
+  "exact-no-check",
+  "single-reading",
+  "b-not-significant",
+  "few-partials",
+  "first-partial-unreliable",
+  "kept-off-curve",
+  "ambiguous-outlier",
+  "scatter-exceeds-sigma",
+]);
+
 export const fitRecord = z.object({
   f1Hz: z.number(),
   f1SigmaCents: z.number(),
@@ -109,7 +120,7 @@ export const fitRecord = z.object({
   ),
   residuals: z.array(z.object({ partial: z.number(), cents: z.number() })),
   quality: z.enum(["good", "usable", "repeat"]),
-  warnings: z.array(z.string()),
+  warnings: z.array(fitWarning),
 });
 
 export const noteRecord = fitRecord.extend({

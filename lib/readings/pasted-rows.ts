@@ -1,0 +1,135 @@
+import Papa from "papaparse";
+import { keyFromName, keyName } from "@/lib/acoustics";
+import { isBlank, type ReadingUnit, readTyped, typedFault } from "./typed-number";
+
+/** One sheet holds one instrument; the server takes as many rows at once. */
+export const MOST_ROWS = 128;
+const MOST_PARTIAL = 64;
+/** So many faults are named; the rest are counted. */
+const MOST_FAULTS = 8;
+
+export type PastedValue = { partial: number; text: string };
+export type PastedRow = { line: number; midi: number; values: PastedValue[] };
+export type PasteFault = { line: number | null; message: string };
+export type Pasted = { rows: PastedRow[]; faults: PasteFault[]; moreFaults: number };
+
+type Line = { line: number; fields: string[] };
+
+/** Tabs come from spreadsheets, semicolons from lists with decimal commas, commas from the rest. */
+function delimiterOf(text: string): string {
+  if (text.includes("\t")) return "\t";
+  if (text.includes(";")) return ";";
+  return text.includes(",") ? "," : " ";
+}
+
+function linesOf(text: string): Line[] {
+  const { data } = Papa.parse<string[]>(text.replaceAll(/\r\n?/g, "\n"), {
+    delimiter: delimiterOf(text),
+    newline: "\n",
+    skipEmptyLines: false,
+  });
+  return data
+    .map((fields, index) => ({ line: index + 1, fields: fields.map((field) => field.trim()) }))
+    .filter(({ fields }) => fields.some((field) => field !== ""));
+}
+
+/** "A0", "f#3", "E♭4", or a MIDI number. */
+function keyOf(field: string): number | null {
+  const named = keyFromName(field.replaceAll(/\s/g, ""));
+  if (named !== null) return named;
+  return /^\d{1,3}$/.test(field) ? Number(field) : null;
+}
+
+function isHeader({ fields }: Line): boolean {
+  const first = fields[0] ?? "";
+  return keyOf(first) === null && readTyped(first) === null;
+}
+
+/** The partial over each column, when the header numbers them; otherwise they count from one. */
+function partialsOf(header: Line | undefined, columns: number): number[] {
+  const counted = Array.from({ length: columns }, (_, index) => index + 1);
+  const named = header?.fields.slice(1).map((field) => /^\D{0,12}?(\d{1,2})$/.exec(field)?.[1]);
+  if (!named || named.length === 0 || named.some((partial) => partial === undefined)) return counted;
+  const last = Math.max(...named.map(Number));
+  return [...named.map(Number), ...counted.map((index) => last + index)].slice(0, columns);
+}
+
+/**
+ * Whole rows as copied from a spreadsheet: a note's name or MIDI number, then its partials; a first line of
+ * words is a header. Every fault names its line, and nothing is guessed.
+ */
+export function readPasted(
+  text: string,
+  { unit, firstMidi, lastMidi }: { unit: ReadingUnit; firstMidi: number; lastMidi: number },
+): Pasted {
+  const lines = linesOf(text);
+  const header = lines[0] && lines.length > 1 && isHeader(lines[0]) ? lines[0] : undefined;
+  const body = header ? lines.slice(1) : lines;
+  if (body.length === 0) {
+    return { rows: [], faults: [{ line: null, message: "There are no rows in this text." }], moreFaults: 0 };
+  }
+  if (body.length > MOST_ROWS) {
+    const message = `These are ${body.length} rows, of which ${MOST_ROWS} fit at once: one sheet holds one instrument. Nothing was entered; lines ${body[0]?.line} to ${body[MOST_ROWS - 1]?.line} would fit.`;
+    return { rows: [], faults: [{ line: null, message }], moreFaults: 0 };
+  }
+
+  const partials = partialsOf(header, Math.max(...body.map(({ fields }) => fields.length - 1)));
+  const faults: PasteFault[] = [];
+  const twice = partials.find((partial, index) => partials.indexOf(partial) < index);
+  if (header && twice !== undefined) {
+    faults.push({ line: header.line, message: `Partial ${twice} heads two columns.` });
+  }
+  const rows: PastedRow[] = [];
+  const seen = new Map<number, number>();
+  for (const { line, fields } of body) {
+    const [first = "", ...cells] = fields;
+    const midi = keyOf(first);
+    const fault = (message: string) => faults.push({ line, message });
+    if (midi === null) {
+      fault(`“${first.slice(0, 20)}” is no note. Begin the line with a name such as A4, or a MIDI number.`);
+      continue;
+    }
+    if (midi < firstMidi || midi > lastMidi) {
+      fault(
+        `${keyName(midi)} is not on this instrument, whose keys run from ${keyName(firstMidi)} to ${keyName(lastMidi)}.`,
+      );
+      continue;
+    }
+    const before = seen.get(midi);
+    if (before !== undefined) fault(`${keyName(midi)} stands on line ${before} already.`);
+    seen.set(midi, line);
+    const values = cells.flatMap((cell, index) => {
+      const partial = partials[index] ?? index + 1;
+      return isBlank(cell) ? [] : [{ partial, text: cell }];
+    });
+    if (values.length === 0) fault(`${keyName(midi)} has no readings.`);
+    for (const { partial, text: typed } of values) {
+      const wrong =
+        partial > MOST_PARTIAL || partial < 1 ? "Partials run from 1 to 64." : typedFault(typed, unit);
+      if (wrong) fault(`${keyName(midi)}, partial ${partial}: “${typed.slice(0, 20)}”. ${wrong}`);
+    }
+    rows.push({ line, midi, values });
+  }
+  return { rows, faults: faults.slice(0, MOST_FAULTS), moreFaults: Math.max(0, faults.length - MOST_FAULTS) };
+}
+
+/**
+ * What was pasted into a cell: one number (the cell's own affair), a run of numbers for this cell and those
+ * after it, or rows that carry their notes.
+ */
+export function readCellPaste(
+  text: string,
+): { kind: "one" } | { kind: "run"; texts: string[] } | { kind: "rows" } {
+  if (readTyped(text) !== null || isBlank(text)) return { kind: "one" };
+  const lines = linesOf(text);
+  const isNumber = (field: string) => isBlank(field) || readTyped(field) !== null;
+  const [only] = lines;
+  if (lines.length === 1 && only) {
+    if (only.fields.length === 1) return { kind: "one" };
+    if (only.fields.every(isNumber)) return { kind: "run", texts: only.fields };
+  }
+  if (lines.every(({ fields }) => fields.length === 1 && isNumber(fields[0] ?? ""))) {
+    return { kind: "run", texts: lines.map(({ fields }) => fields[0] ?? "") };
+  }
+  return { kind: "rows" };
+}
