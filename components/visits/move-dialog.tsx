@@ -11,7 +11,7 @@ import { showMessage } from "@/components/ui/message-queue";
 import type { ActionResult } from "@/lib/doors/action-result";
 import { visitMove } from "@/lib/visits/schema";
 import { Clash, clashOf } from "./clash";
-import { dayWithYear, hoursOf } from "./time-words";
+import { dayHelp, dayWithYear, hoursOf } from "./time-words";
 
 export type MovedVisit = { movedToId: string | null };
 
@@ -58,7 +58,12 @@ function MoveForm({ visit, locale, action, onClose }: Props) {
         its work.
       </p>
       <div className="grid grid-cols-2 gap-3">
-        <TextInput label="New day" type="date" {...state.field("date")} />
+        <TextInput
+          label="New day"
+          type="date"
+          help={dayHelp(state.form.watch("date"), locale)}
+          {...state.field("date")}
+        />
         <TextInput label="Starts" type="time" {...state.field("time")} />
       </div>
       {clash ? (

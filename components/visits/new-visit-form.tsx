@@ -13,7 +13,7 @@ import type { ActionResult } from "@/lib/doors/action-result";
 import { visitPlan } from "@/lib/visits/schema";
 import { Clash, clashOf } from "./clash";
 import { PeopleChoice } from "./people-choice";
-import { durationWords } from "./time-words";
+import { dayHelp, durationWords } from "./time-words";
 import { type InstrumentChoice, WorkChoice } from "./work-choice";
 
 type Plan = z.input<typeof visitPlan>;
@@ -85,7 +85,13 @@ export function NewVisitForm({
         error={errorIn("technicianIds")}
       />
       <div className="grid grid-cols-2 gap-3 sm:grid-cols-3">
-        <TextInput label="Day" type="date" className="max-sm:col-span-2" {...state.field("date")} />
+        <TextInput
+          label="Day"
+          type="date"
+          className="max-sm:col-span-2"
+          help={dayHelp(form.watch("date"), locale)}
+          {...state.field("date")}
+        />
         <TextInput label="Starts" type="time" {...state.field("time")} />
         <Select label="Length" options={lengths} {...state.numberField("minutes")} />
       </div>

@@ -37,6 +37,7 @@ export function PeopleChoice({
           />
         ))}
       </div>
+      {fixedId ? <p className="lab">You book your own visits; the office books those of others.</p> : null}
       {error ? <FieldError>{error}</FieldError> : null}
     </fieldset>
   );

@@ -29,7 +29,7 @@ export function SpanBar({ span }: { span: Span }) {
   }
 
   return (
-    <div className="mb-2 flex flex-wrap items-center gap-2" data-no-print>
+    <div className="flex flex-wrap items-center gap-2" data-no-print>
       <Segmented
         label="Which visits"
         options={span.name === "days" ? [...words, { value: "days", label: "Chosen days" }] : words}

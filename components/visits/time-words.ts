@@ -1,4 +1,4 @@
-import { showTime, showWeekday, wallDay } from "@/lib/dates";
+import { isDay, showTime, showWeekday, wallDay } from "@/lib/dates";
 
 type Timed = { start: string; end: string };
 
@@ -10,6 +10,17 @@ export function hoursOf({ start, end }: Timed, locale: string): string {
 /** "Thu 14 May 2026". */
 export function dayWithYear(start: string, locale: string): string {
   return `${showWeekday(wallDay(start), locale, "short")} ${start.slice(0, 4)}`;
+}
+
+/** "Tue 1 Dec", with the year where it is not this one. */
+export function dayInList(start: string, locale: string, today: string): string {
+  if (start.slice(0, 4) !== today.slice(0, 4)) return dayWithYear(start, locale);
+  return showWeekday(wallDay(start), locale, "short");
+}
+
+/** Beside a date field, whose figures the browser orders as it likes: the day in words. */
+export function dayHelp(day: string, locale: string): string | undefined {
+  return isDay(day) ? showWeekday(day, locale) : undefined;
 }
 
 /** "1 h 30 min". */

@@ -48,7 +48,11 @@ export function VisitJobs({
               </p>
             </div>
             {canRecord ? (
-              <LinkButton href={`/instruments/${job.instrumentId}/sheets/new?job=${job.id}`} data-no-print>
+              <LinkButton
+                href={`/instruments/${job.instrumentId}/sheets/new?job=${job.id}`}
+                className="max-sm:w-full"
+                data-no-print
+              >
                 <Sign name="plus" size={12} />
                 New reading sheet
                 <span className="sr-only"> for {job.instrument}</span>

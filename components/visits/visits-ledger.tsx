@@ -2,6 +2,7 @@
 
 import { useSearchParams } from "next/navigation";
 import { useCallback, useMemo, useState } from "react";
+import { ActionStrip } from "@/components/shell/action-strip";
 import { Ledger } from "@/components/tables/ledger";
 import type { FetchLedgerPage, LedgerColumn, LedgerPage } from "@/components/tables/ledger-types";
 import { LinkButton } from "@/components/ui/button";
@@ -14,7 +15,7 @@ import { visitStates } from "@/lib/visits/rules";
 import type { VisitRow } from "@/lib/visits/schema";
 import { stateWords } from "@/lib/visits/words";
 import { SpanBar } from "./span-bar";
-import { dayWithYear, hoursOf, instrumentWords } from "./time-words";
+import { dayInList, hoursOf, instrumentWords } from "./time-words";
 import { readSpan } from "./visit-span";
 import { VisitStateWord } from "./visit-state";
 
@@ -51,19 +52,20 @@ export function VisitsLedger({
         header: "When",
         cell: (row) => (
           <>
-            {dayWithYear(row.start, locale)} <span className="text-ink-soft">{hoursOf(row, locale)}</span>
+            {dayInList(row.start, locale, today)}{" "}
+            <span className="text-ink-soft">{hoursOf(row, locale)}</span>
           </>
         ),
         sortable: true,
-        width: 1.7,
+        width: 204,
         phone: "line",
       },
-      { id: "site", header: "Where", cell: (row) => row.siteName, width: 1.6, phone: "title" },
+      { id: "site", header: "Where", cell: (row) => row.siteName, phone: "title" },
       {
         id: "instruments",
         header: "Instruments",
         cell: (row) => instrumentWords(row.instruments, row.jobs),
-        width: 1.8,
+        width: 232,
         from: "xl",
         phone: "none",
       },
@@ -71,6 +73,7 @@ export function VisitsLedger({
         id: "customer",
         header: "Customer",
         cell: (row) => row.customerName,
+        width: 160,
         extra: true,
         phone: "none",
       },
@@ -78,12 +81,19 @@ export function VisitsLedger({
         id: "technicians",
         header: "Comes",
         cell: (row) => row.technicians.map(({ name }) => name).join(", "),
+        width: 136,
         from: "sm",
         phone: "end",
       },
-      { id: "state", header: "State", cell: (row) => <VisitStateWord state={row.state} />, phone: "aside" },
+      {
+        id: "state",
+        header: "State",
+        cell: (row) => <VisitStateWord state={row.state} />,
+        width: 116,
+        phone: "aside",
+      },
     ],
-    [locale],
+    [locale, today],
   );
 
   const filters = useMemo(
@@ -122,7 +132,21 @@ export function VisitsLedger({
 
   return (
     <>
-      <SpanBar span={span} />
+      <div className="mt-3 mb-2 flex flex-wrap items-center justify-between gap-2 lg:mt-5">
+        <SpanBar span={span} />
+        {mayBook ? (
+          <LinkButton kind="primary" href="/visits/new" className="max-lg:hidden">
+            Book a visit
+          </LinkButton>
+        ) : null}
+      </div>
+      {mayBook ? (
+        <ActionStrip>
+          <LinkButton kind="primary" href="/visits/new">
+            Book a visit
+          </LinkButton>
+        </ActionStrip>
+      ) : null}
       <Ledger
         key={asked}
         label="Visits"
@@ -133,19 +157,8 @@ export function VisitsLedger({
         initialPage={asked === firstAsked ? asLedgerPage(first) : undefined}
         defaultSort={{ id: "start", descending: latestFirst }}
         empty={
-          <EmptyState
-            title={span.name === "coming" ? "No visits to come" : "No visits on these days"}
-            action={
-              mayBook ? (
-                <LinkButton kind="primary" href="/visits/new">
-                  Book a visit
-                </LinkButton>
-              ) : null
-            }
-          >
-            {span.name === "coming"
-              ? "Book one from here, or from an instrument’s page."
-              : "Choose other days above."}
+          <EmptyState title={span.name === "coming" ? "No visits to come" : "No visits on these days"}>
+            {span.name === "coming" ? "Book a visit to see it here." : "Choose other days above."}
           </EmptyState>
         }
       />

@@ -1,6 +1,5 @@
 import type { Metadata } from "next";
-import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
-import { LinkButton } from "@/components/ui/button";
+import { LeftPage, RightPage, Spread } from "@/components/shell/spread";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { readSpan } from "@/components/visits/visit-span";
 import { VisitsLedger } from "@/components/visits/visits-ledger";
@@ -30,7 +29,6 @@ export default async function VisitsPage({ searchParams }: PageProps<"/visits">)
   });
   const first = await findVisits(actor, asked.success ? asked.data : visitListQuery.parse({ from, to }));
   const technicians = await bookableTechnicians(actor);
-  const mayBook = may(actor.role, "visits.change");
   return (
     <Spread
       left={
@@ -43,22 +41,12 @@ export default async function VisitsPage({ searchParams }: PageProps<"/visits">)
       }
       right={
         <RightPage>
-          <WorkHead
-            title="Visits"
-            actions={
-              mayBook ? (
-                <LinkButton kind="primary" href="/visits/new">
-                  Book a visit
-                </LinkButton>
-              ) : null
-            }
-          />
           <VisitsLedger
             today={today}
             locale={locale}
             technicians={technicians}
             first={first}
-            mayBook={mayBook}
+            mayBook={may(actor.role, "visits.change")}
           />
         </RightPage>
       }

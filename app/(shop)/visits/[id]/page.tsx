@@ -52,7 +52,7 @@ export default async function VisitPage({ params }: Props) {
         <RightPage>
           <WorkHead
             title={visit.jobs.length === 1 ? "1 instrument" : `${visit.jobs.length} instruments`}
-            summary={`${dayWithYear(visit.start, locale)}, ${hoursOf(visit, locale)}`}
+            summary={<VisitStateWord state={visit.state} className="text-14" />}
             actions={
               <>
                 {demo ? <DemoBadge /> : null}
@@ -86,19 +86,7 @@ function About({ visit, locale, shopZone }: { visit: VisitRecord; locale: string
       title={site.name}
       subtitle={`${dayWithYear(visit.start, locale)}, ${hoursOf(visit, locale)}`}
     >
-      <div className="grid gap-3">
-        <VisitStateWord state={visit.state} />
-        {visit.movedToId ? (
-          <AppLink href={`/visits/${visit.movedToId}`} className="link">
-            See where it moved to
-          </AppLink>
-        ) : null}
-        {visit.movedFromId ? (
-          <AppLink href={`/visits/${visit.movedFromId}`} className="link">
-            Moved here from another time
-          </AppLink>
-        ) : null}
-      </div>
+      {visit.movedToId || visit.movedFromId ? <Moved visit={visit} /> : null}
       <Facts
         facts={[
           {
@@ -135,5 +123,26 @@ function About({ visit, locale, shopZone }: { visit: VisitRecord; locale: string
         <VisitHistory events={visit.events} locale={locale} timeZone={visit.timeZone} />
       </section>
     </LeftPage>
+  );
+}
+
+function Moved({ visit: { movedToId, movedFromId } }: { visit: VisitRecord }) {
+  return (
+    <ul>
+      {movedToId ? (
+        <li>
+          <AppLink href={`/visits/${movedToId}`} className="link inline-flex min-h-6 items-center">
+            See where it moved to
+          </AppLink>
+        </li>
+      ) : null}
+      {movedFromId ? (
+        <li>
+          <AppLink href={`/visits/${movedFromId}`} className="link inline-flex min-h-6 items-center">
+            It was at another time before
+          </AppLink>
+        </li>
+      ) : null}
+    </ul>
   );
 }
