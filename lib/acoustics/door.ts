@@ -15,7 +15,7 @@ import {
 } from "./schemas";
 import { stretch } from "./stretch";
 import { describeTemperament } from "./temperament";
-import { AcousticsError, type BuiltInStyle, type StretchInput, type Style, type Temperament } from "./types";
+import { AcousticsError, type BuiltInStyle, type Style, type Temperament } from "./types";
 
 /** The computation behind a door that takes JSON: one document in, one out, errors with code, message and path. */
 
