@@ -86,8 +86,8 @@ export function flagThreshold(observations: number): number {
 }
 
 /** Relative change of B that a note with this deleted σ shows as a flag in nine cases of ten. */
-export function detectableChange(sigma: number, observations: number): number {
-  return Math.exp((flagThreshold(observations) + powerQuantile) * sigma) - 1;
+export function detectableChange(sigma: number, threshold: number): number {
+  return Math.exp((threshold + powerQuantile) * sigma) - 1;
 }
 
 /** Upper-tail normal quantile by Newton steps on the asymptotic tail; p in (0.9, 1). */

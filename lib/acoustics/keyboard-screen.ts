@@ -10,7 +10,10 @@ const setAsideSigma = 3;
  * notes. Between near neighbours it costs no power.
  */
 const judgingCurveScale = 2;
-/** At most this share of the measured notes is set aside: beyond it the sheet, not the notes, is in question. */
+/**
+ * At most this share of the measured notes is set aside, though always one may be: beyond it the sheet, not the notes, is in
+ * question. A lone note is judged by what instruments in general are like.
+ */
 const largestFlaggedShare = 1 / 3;
 /** A note of a flagged run that alone lies within this many σ of the others' prediction is taken back. */
 const belongsZ = 2;
@@ -37,7 +40,7 @@ export function screen(
 ): Screened {
   const judging = residualCovariance(firstMidi, count, belief, judgingCurveScale);
   const flagged = new Set<number>();
-  const limit = Math.floor(evidence.length * largestFlaggedShare);
+  const limit = Math.max(1, Math.floor(evidence.length * largestFlaggedShare));
   let judged = judge(firstMidi, count, judging, evidence, flagged, start);
   for (;;) {
     const run = worstRun(evidence, judged.mode, judged.band, flagged);

@@ -49,6 +49,22 @@ describe("poor observations", () => {
     expect(key.b).toBeGreaterThan(0);
   });
 
+  it("an impossible reading far below zero, or absurdly high, cannot drag the keyboard along", () => {
+    const prior = keyboard({ observations: [] });
+    for (const observation of [
+      { midi: 69, b: -0.1, bSigma: 1e-5 },
+      { midi: 69, b: 5, bSigma: 0.1 },
+    ]) {
+      const result = keyboard({ observations: [observation] });
+      for (const midi of [57, 68, 70, 81]) {
+        expect(Math.abs(Math.log(keyOf(result, midi).b / keyOf(prior, midi).b))).toBeLessThan(0.25);
+      }
+    }
+    expect(keyOf(keyboard({ observations: [{ midi: 69, b: 5, bSigma: 0.1 }] }), 69).flag).toBe(
+      "does-not-belong",
+    );
+  });
+
   it("a reading much poorer than the prior changes nothing", () => {
     const prior = keyOf(keyboard({ observations: [] }), 60);
     const key = keyOf(keyboard({ observations: [{ midi: 60, b: 5e-3, bSigma: 1 }] }), 60);

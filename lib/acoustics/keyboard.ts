@@ -1,5 +1,5 @@
 import { inferBreak } from "./keyboard-break";
-import { detectableChange } from "./keyboard-flags";
+import { detectableChange, flagThreshold } from "./keyboard-flags";
 import { checkedKey, checkedObservations, checkedRange } from "./keyboard-input";
 import { type Evidence, posteriorOverKeys } from "./keyboard-posterior";
 import { assumedBreakMidi, knownBreak, priorBreakBelief } from "./keyboard-prior";
@@ -10,6 +10,8 @@ import type { KeyboardInput, KeyboardResult, KeyEstimate, Observation } from "./
 const z95 = 1.959964;
 /** Above this relative error the logarithm of an estimate is no longer nearly normal. */
 const largestLogSigma = 0.3;
+/** No string has B below zero: a reading further below than this many σ is in error by more than its σ says. */
+const deepestZ = 2;
 /** No string's B is known better than this, whatever its sheet says: 0.3 %. */
 const smallestLogSigma = 0.003;
 
@@ -43,6 +45,7 @@ export function keyboard(input: KeyboardInput): KeyboardResult {
   }
 
   const { mean, covariance } = posteriorOverKeys(screened.prior, evidence, screened.mode);
+  const threshold = flagThreshold(evidence.length);
   const measured = new Map(evidence.map((item, i) => [item.key, i]));
   const keys = Array.from({ length: count }, (_, key): KeyEstimate => {
     const lnBSigma = Math.sqrt(at(covariance, key * count + key));
@@ -63,9 +66,7 @@ export function keyboard(input: KeyboardInput): KeyboardResult {
           ? null
           : Math.exp((evidence[i]?.value ?? median) - residual.z * residual.sigma),
       detectableChange:
-        residual === undefined || residual.z === null
-          ? null
-          : detectableChange(residual.sigma, evidence.length),
+        residual === undefined || residual.z === null ? null : detectableChange(residual.sigma, threshold),
     };
     const residualCents = i === undefined ? undefined : observations[i]?.residualCents;
     return residualCents === undefined ? estimate : { ...estimate, residualCents };
@@ -83,6 +84,7 @@ export function keyboard(input: KeyboardInput): KeyboardResult {
 
 function asEvidence({ midi, b, bSigma }: Observation, firstMidi: number): Evidence {
   const key = midi - firstMidi;
-  if (b <= 0 || bSigma / b > largestLogSigma) return { key, scale: "linear", value: b, sigma: bSigma };
+  if (b <= 0) return { key, scale: "linear", value: b, sigma: Math.max(bSigma, -b / deepestZ) };
+  if (bSigma / b > largestLogSigma) return { key, scale: "linear", value: b, sigma: bSigma };
   return { key, scale: "log", value: Math.log(b), sigma: Math.max(bSigma / b, smallestLogSigma) };
 }

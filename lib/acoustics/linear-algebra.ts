@@ -199,13 +199,13 @@ export function choleskyBandInPlace(matrix: BandMatrix): void {
   }
 }
 
-/** Solves A x = b in place with the factor of A, b at `offset` of `vector`. */
-export function solveBand(factor: BandMatrix, vector: Float64Array, offset = 0): void {
+/** Solves A x = b in place with the factor of A, b at `offset` of `vector`; b is known to be zero before row `from`. */
+export function solveBand(factor: BandMatrix, vector: Float64Array, offset = 0, from = 0): void {
   const { n, width, values } = factor;
   const stride = width + 1;
-  for (let i = 0; i < n; i += 1) {
+  for (let i = from; i < n; i += 1) {
     let sum = at(vector, offset + i);
-    for (let k = Math.max(0, i - width); k < i; k += 1) {
+    for (let k = Math.max(from, i - width); k < i; k += 1) {
       sum -= at(values, i * stride + i - k) * at(vector, offset + k);
     }
     vector[offset + i] = sum / at(values, i * stride);

@@ -59,7 +59,7 @@ export function stretchByLnB(system: StretchSystem): Float64Array {
       columns[upper * n + lower] = at(columns, upper * n + lower) + byUpper;
     }
   }
-  for (let k = 0; k < n; k += 1) solveBand(factor, columns, k * n);
+  for (let k = 0; k < n; k += 1) solveBand(factor, columns, k * n, Math.max(0, k - factor.width));
   const anchorSlope = at(b, position) * inharmonicCentsSlope(partial, at(b, position));
   for (let i = 0; i < n; i += 1) columns[position * n + i] = at(columns, position * n + i) - anchorSlope;
   return columns;
@@ -107,7 +107,7 @@ export function irregularityVariance(
   for (let k = 0; k < n; k += 1) {
     if (at(sides, k * n + k) === 0) continue;
     const column = lowerColumn(sides, n, k);
-    solveBand(factor, column);
+    solveBand(factor, column, 0, k);
     addSquares(variance, column);
   }
   if (partial > 1) {
