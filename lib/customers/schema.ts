@@ -28,6 +28,9 @@ export const customerChange = customerFields
   .partial()
   .extend({ version: z.int().positive(), archived: z.boolean().optional() });
 
+/** What the form holds: a new record has no version yet. */
+export const customerForm = customerFields.extend({ id: z.uuid(), version: z.int().positive().optional() });
+
 export const customerRecord = z.object({
   id: z.uuid(),
   kind: z.enum(["person", "organisation"]),

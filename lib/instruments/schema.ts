@@ -61,6 +61,9 @@ export const instrumentChange = instrumentFields
   .partial()
   .extend({ version: z.int().positive(), archived: z.boolean().optional() });
 
+/** What the form of an old record holds. */
+export const instrumentForm = instrumentFields.extend({ id: z.uuid(), version: z.int().positive() });
+
 /** Moved or sold: closes the present place on that day and opens another. */
 export const newHolding = holdingFields.extend({
   id: z.uuid().optional(),

@@ -37,6 +37,9 @@ export const siteChange = siteFields
   .partial()
   .extend({ version: z.int().positive(), archived: z.boolean().optional() });
 
+/** What the form holds: a new record has no version yet. */
+export const siteForm = siteFields.extend({ id: z.uuid(), version: z.int().positive().optional() });
+
 export const siteRecord = z.object({
   id: z.uuid(),
   customerId: z.uuid(),

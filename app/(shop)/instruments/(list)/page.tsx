@@ -1,0 +1,55 @@
+import type { Metadata } from "next";
+import { InstrumentsLedger } from "@/components/instruments/instruments-ledger";
+import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
+import { LinkButton } from "@/components/ui/button";
+import { DemoBadge } from "@/components/ui/demo-badge";
+import { may } from "@/lib/auth/access";
+import { instrumentListQuery } from "@/lib/instruments/schema";
+import { findInstruments } from "@/lib/instruments/service";
+import { addressQuery } from "@/lib/pages/ledger-request";
+import { staffActor } from "@/lib/pages/page-actor";
+import { shopClock } from "@/lib/shop-clock/service";
+import { archiveInstrumentAction } from "../actions";
+
+export const metadata: Metadata = { title: "Instruments" };
+
+export default async function InstrumentsPage({ searchParams }: PageProps<"/instruments">) {
+  const actor = await staffActor();
+  const asked = instrumentListQuery.safeParse(addressQuery(await searchParams, ["archived", "kind"]));
+  const first = await findInstruments(actor, asked.success ? asked.data : instrumentListQuery.parse({}));
+  const { locale, timeZone, demo } = await shopClock(actor);
+  const mayAdd = may(actor.role, "instruments.create");
+  return (
+    <Spread
+      left={
+        <LeftPage
+          title="Instruments"
+          subtitle="Every piano the shop looks after, with its readings and its history."
+          aside={demo ? <DemoBadge /> : null}
+          fold={null}
+        />
+      }
+      right={
+        <RightPage>
+          <WorkHead
+            title="Instruments"
+            actions={
+              mayAdd ? (
+                <LinkButton kind="primary" href="/instruments/new">
+                  New instrument
+                </LinkButton>
+              ) : null
+            }
+          />
+          <InstrumentsLedger
+            first={first}
+            locale={locale}
+            timeZone={timeZone}
+            mayAdd={mayAdd}
+            archive={may(actor.role, "instruments.place") ? archiveInstrumentAction : undefined}
+          />
+        </RightPage>
+      }
+    />
+  );
+}

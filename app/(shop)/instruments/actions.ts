@@ -1,0 +1,99 @@
+"use server";
+
+import { revalidatePath } from "next/cache";
+import { z } from "zod";
+import { defineAction } from "@/lib/doors/define-action";
+import { correctPlace, moveInstrument } from "@/lib/instruments/holdings/service";
+import {
+  holdingChange,
+  instrumentChange,
+  newHolding,
+  newInstrument,
+  stringInput,
+  stringsInput,
+} from "@/lib/instruments/schema";
+import { changeInstrument, createInstrument } from "@/lib/instruments/service";
+import { removeString, saveString, saveStrings } from "@/lib/instruments/strings/service";
+
+const showInstruments = () => revalidatePath("/instruments", "layout");
+
+export const createInstrumentAction = defineAction({
+  name: "instruments.create",
+  permission: "instruments.create",
+  input: newInstrument,
+  run: async (actor, input) => {
+    const record = await createInstrument(actor, input);
+    showInstruments();
+    return record;
+  },
+});
+
+export const changeInstrumentAction = defineAction({
+  name: "instruments.change",
+  permission: "instruments.change",
+  input: instrumentChange.omit({ archived: true }).extend({ id: z.uuid() }),
+  run: async (actor, { id, ...change }) => {
+    const record = await changeInstrument(actor, id, change);
+    showInstruments();
+    return record;
+  },
+});
+
+export const archiveInstrumentAction = defineAction({
+  name: "instruments.archive",
+  permission: "instruments.place",
+  input: z.object({ id: z.uuid(), version: z.int().positive(), archived: z.boolean() }),
+  run: async (actor, { id, ...change }) => {
+    const record = await changeInstrument(actor, id, change);
+    showInstruments();
+    return record;
+  },
+});
+
+export const moveInstrumentAction = defineAction({
+  name: "instruments.move",
+  permission: "instruments.place",
+  input: newHolding.extend({ instrumentId: z.uuid() }),
+  run: async (actor, { instrumentId, ...move }) => {
+    const record = await moveInstrument(actor, instrumentId, move);
+    showInstruments();
+    return record;
+  },
+});
+
+export const correctPlaceAction = defineAction({
+  name: "instruments.correct-place",
+  permission: "instruments.place",
+  input: holdingChange.extend({ instrumentId: z.uuid() }),
+  run: async (actor, { instrumentId, ...change }) => {
+    const record = await correctPlace(actor, instrumentId, change);
+    showInstruments();
+    return record;
+  },
+});
+
+const noteOf = z.object({ instrumentId: z.uuid(), midi: z.int().min(9).max(120) });
+
+export const saveStringAction = defineAction({
+  name: "instruments.save-string",
+  permission: "instruments.change",
+  input: noteOf.extend({ values: stringInput }),
+  run: (actor, { instrumentId, midi, values }) => saveString(actor, instrumentId, midi, values),
+});
+
+export const saveStringsAction = defineAction({
+  name: "instruments.save-strings",
+  permission: "instruments.change",
+  input: stringsInput.extend({ instrumentId: z.uuid() }),
+  run: (actor, { instrumentId, rows }) => saveStrings(actor, instrumentId, { rows }),
+});
+
+export const removeStringAction = defineAction({
+  name: "instruments.remove-string",
+  permission: "instruments.change",
+  input: noteOf,
+  run: async (actor, { instrumentId, midi }) => {
+    await removeString(actor, instrumentId, midi);
+    return { midi };
+  },
+});
