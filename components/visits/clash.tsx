@@ -25,9 +25,9 @@ export function Clash({
   onTake?: (time: string) => void;
 }) {
   return (
-    <div className="border-l-3 border-rust! bg-rust-wash py-3 pr-3 pl-4">
+    <div className="border-l-3 border-edge! py-1 pl-4">
       <p>
-        <b className="font-semibold">{clash.technicianName} is taken:</b>{" "}
+        In the way:{" "}
         <AppLink href={`/visits/${clash.visitId}`} className="link">
           {clash.siteName}
         </AppLink>

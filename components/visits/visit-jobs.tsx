@@ -27,7 +27,7 @@ export function VisitJobs({
   if (jobs.length === 0) {
     return (
       <EmptyState title="No instrument on this visit yet">
-        Add the instruments under “Change visit”; reading sheets hang on them.
+        Add them under “Other steps”; reading sheets hang on the instruments of a visit.
       </EmptyState>
     );
   }

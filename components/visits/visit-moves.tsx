@@ -4,6 +4,7 @@ import { useState } from "react";
 import { ActionStrip } from "@/components/shell/action-strip";
 import { Button, LinkButton } from "@/components/ui/button";
 import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
+import { Popover } from "@/components/ui/popover";
 import type { ActionResult } from "@/lib/doors/action-result";
 import type { Move, VisitState } from "@/lib/visits/rules";
 import { MoveDialog, type MovedVisit } from "./move-dialog";
@@ -64,11 +65,18 @@ export function useVisitMoves({ visit, step }: Pick<MovesProps, "visit" | "step"
   return { busy, refused, take };
 }
 
-export function VisitMoves({ visit, locale, step, move: moveAction }: MovesProps) {
+export function VisitMoves({
+  visit,
+  locale,
+  step,
+  move: moveAction,
+  changeHref,
+}: MovesProps & { changeHref: string | undefined }) {
   const { busy, refused, take } = useVisitMoves({ visit, step });
   const [asking, setAsking] = useState<VisitState | null>(null);
   const next = nextMove(visit.moves);
-  const others = visit.moves.filter((move) => move !== next);
+  const back = visit.moves.find((move) => move.back);
+  const others = visit.moves.filter((move) => move !== next && move !== back);
 
   function press(move: Move) {
     if (move.asksReason) setAsking(move.to);
@@ -78,16 +86,39 @@ export function VisitMoves({ visit, locale, step, move: moveAction }: MovesProps
   return (
     <>
       <div className="flex flex-wrap items-center gap-2" data-no-print>
-        {others.map((move) => (
-          <Button
-            key={move.to}
-            kind={move.back ? "quiet" : "secondary"}
-            busy={busy === move.to}
-            onClick={() => press(move)}
-          >
-            {moveLabel(move)}
+        {back ? (
+          <Button kind="quiet" busy={busy === back.to} onClick={() => press(back)}>
+            {moveLabel(back)}
           </Button>
-        ))}
+        ) : null}
+        {others.length > 0 || changeHref ? (
+          <Popover label="Other steps" title="Other steps">
+            <ul className="-mx-2">
+              {others.map((move) => (
+                <li key={move.to}>
+                  <Button
+                    kind="quiet"
+                    className="w-full justify-start!"
+                    busy={busy === move.to}
+                    onClick={(event) => {
+                      event.currentTarget.closest<HTMLElement>("[popover]")?.hidePopover();
+                      press(move);
+                    }}
+                  >
+                    {moveLabel(move)}
+                  </Button>
+                </li>
+              ))}
+              {changeHref ? (
+                <li>
+                  <LinkButton kind="quiet" className="w-full justify-start!" href={changeHref}>
+                    Change people, work or notes
+                  </LinkButton>
+                </li>
+              ) : null}
+            </ul>
+          </Popover>
+        ) : null}
         {next ? (
           <Button
             kind="primary"

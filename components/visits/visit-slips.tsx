@@ -18,7 +18,7 @@ export function VisitSlips({
   if (visits.length === 0) return null;
   return (
     <section className="mt-6">
-      <h3>{title}</h3>
+      <h2 className="text-19! leading-6!">{title}</h2>
       <p className="lab mt-0.5 mb-2">{about}</p>
       <ul className="border-t border-edge!">
         {visits.map((visit) => (

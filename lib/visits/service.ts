@@ -33,9 +33,9 @@ import type { NewVisit, VisitChange, VisitListQuery, VisitRecord, VisitRow } fro
 import { type SiteTime, siteTime } from "./times";
 
 export async function findVisits(actor: Actor, query: VisitListQuery): Promise<ListPage<VisitRow>> {
-  authorise(actor, "visits.read");
+  const reach = authorise(actor, "visits.read");
   return withShop(actor, async (tx) => {
-    const page = await listVisits(tx, actor.shopId, query);
+    const page = await listVisits(tx, actor.shopId, query, reach);
     return { next: page.next, items: await rowsOf(tx, actor, page.items) };
   });
 }

@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { ActionStrip } from "@/components/shell/action-strip";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { AppLink } from "@/components/ui/app-link";
 import { LinkButton } from "@/components/ui/button";
@@ -53,8 +54,9 @@ function DayPage({ day, now }: { day: WorkDay; now: string }) {
   const count = day.visits.length;
   return (
     <LeftPage
-      crumb={[{ label: day.day === day.today ? "Today" : "Another day" }]}
-      title={showWeekday(day.day, day.locale)}
+      crumb={[{ label: crumbOf(day) }]}
+      // Day and month stay on one line.
+      title={showWeekday(day.day, day.locale).replace(/(\d+) (?=\p{L})/u, "$1\u00a0")}
       subtitle={count === 0 ? "No visits" : count === 1 ? "1 visit" : `${count} visits`}
       aside={day.demo ? <DemoBadge /> : null}
       fold={null}
@@ -88,6 +90,12 @@ function DayPage({ day, now }: { day: WorkDay; now: string }) {
       </div>
     </LeftPage>
   );
+}
+
+function crumbOf({ day, today }: WorkDay): string {
+  if (day === today) return "Today";
+  const year = day.slice(0, 4);
+  return year === today.slice(0, 4) ? "Another day" : `Another day, ${year}`;
 }
 
 function DayTurner({ day }: { day: WorkDay }) {
@@ -164,15 +172,24 @@ function NothingToday({ day, actor }: { day: WorkDay; actor: Actor }) {
 }
 
 function ShopsDay({ day, actor }: { day: WorkDay; actor: Actor }) {
+  const books = may(actor.role, "visits.change");
+  const bookHref = `/visits/new?date=${day.day}`;
   return (
     <>
+      {books && day.visits.length > 0 ? (
+        <ActionStrip>
+          <LinkButton kind="primary" href={bookHref}>
+            Book a visit
+          </LinkButton>
+        </ActionStrip>
+      ) : null}
       {day.visits.length > 0 ? (
         <WorkHead
           title="What waits"
           summary="Offers without an answer, and visits nobody has closed."
           actions={
-            may(actor.role, "visits.change") ? (
-              <LinkButton kind="primary" href={`/visits/new?date=${day.day}`}>
+            books ? (
+              <LinkButton kind="primary" href={bookHref} className="max-lg:hidden">
                 Book a visit
               </LinkButton>
             ) : null

@@ -88,7 +88,7 @@ async function overlapError(actor: Actor, { visitId, technicianIds, time }: Book
   const to = other.endsLocal.slice(11);
   return new AppError(
     "visit-overlap",
-    `${other.technicianName} is at ${other.siteName} from ${from} to ${to} then. Choose another time or another technician.`,
+    `${other.technicianName} is at ${other.siteName} from ${from} to ${to}. Choose another time or another technician.`,
     { current },
   );
 }

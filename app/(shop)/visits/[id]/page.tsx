@@ -3,7 +3,6 @@ import { notFound } from "next/navigation";
 import { cache } from "react";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { AppLink } from "@/components/ui/app-link";
-import { LinkButton } from "@/components/ui/button";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { Facts } from "@/components/ui/facts";
 import { Note } from "@/components/ui/note";
@@ -56,12 +55,15 @@ export default async function VisitPage({ params }: Props) {
             actions={
               <>
                 {demo ? <DemoBadge /> : null}
-                {visit.canChange && !isOver(visit.state) ? (
-                  <LinkButton href={`/visits/${visit.id}/change`} kind="quiet">
-                    Change visit
-                  </LinkButton>
-                ) : null}
-                <VisitMoves visit={visit} locale={locale} step={stepVisitAction} move={moveVisitAction} />
+                <VisitMoves
+                  visit={visit}
+                  locale={locale}
+                  step={stepVisitAction}
+                  move={moveVisitAction}
+                  changeHref={
+                    visit.canChange && !isOver(visit.state) ? `/visits/${visit.id}/change` : undefined
+                  }
+                />
               </>
             }
           />
