@@ -50,7 +50,7 @@ export default async function OwnPage() {
       />
       <CustomerVisits title="Visits until now" visits={past} locale={clock.locale} />
       <div className="mt-10 flex flex-wrap items-center gap-2">
-        <LinkButton href="/shop/account">Your account</LinkButton>
+        <LinkButton href="/my/account">Your account</LinkButton>
         <SignOutButton action={signOutAction} />
       </div>
     </CustomerPage>

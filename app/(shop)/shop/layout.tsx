@@ -3,26 +3,19 @@ import { LeftPage, RightPage, Spread } from "@/components/shell/spread";
 import { Tabs } from "@/components/shell/tabs";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { Facts } from "@/components/ui/facts";
-import { may } from "@/lib/auth/access";
-import { signedInActor } from "@/lib/pages/page-actor";
+import { staffActor } from "@/lib/pages/page-actor";
 import { roleMeaning, roleWords } from "@/lib/people/role-words";
 import { getShop } from "@/lib/shop/service";
 
 /** The shop's settings and the person's own, on facing pages: who the shop is, and what can be changed. */
 export default async function ShopSettingsLayout({ children }: { children: ReactNode }) {
-  const actor = await signedInActor();
+  const actor = await staffActor();
   const shop = await getShop(actor);
   const regions = new Intl.DisplayNames("en-GB", { type: "region" });
-  const staff = may(actor.role, "team.read");
   return (
     <Spread
       left={
-        <LeftPage
-          crumb={staff ? undefined : [{ label: "Your instruments and visits", href: "/my" }]}
-          title={shop.name}
-          subtitle="The shop"
-          aside={shop.demo ? <DemoBadge /> : undefined}
-        >
+        <LeftPage title={shop.name} subtitle="The shop" aside={shop.demo ? <DemoBadge /> : undefined}>
           <Facts
             facts={[
               { name: "Country", value: regions.of(shop.country) },
@@ -45,13 +38,9 @@ export default async function ShopSettingsLayout({ children }: { children: React
           <Tabs
             label="Shop"
             items={[
-              ...(staff
-                ? [
-                    { href: "/shop", label: "Facts", exact: true },
-                    { href: "/shop/team", label: "Team" },
-                    { href: "/shop/styles", label: "House styles" },
-                  ]
-                : []),
+              { href: "/shop", label: "Facts", exact: true },
+              { href: "/shop/team", label: "Team" },
+              { href: "/shop/styles", label: "House styles" },
               { href: "/shop/account", label: "Your account" },
             ]}
           />

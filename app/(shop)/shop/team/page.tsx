@@ -1,5 +1,4 @@
 import type { Metadata } from "next";
-import { redirect } from "next/navigation";
 import { InvitationList } from "@/components/people/invitation-list";
 import { InviteForm } from "@/components/people/invite-form";
 import { TeamList } from "@/components/people/team-list";
@@ -9,7 +8,7 @@ import { EmptyState } from "@/components/ui/states";
 import { may } from "@/lib/auth/access";
 import { showDayOf } from "@/lib/dates";
 import { mailConfigured } from "@/lib/mail/send";
-import { signedInActor } from "@/lib/pages/page-actor";
+import { staffActor } from "@/lib/pages/page-actor";
 import { listInvitations } from "@/lib/people/invitations/service";
 import { listTeam } from "@/lib/people/service";
 import { getShop } from "@/lib/shop/service";
@@ -24,8 +23,7 @@ import {
 export const metadata: Metadata = { title: "Team" };
 
 export default async function TeamPage() {
-  const actor = await signedInActor();
-  if (!may(actor.role, "team.read")) redirect("/shop/account");
+  const actor = await staffActor();
   const canChange = may(actor.role, "team.change");
   const [team, invitations, shop] = await Promise.all([
     listTeam(actor),
