@@ -108,20 +108,14 @@ async function runBrowser(report, filters, distDir) {
   return counts;
 }
 
-async function buildAndBrowse(filters) {
-  // One run at a time serves from the tests' copy of the build; the lock goes with this process.
+/** One run at a time serves from the tests' copy of the build; the lock goes with this process. */
+async function waitForBrowserTurn() {
   let told = false;
   await acquire("browser", (holder) => {
     if (!told) say(`Waiting for the browser tests of process ${holder.pid} …`);
     told = true;
     return true;
   });
-  let distDir;
-  await check("Build", async (report) => {
-    ({ distDir } = await buildPages(report, () => copyBuildFor("test")));
-    return { passed: 1, failed: 0 };
-  });
-  await check("Browser tests", (report) => runBrowser(report, filters, distDir));
 }
 
 async function test() {
@@ -138,9 +132,18 @@ async function test() {
   if (chosen.has("types")) await check("Types", (report) => alone(() => runTypes(report)));
   if (chosen.has("unit")) await check("Unit tests", (report) => runVitest("unit", { report, filters }));
   if (chosen.has("scripts")) await check("Tests of the scripts", runScriptTests);
+  if (chosen.has("browser")) await waitForBrowserTurn();
+  // The integration tests read the build's manifests, to know every door there is.
+  let distDir;
+  if (chosen.has("integration") || chosen.has("browser"))
+    await check("Build", async (report) => {
+      const copy = chosen.has("browser") ? () => copyBuildFor("test") : () => undefined;
+      ({ distDir } = await buildPages(report, copy));
+      return { passed: 1, failed: 0 };
+    });
   if (chosen.has("integration"))
     await check("Integration tests", (report) => runIntegration(report, filters));
-  if (chosen.has("browser")) await buildAndBrowse(filters);
+  if (chosen.has("browser")) await check("Browser tests", (report) => runBrowser(report, filters, distDir));
 }
 
 try {

@@ -47,8 +47,10 @@ export function childEnvironment(extra = {}, caller = process.env) {
     for (const name of Object.keys(env)) if (name.toLowerCase() === "npm_config_cache") delete env[name];
     env.npm_config_cache = path.join(localFolder, "npm-cache");
   }
+  // What children print goes to log files.
+  delete env.FORCE_COLOR;
   if (env.TMPDIR && !isWritableFolder(env.TMPDIR)) delete env.TMPDIR;
-  return { ...env, NEXT_TELEMETRY_DISABLED: "1", BETTER_AUTH_TELEMETRY: "0", ...extra };
+  return { ...env, NO_COLOR: "1", NEXT_TELEMETRY_DISABLED: "1", BETTER_AUTH_TELEMETRY: "0", ...extra };
 }
 
 /** Folders for throw-away data, best first. */

@@ -36,6 +36,8 @@ async function readAll(stream: Readable): Promise<Buffer> {
 const smtp = new SMTPServer({
   authOptional: true,
   disabledCommands: ["STARTTLS", "AUTH"],
+  // Who connects is known, and a machine without a name server would wait for the answer.
+  disableReverseLookup: true,
   size: largestMessage,
   logger: false,
   async onData(stream, session, done) {

@@ -78,7 +78,7 @@ test("a pid file that names an unrelated living process does not stop the start,
   assert.equal((await throwAway.cluster.sql("select 1")).trim(), "1");
 });
 
-test("a port taken between the look and the start is given up for the next", async () => {
+test("a taken port is given up for the next", async () => {
   await throwAway.cluster.stop();
   const blocker = net.createServer();
   await new Promise((resolve) => blocker.listen(options.preferredPort, "127.0.0.1", resolve));

@@ -8,7 +8,9 @@ let transport;
 
 before(async () => {
   mailbox = await startMailbox({ log: "mailbox-scripts" });
-  transport = nodemailer.createTransport(`${mailbox.smtpUrl}?ignoreTLS=true`);
+  transport = nodemailer.createTransport(
+    `${mailbox.smtpUrl}?ignoreTLS=true&pool=true&maxConnections=1&maxMessages=10000`,
+  );
 });
 after(async () => {
   transport.close();
