@@ -74,6 +74,9 @@ export const newHolding = holdingFields.extend({
 /** A slip in the present place put right; history is not rewritten. */
 export const holdingChange = holdingFields.partial().extend({ version: z.int().positive() });
 
+/** What the form of a move or of a correction holds. */
+export const placeForm = newHolding.extend({ instrumentId: z.uuid() });
+
 export const holdingRecord = z.object({
   id: z.uuid(),
   siteId: z.uuid(),

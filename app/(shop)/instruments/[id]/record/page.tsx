@@ -1,0 +1,119 @@
+import type { Metadata } from "next";
+import { InstrumentForm } from "@/components/instruments/instrument-form";
+import { BreakWords, KeysWords, temperamentWords } from "@/components/instruments/instrument-words";
+import { PlaceSection } from "@/components/instruments/place-section";
+import { StringsTable } from "@/components/instruments/strings-table";
+import { ArchiveButton } from "@/components/records/archive-button";
+import { PageSection } from "@/components/shell/page-section";
+import { WorkHead } from "@/components/shell/spread";
+import { Facts } from "@/components/ui/facts";
+import { may } from "@/lib/auth/access";
+import { showDayOf } from "@/lib/dates";
+import { newId } from "@/lib/ids";
+import { findHoldings } from "@/lib/instruments/holdings/service";
+import { instrumentKeys } from "@/lib/instruments/keys";
+import { kindLabels } from "@/lib/instruments/rules";
+import type { InstrumentRecord } from "@/lib/instruments/schema";
+import { findStrings } from "@/lib/instruments/strings/service";
+import { staffActor } from "@/lib/pages/page-actor";
+import { shopClock } from "@/lib/shop-clock/service";
+import {
+  archiveInstrumentAction,
+  changeInstrumentAction,
+  correctPlaceAction,
+  moveInstrumentAction,
+  removeStringAction,
+  saveStringAction,
+  saveStringsAction,
+} from "../../actions";
+import { instrumentOf } from "../instrument-of";
+
+export const metadata: Metadata = { title: "Record" };
+
+export default async function InstrumentRecordPage({ params }: PageProps<"/instruments/[id]/record">) {
+  const instrument = await instrumentOf((await params).id);
+  const actor = await staffActor();
+  const [clock, holdings, strings] = await Promise.all([
+    shopClock(actor),
+    findHoldings(actor, instrument.id),
+    findStrings(actor, instrument.id),
+  ]);
+  const mayPlace = may(actor.role, "instruments.place");
+  return (
+    <>
+      <WorkHead
+        title="Record"
+        summary={`Changed ${showDayOf(instrument.updatedAt, clock.locale, clock.timeZone)}`}
+        actions={
+          mayPlace ? (
+            <ArchiveButton
+              name={instrument.name}
+              record={instrument}
+              action={archiveInstrumentAction}
+              listKey={instrumentKeys.all}
+              listHref="/instruments"
+            />
+          ) : null
+        }
+      />
+      <div className="grid gap-10">
+        {instrument.canChange ? (
+          // A saved record comes back under its new version, and the form begins again from it.
+          <InstrumentForm key={instrument.version} action={changeInstrumentAction} record={instrument} />
+        ) : (
+          <ReadOnlyFacts instrument={instrument} />
+        )}
+        <PlaceSection
+          instrument={instrument}
+          earlier={holdings.items.filter((holding) => holding.until !== null)}
+          mayMove={mayPlace}
+          newId={newId()}
+          today={clock.today}
+          locale={clock.locale}
+          move={moveInstrumentAction}
+          correct={correctPlaceAction}
+        />
+        <PageSection
+          title="Strings"
+          aside={strings.items.length > 0 ? `${strings.items.length} notes` : undefined}
+        >
+          {strings.items.length > 0 || instrument.canChange ? (
+            <StringsTable
+              key={`${instrument.firstMidi}-${instrument.lastMidi}`}
+              instrument={instrument}
+              saved={strings.items}
+              canChange={instrument.canChange}
+              actions={{ save: saveStringAction, saveAll: saveStringsAction, remove: removeStringAction }}
+            />
+          ) : (
+            <p className="text-ink-soft">Nobody has measured them yet.</p>
+          )}
+        </PageSection>
+      </div>
+    </>
+  );
+}
+
+function ReadOnlyFacts({ instrument }: { instrument: InstrumentRecord }) {
+  return (
+    <div>
+      <Facts
+        facts={[
+          { name: "Maker", value: instrument.maker },
+          instrument.model !== "" && { name: "Model", value: instrument.model },
+          instrument.serial !== "" && { name: "Serial", value: instrument.serial },
+          instrument.year !== null && { name: "Year", value: instrument.year },
+          { name: "Kind", value: kindLabels[instrument.kind] },
+          instrument.room !== "" && { name: "Room", value: instrument.room },
+          { name: "Keys", value: <KeysWords {...instrument} /> },
+          { name: "Break", value: <BreakWords breakMidi={instrument.breakMidi} /> },
+          { name: "Pitch", value: `A4 = ${instrument.referenceHz} Hz` },
+          { name: "Temperament", value: temperamentWords(instrument.temperament) },
+        ]}
+      />
+      <p className="lab mt-3">
+        You can change instruments of visits you are on. The office can put you on one.
+      </p>
+    </div>
+  );
+}
