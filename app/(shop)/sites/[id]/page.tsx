@@ -1,0 +1,70 @@
+import type { Metadata } from "next";
+import { InstrumentLines } from "@/components/instruments/instrument-lines";
+import { ArchiveButton } from "@/components/records/archive-button";
+import { PageSection } from "@/components/shell/page-section";
+import { RightPage, Spread, WorkHead } from "@/components/shell/spread";
+import { SiteAbout } from "@/components/sites/site-about";
+import { LinkButton } from "@/components/ui/button";
+import { may } from "@/lib/auth/access";
+import { instrumentListQuery } from "@/lib/instruments/schema";
+import { findInstruments } from "@/lib/instruments/service";
+import { staffActor } from "@/lib/pages/page-actor";
+import { shopClock } from "@/lib/shop-clock/service";
+import { siteKeys } from "@/lib/sites/keys";
+import { changeSiteAction } from "../actions";
+import { siteOf } from "./site-of";
+
+type Props = PageProps<"/sites/[id]">;
+
+export async function generateMetadata({ params }: Props): Promise<Metadata> {
+  return { title: (await siteOf((await params).id)).name };
+}
+
+export default async function SitePage({ params }: Props) {
+  const site = await siteOf((await params).id);
+  const actor = await staffActor();
+  const [clock, instruments] = await Promise.all([
+    shopClock(actor),
+    findInstruments(actor, instrumentListQuery.parse({ siteId: site.id, most: 100 })),
+  ]);
+  const count = instruments.items.length;
+  return (
+    <Spread
+      left={<SiteAbout site={site} clock={clock} />}
+      right={
+        <RightPage>
+          <WorkHead
+            title={count === 1 ? "1 instrument" : `${count}${instruments.next ? "+" : ""} instruments`}
+            actions={
+              <>
+                {may(actor.role, "sites.change") ? (
+                  <>
+                    <ArchiveButton
+                      name={site.name}
+                      record={site}
+                      action={changeSiteAction}
+                      listKey={siteKeys.all}
+                      listHref="/sites"
+                    />
+                    <LinkButton href={`/sites/${site.id}/edit`}>Change</LinkButton>
+                  </>
+                ) : null}
+                {may(actor.role, "visits.change") ? (
+                  <LinkButton href={`/visits/new?site=${site.id}`}>Book a visit</LinkButton>
+                ) : null}
+                {may(actor.role, "instruments.create") ? (
+                  <LinkButton kind="primary" href={`/instruments/new?site=${site.id}`}>
+                    Add an instrument
+                  </LinkButton>
+                ) : null}
+              </>
+            }
+          />
+          <PageSection title="Standing here" aside={instruments.next ? "the first 100" : undefined}>
+            <InstrumentLines instruments={instruments.items} clock={clock} showOwner />
+          </PageSection>
+        </RightPage>
+      }
+    />
+  );
+}
