@@ -3,7 +3,7 @@ import type { Handle } from "@/db/client";
 import { customer } from "@/db/schema";
 import type { CustomerChange, CustomerListQuery, NewCustomer } from "@/lib/customers/schema";
 import { byName, type Order, orderBy, paged, pageStart } from "./keyset";
-import { matching, matchingOwn, type Reach } from "./search";
+import { isOwn, matching, matchingOwn, type Reach } from "./search";
 
 const columns = {
   id: customer.id,
@@ -41,6 +41,7 @@ export async function listCustomers(db: Handle, shopId: string, query: CustomerL
     .where(
       and(
         eq(customer.shopId, shopId),
+        reach === "own" ? isOwn(customer.id) : undefined,
         query.archived === "only" ? isNotNull(customer.archivedAt) : isNull(customer.archivedAt),
         query.q ? searched(query.q, query.archived === "only", reach) : undefined,
         pageStart(order, query, sort.type),

@@ -4,7 +4,7 @@ import { customer, instrument, instrumentHolding, site } from "@/db/schema";
 import type { InstrumentChange, InstrumentListQuery, NewInstrument } from "@/lib/instruments/schema";
 import { isoInstant } from "./iso";
 import { byName, type Order, orderBy, paged, pageStart } from "./keyset";
-import { matching, matchingOwn, type Reach } from "./search";
+import { isOwn, matching, matchingOwn, type Reach } from "./search";
 import { soundedPitch } from "./sounded-pitch";
 
 const owner = aliasedTable(customer, "owner");
@@ -21,16 +21,32 @@ const itsOwner = and(eq(owner.shopId, instrumentHolding.shopId), eq(owner.id, in
 const siteName = sql<string>`coalesce(${site.name}, '')`;
 const ownerName = sql<string>`coalesce(${owner.name}, '')`;
 
-const sorts: Record<InstrumentListQuery["sort"], { by: SQL; type: "text" | "timestamptz" }> = {
-  name: { by: byName(instrument.name), type: "text" },
-  place: { by: sql`${siteName} collate "und-x-icu"`, type: "text" },
-  owner: { by: sql`${ownerName} collate "und-x-icu"`, type: "text" },
-  updated: { by: sql`${instrument.updatedAt}`, type: "timestamptz" },
+type Sort = { by: SQL; type: "text" | "timestamptz"; joined?: boolean };
+
+const sorts: Record<Reach, Record<InstrumentListQuery["sort"], Sort>> = {
+  all: {
+    name: { by: byName(instrument.name), type: "text" },
+    place: { by: byName(site.name), type: "text", joined: true },
+    owner: { by: byName(owner.name), type: "text", joined: true },
+    updated: { by: sql`${instrument.updatedAt}`, type: "timestamptz" },
+  },
+  own: {
+    name: { by: byName(instrument.name), type: "text" },
+    place: { by: sql`${siteName} collate "und-x-icu"`, type: "text" },
+    owner: { by: sql`${ownerName} collate "und-x-icu"`, type: "text" },
+    updated: { by: sql`${instrument.updatedAt}`, type: "timestamptz" },
+  },
 };
 
+/**
+ * Every instrument stands somewhere and is somebody's, and staff see where and whose. Saying so makes inner
+ * joins of the outer ones, which may then begin with the sites or the owners in their order.
+ */
+const placed = and(isNotNull(site.id), isNotNull(owner.id));
+
 export async function listInstruments(db: Handle, shopId: string, query: InstrumentListQuery, reach: Reach) {
-  const sort = sorts[query.sort];
-  const order: Order = { by: sort.by, direction: query.direction, id: sql`${instrument.id}` };
+  const sort = sorts[reach][query.sort];
+  const order: Order = { ...sort, direction: query.direction, id: sql`${instrument.id}` };
   const archived = query.archived === "only";
   const rows = await db
     .select({
@@ -65,6 +81,7 @@ export async function listInstruments(db: Handle, shopId: string, query: Instrum
     .where(
       and(
         eq(instrument.shopId, shopId),
+        reach === "own" ? isOwn(instrumentHolding.ownerId) : placed,
         query.siteId ? eq(instrumentHolding.siteId, query.siteId) : undefined,
         query.ownerId ? eq(instrumentHolding.ownerId, query.ownerId) : undefined,
         query.kind ? eq(instrument.kind, query.kind) : undefined,

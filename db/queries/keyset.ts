@@ -6,7 +6,13 @@ import { AppError } from "@/lib/errors";
  * Pages by key, not by offset: a page begins after the last row of the one before, so rows added meanwhile
  * neither repeat nor vanish. The order is one expression (never null) and the id.
  */
-export type Order = { by: SQL; direction: "asc" | "desc"; id: SQL };
+export type Order = {
+  by: SQL;
+  direction: "asc" | "desc";
+  id: SQL;
+  /** The expression is of a table joined to the one of the id: no index covers both. */
+  joined?: boolean;
+};
 
 export type Page = { cursor?: string | undefined; most: number };
 
@@ -48,7 +54,9 @@ export function pageStart(order: Order, page: Page, type: KeyType): SQL | undefi
   if (!page.cursor) return undefined;
   const { value, id } = decode(page.cursor, type);
   const comparison = sql.raw(order.direction === "asc" ? ">" : "<");
-  return sql`(${order.by}, ${order.id}) ${comparison} (${value}::${sql.raw(type)}, ${id}::uuid)`;
+  const after = sql`(${order.by}, ${order.id}) ${comparison} (${value}::${sql.raw(type)}, ${id}::uuid)`;
+  // Says no more than `after`, but alone it can go to the index of the table it is of.
+  return order.joined ? sql`${order.by} ${comparison}= ${value}::${sql.raw(type)} and ${after}` : after;
 }
 
 export function orderBy(order: Order): SQL {

@@ -23,17 +23,16 @@ const sheetColumns = {
     where n.shop_id = reading_sheet.shop_id and n.sheet_id = reading_sheet.id)`,
 };
 
-function sheets(db: Handle) {
-  return db
-    .select(sheetColumns)
-    .from(readingSheet)
-    .leftJoin(job, and(eq(job.shopId, readingSheet.shopId), eq(job.id, readingSheet.jobId)))
-    .leftJoin(member, and(eq(member.shopId, readingSheet.shopId), eq(member.id, readingSheet.takenBy)))
-    .$dynamic();
-}
+const itsJob = and(eq(job.shopId, readingSheet.shopId), eq(job.id, readingSheet.jobId));
+const itsReader = and(eq(member.shopId, readingSheet.shopId), eq(member.id, readingSheet.takenBy));
 
 export async function sheetById(db: Handle, shopId: string, id: string) {
-  const [row] = await sheets(db).where(and(eq(readingSheet.shopId, shopId), eq(readingSheet.id, id)));
+  const [row] = await db
+    .select(sheetColumns)
+    .from(readingSheet)
+    .leftJoin(job, itsJob)
+    .leftJoin(member, itsReader)
+    .where(and(eq(readingSheet.shopId, shopId), eq(readingSheet.id, id)));
   return row;
 }
 
@@ -44,7 +43,11 @@ export async function listSheets(db: Handle, shopId: string, instrumentId: strin
     direction: "desc",
     id: sql`${readingSheet.id}`,
   };
-  const rows = await sheets(db)
+  const rows = await db
+    .select({ ...sheetColumns, orderKey: sql<string>`(${readingSheet.takenAt})::text` })
+    .from(readingSheet)
+    .leftJoin(job, itsJob)
+    .leftJoin(member, itsReader)
     .where(
       and(
         eq(readingSheet.shopId, shopId),
@@ -55,10 +58,7 @@ export async function listSheets(db: Handle, shopId: string, instrumentId: strin
     )
     .orderBy(orderBy(order))
     .limit(query.most + 1);
-  return paged(
-    rows.map((row) => ({ ...row, orderKey: row.takenAt.toISOString() })),
-    query,
-  );
+  return paged(rows, query);
 }
 
 export async function insertSheet(

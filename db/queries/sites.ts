@@ -3,7 +3,7 @@ import type { Handle } from "@/db/client";
 import { customer, site } from "@/db/schema";
 import type { NewSite, SiteChange, SiteListQuery } from "@/lib/sites/schema";
 import { byName, type Order, orderBy, paged, pageStart } from "./keyset";
-import { matching, matchingOwn, type Reach } from "./search";
+import { isOwn, matching, matchingOwn, type Reach } from "./search";
 
 const columns = {
   id: site.id,
@@ -34,7 +34,12 @@ const itsCustomer = and(eq(customer.shopId, site.shopId), eq(customer.id, site.c
 
 export async function listSites(db: Handle, shopId: string, query: SiteListQuery, reach: Reach) {
   const sort = sorts[query.sort];
-  const order: Order = { by: sort.by, direction: query.direction, id: sql`${site.id}` };
+  const order: Order = {
+    by: sort.by,
+    direction: query.direction,
+    id: sql`${site.id}`,
+    joined: query.sort === "customer",
+  };
   const { accessNotes: _, ...listed } = columns;
   const rows = await db
     .select({
@@ -49,6 +54,7 @@ export async function listSites(db: Handle, shopId: string, query: SiteListQuery
     .where(
       and(
         eq(site.shopId, shopId),
+        reach === "own" ? isOwn(site.customerId) : undefined,
         query.customerId ? eq(site.customerId, query.customerId) : undefined,
         query.archived === "only" ? isNotNull(site.archivedAt) : isNull(site.archivedAt),
         query.q ? searched(query.q, query.archived === "only", reach) : undefined,

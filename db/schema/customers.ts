@@ -76,6 +76,7 @@ export const site = pgTable(
       foreignColumns: [customer.shopId, customer.id],
     }),
     index("site_by_name").on(table.shopId, sql`name collate "und-x-icu"`, table.id),
+    index("site_by_city").on(table.shopId, sql`city collate "und-x-icu"`, table.id),
     index("site_by_change").on(table.shopId, table.updatedAt, table.id),
     index("site_of_customer").on(table.shopId, table.customerId),
     index("site_search").using("gin", table.shopId, sql`search_text gin_trgm_ops`),

@@ -66,6 +66,13 @@ export const visit = pgTable(
     foreignKey({ columns: [table.shopId, table.movedToId], foreignColumns: [table.shopId, table.id] }),
     foreignKey({ columns: [table.shopId, table.answersVisitId], foreignColumns: [table.shopId, table.id] }),
     index("visit_by_start").on(table.shopId, table.startsLocal, table.id),
+    // Partial, since an equality of states is not leakproof and no index of states would be asked behind the wall.
+    index("visit_unfinished")
+      .on(table.shopId, table.startsLocal, table.id)
+      .where(sql`state in ('offered', 'confirmed', 'on-the-way', 'in-progress', 'done')`),
+    index("visit_come_to_nothing")
+      .on(table.shopId, table.startsLocal, table.id)
+      .where(sql`state in ('declined', 'moved', 'cancelled', 'missed')`),
     index("visit_of_site").on(table.shopId, table.siteId, table.startsLocal),
     check("visit_ends_after_start", sql`${table.endsLocal} > ${table.startsLocal}`),
     check("visit_fold", sql`${table.startsFold} in (0, 1) and ${table.endsFold} in (0, 1)`),

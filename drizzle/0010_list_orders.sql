@@ -1,0 +1,3 @@
+CREATE INDEX "site_by_city" ON "site" USING btree ("shop_id",city collate "und-x-icu","id");--> statement-breakpoint
+CREATE INDEX "visit_unfinished" ON "visit" USING btree ("shop_id","starts_local","id") WHERE state in ('offered', 'confirmed', 'on-the-way', 'in-progress', 'done');--> statement-breakpoint
+CREATE INDEX "visit_come_to_nothing" ON "visit" USING btree ("shop_id","starts_local","id") WHERE state in ('declined', 'moved', 'cancelled', 'missed');
