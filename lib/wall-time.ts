@@ -57,6 +57,13 @@ export function offsetText(minutes: number): string {
   return `${minutes < 0 ? "-" : "+"}${two(Math.floor(size / 60))}:${two(size % 60)}`;
 }
 
+/** What a zone's clocks show at an instant, to the minute. */
+export function wallTimeOf(instant: Date, timeZone: string): WallTime {
+  return wallText(
+    Math.floor(instant.getTime() / minute) * minute + offsetOf(instant.getTime(), timeZone) * minute,
+  );
+}
+
 export function addMinutes(wall: WallTime, minutes: number): WallTime {
   return wallText(Date.parse(`${wall}Z`) + minutes * minute);
 }

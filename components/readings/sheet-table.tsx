@@ -1,0 +1,138 @@
+"use client";
+
+import { useRef } from "react";
+import { useWidth } from "@/components/charts/use-width";
+import { PowerOfTen } from "@/components/ui/glyphs";
+import type { ReadingUnit } from "@/lib/readings/typed-number";
+import { NoteRow } from "./note-row";
+import type { OpenNoteActions } from "./open-note";
+import { emptyRow, rowKey } from "./sheet-row";
+import { shownRows } from "./sheet-state";
+import type { useCells } from "./use-cells";
+import type { ReadingSheetState } from "./use-reading-sheet";
+
+export type TableMeasures = { wide: boolean; note: number; cell: number; b: number; fit: number };
+
+/** The sheet as drawn from 800 pixels up; below, B and the quality stand on a line under the partials. */
+export function tableMeasures(width: number, columns: number): TableMeasures {
+  if (width >= 800) {
+    return { wide: true, note: 72, cell: 56, b: 120, fit: width - 72 - 56 * columns - 120 };
+  }
+  const note = width < 560 ? 44 : 56;
+  return { wide: false, note, cell: Math.min(72, Math.floor((width - note) / columns)), b: 0, fit: 0 };
+}
+
+export type Suggestion = { midi: number; b: number | null };
+
+type Props = {
+  prefix: string;
+  sheet: ReadingSheetState;
+  cells: ReturnType<typeof useCells>;
+  columns: readonly number[];
+  unit: ReadingUnit;
+  canChange: boolean;
+  /** The note to read next, ready to be typed into. */
+  suggestion: Suggestion | null;
+  actions: OpenNoteActions;
+};
+
+export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, suggestion, actions }: Props) {
+  const box = useRef<HTMLDivElement>(null);
+  const width = useWidth(box, 856);
+  const measures = tableMeasures(width, columns.length);
+  const { state, liveOf } = sheet;
+  const rows = shownRows(state);
+  const next = suggestion && emptyRow({ midi: suggestion.midi, string: "all", take: 1 });
+  const tabPartial = cells.inHand?.partial ?? columns[0] ?? 1;
+
+  return (
+    <div ref={box}>
+      <table
+        className="w-full table-fixed border-collapse"
+        onFocus={cells.onFocus}
+        onBlur={cells.onBlur}
+        onKeyDown={cells.onKeyDown}
+        onPaste={cells.onPaste}
+      >
+        <caption className="sr-only">
+          Readings by note and partial, in {unit === "hz" ? "hertz" : "cents from the harmonic"}
+        </caption>
+        <colgroup>
+          <col style={{ width: measures.note }} />
+          {columns.map((partial) => (
+            <col key={partial} style={{ width: measures.cell }} />
+          ))}
+          {measures.wide ? <col style={{ width: measures.b }} /> : null}
+          {measures.wide ? <col style={{ width: measures.fit }} /> : <col />}
+        </colgroup>
+        <thead>
+          <tr className="h-8 border-b border-edge! align-bottom text-12 [&>*]:pb-1.5 [&>*]:font-medium [&>*]:text-ink-soft">
+            <th scope="col" className="pl-3 text-left max-lg:pl-1">
+              Note
+            </th>
+            {columns.map((partial) => (
+              <th key={partial} scope="col" className="pr-2.5 text-right max-lg:pr-1.5">
+                <span className="sr-only">Partial </span>
+                {partial}
+              </th>
+            ))}
+            {measures.wide ? (
+              <>
+                <th scope="col" className="text-right whitespace-nowrap">
+                  B <PowerOfTen exponent={-4} />, 95 %
+                </th>
+                <th scope="col" className="pr-3 text-right">
+                  Fit
+                </th>
+              </>
+            ) : (
+              <td />
+            )}
+          </tr>
+        </thead>
+        <tbody>
+          {rows.map((row) => {
+            const key = rowKey(row.place);
+            return (
+              <NoteRow
+                key={key}
+                prefix={prefix}
+                row={row}
+                live={liveOf(row)}
+                open={state.open === key}
+                inHand={cells.inHand?.key === key ? cells.inHand.partial : null}
+                tabPartial={tabPartial}
+                unit={unit}
+                referenceHz={state.referenceHz}
+                columns={columns}
+                measures={measures}
+                canChange={canChange}
+                actions={actions}
+                onType={cells.onType}
+              />
+            );
+          })}
+          {next ? (
+            <NoteRow
+              key={rowKey(next.place)}
+              prefix={prefix}
+              row={next}
+              live={liveOf(next)}
+              open={false}
+              inHand={null}
+              tabPartial={tabPartial}
+              unit={unit}
+              referenceHz={state.referenceHz}
+              columns={columns}
+              measures={measures}
+              canChange={canChange}
+              predictedB={suggestion.b}
+              actions={actions}
+              onType={cells.onType}
+            />
+          ) : null}
+        </tbody>
+      </table>
+    </div>
+  );
+}
