@@ -8,6 +8,7 @@ export default defineConfig({
   testDir: "e2e",
   outputDir: ".local/browser-tests",
   forbidOnly: true,
+  fullyParallel: true,
   retries: 0,
   workers: 2,
   timeout: 60_000,
@@ -32,4 +33,8 @@ export default defineConfig({
       ],
     },
   },
+  projects: [
+    { name: "sign-ins", testMatch: "sign-ins.setup.ts" },
+    { name: "browser", testMatch: "*.spec.ts", dependencies: ["sign-ins"] },
+  ],
 });
