@@ -1,5 +1,4 @@
 import "server-only";
-import { headers } from "next/headers";
 import { cache } from "react";
 import { appDb } from "@/db/client";
 import { type Membership, membershipsOf } from "@/db/queries/memberships";
@@ -7,6 +6,7 @@ import type { Role } from "@/lib/auth/access";
 import { AppError } from "@/lib/errors";
 import { noteActor } from "@/lib/log";
 import { auth } from "./auth";
+import { presentHeaders } from "./present-headers";
 
 /** Who is asking, in which shop and as what. Made here and nowhere else. */
 export type Actor = {
@@ -63,7 +63,7 @@ export async function personFrom(requestHeaders: Headers): Promise<SignedInPerso
 }
 
 /** For pages and layouts: asked once per request however many parts need it. */
-export const currentPerson = cache(async () => personFrom(await headers()));
+export const currentPerson = cache(async () => personFrom(await presentHeaders()));
 
 /** For doors: the actor, or a 401. */
 export async function requireActor(requestHeaders: Headers): Promise<Actor> {

@@ -1,6 +1,6 @@
 import "server-only";
-import { headers } from "next/headers";
 import { type Actor, currentPerson } from "@/lib/auth/actor";
+import { presentHeaders } from "@/lib/auth/present-headers";
 import { showInstant } from "@/lib/dates";
 import { AppError } from "@/lib/errors";
 import { listSessions } from "@/lib/people/account/service";
@@ -12,7 +12,7 @@ import { getShop } from "@/lib/shop/service";
 export async function accountView(actor: Actor) {
   const person = await currentPerson();
   if (!person) throw new AppError("signed-out", "You are signed out. Sign in again.");
-  const [shop, sessions] = await Promise.all([getShop(actor), listSessions(actor, await headers())]);
+  const [shop, sessions] = await Promise.all([getShop(actor), listSessions(actor, await presentHeaders())]);
   return {
     name: person.name,
     email: person.email,
