@@ -3,11 +3,18 @@ import * as customer from "./customers/[id]/route";
 import * as customers from "./customers/route";
 import * as instrumentAdvice from "./instruments/[id]/advice/route";
 import * as instrumentCompare from "./instruments/[id]/compare/route";
+import * as instrumentHoldings from "./instruments/[id]/holdings/route";
+import * as instrumentPlace from "./instruments/[id]/place/route";
+import * as instrument from "./instruments/[id]/route";
 import * as instrumentSheets from "./instruments/[id]/sheets/route";
+import * as instrumentString from "./instruments/[id]/strings/[midi]/route";
+import * as instrumentStrings from "./instruments/[id]/strings/route";
+import * as instruments from "./instruments/route";
 import * as me from "./me/route";
 import * as members from "./members/route";
 import * as planExport from "./plans/[id]/export/route";
 import * as plan from "./plans/[id]/route";
+import * as search from "./search/route";
 import * as sheetAnalysis from "./sheets/[id]/analysis/route";
 import * as sheetExport from "./sheets/[id]/export/route";
 import * as sheetNote from "./sheets/[id]/notes/[midi]/route";
@@ -18,18 +25,28 @@ import * as site from "./sites/[id]/route";
 import * as sites from "./sites/route";
 import * as style from "./styles/[id]/route";
 import * as styles from "./styles/route";
+import * as visit from "./visits/[id]/route";
+import * as visitTransitions from "./visits/[id]/transitions/route";
+import * as visits from "./visits/route";
 
 /** Every route of the API, for its description. The architecture test holds this against the folder. */
 export const routes: RouteMap = {
   "/customers": customers,
   "/customers/{id}": customer,
+  "/instruments": instruments,
+  "/instruments/{id}": instrument,
   "/instruments/{id}/advice": instrumentAdvice,
   "/instruments/{id}/compare": instrumentCompare,
+  "/instruments/{id}/holdings": instrumentHoldings,
+  "/instruments/{id}/place": instrumentPlace,
   "/instruments/{id}/sheets": instrumentSheets,
+  "/instruments/{id}/strings": instrumentStrings,
+  "/instruments/{id}/strings/{midi}": instrumentString,
   "/me": me,
   "/members": members,
   "/plans/{id}": plan,
   "/plans/{id}/export": planExport,
+  "/search": search,
   "/sheets/{id}": sheet,
   "/sheets/{id}/analysis": sheetAnalysis,
   "/sheets/{id}/export": sheetExport,
@@ -40,4 +57,7 @@ export const routes: RouteMap = {
   "/sites/{id}": site,
   "/styles": styles,
   "/styles/{id}": style,
+  "/visits": visits,
+  "/visits/{id}": visit,
+  "/visits/{id}/transitions": visitTransitions,
 };
