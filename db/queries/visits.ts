@@ -75,37 +75,60 @@ function chosen(shopId: string, filter: Filter): SQL | undefined {
 }
 
 /**
- * The visits first, by their index and no more than asked; names and places are joined to those. In one
- * join the planner would read and sort all visits of the shop, misjudging what the walls leave.
+ * The visits by their index and no more than asked; then the places of those alone. Joined, the planner would
+ * begin with all customers of the shop and read every visit, misjudging what the walls leave.
  */
-function summaries(
+async function summaries(
   db: Handle,
   shopId: string,
   { where, direction, most }: { where: SQL | undefined; direction: Order["direction"]; most: number },
 ) {
-  const picked = db
-    .select({ id: visit.id })
+  const visits = await db
+    .select({
+      id: visit.id,
+      state: visit.state,
+      ...time,
+      siteId: visit.siteId,
+      version: visit.version,
+      orderKey: sql<string>`(visit.starts_local)::text`,
+    })
     .from(visit)
     .where(where)
     .orderBy(orderBy(byStart(direction)))
-    .limit(most)
-    .as("picked");
-  return db
-    .select({ ...summary, orderKey: sql<string>`(${visit.startsLocal})::text` })
-    .from(picked)
-    .innerJoin(visit, and(eq(visit.shopId, shopId), eq(visit.id, picked.id)))
-    .innerJoin(site, and(eq(site.shopId, visit.shopId), eq(site.id, visit.siteId)))
-    .innerJoin(customer, and(eq(customer.shopId, site.shopId), eq(customer.id, site.customerId)))
-    .orderBy(orderBy(byStart(direction)));
+    .limit(most);
+  if (visits.length === 0) return [];
+  const places = await db
+    .select({
+      siteId: site.id,
+      siteName: site.name,
+      street: site.street,
+      city: site.city,
+      accessNotes: site.accessNotes,
+      customerName: sql<string>`(select c.name from customer c
+        where c.shop_id = ${shopId} and c.id = site.customer_id)`,
+    })
+    .from(site)
+    .where(and(eq(site.shopId, shopId), inArray(site.id, [...new Set(visits.map(({ siteId }) => siteId))])));
+  const byId = new Map(places.map((place) => [place.siteId, place]));
+  return visits.flatMap((row) => {
+    const place = byId.get(row.siteId);
+    return place ? [{ ...row, ...place }] : [];
+  });
+}
+
+/** What the wall says of a customer's session, once more where an index can answer it. */
+function atOwnSite(shopId: string): SQL {
+  return sql`visit.site_id in (select ${site.id} from ${site} where ${eq(site.shopId, shopId)} and ${isOwn(site.customerId)})`;
 }
 
 function byStart(direction: Order["direction"]): Order {
   return { by: sql`visit.starts_local`, direction, id: sql`visit.id` };
 }
 
-export async function listVisits(db: Handle, shopId: string, query: VisitListQuery) {
+export async function listVisits(db: Handle, shopId: string, query: VisitListQuery, reach: Reach) {
   const rows = await summaries(db, shopId, {
     where: and(
+      reach === "own" ? atOwnSite(shopId) : undefined,
       chosen(shopId, {
         ...query,
         states: query.state ? [query.state] : undefined,
@@ -134,6 +157,21 @@ export async function visitsBetween(
     direction: filter.latestFirst ? "desc" : "asc",
     most: filter.most,
   });
+}
+
+/** The first of these days that has visits, and how many. */
+export async function firstDayWithVisits(db: Handle, shopId: string, filter: Filter) {
+  const [row] = await db
+    .select({
+      day: sql<string>`to_char(visit.starts_local, 'YYYY-MM-DD')`,
+      visits: sql<number>`count(*)::int`,
+    })
+    .from(visit)
+    .where(chosen(shopId, filter))
+    .groupBy(sql`1`)
+    .orderBy(sql`1`)
+    .limit(1);
+  return row ?? null;
 }
 
 export async function visitById(db: Handle, shopId: string, id: string) {

@@ -1,6 +1,6 @@
 import "server-only";
 import { withShop } from "@/db/client";
-import { visitsBetween } from "@/db/queries/visits";
+import { firstDayWithVisits, visitsBetween } from "@/db/queries/visits";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import { addDays, type Day } from "@/lib/dates";
@@ -44,16 +44,15 @@ export async function workDay(actor: Actor, asked?: Day): Promise<WorkDay> {
     const find = (filter: Parameters<typeof visitsBetween>[2]) =>
       visitsBetween(tx, actor.shopId, { ...whose, ...filter });
     const ofDay = await find({ states: onTheDay, from: day, before: addDays(day, 1), most: mostOfDay });
-    const coming = await find({
+    const next = await firstDayWithVisits(tx, actor.shopId, {
+      ...whose,
       states: toCome,
       from: addDays(day, 1),
       before: addDays(day, 1 + lookAhead),
-      most: mostOfDay,
     });
     const unanswered = own ? [] : await find({ states: ["offered"], from: today, most: listed });
     const leftOpen = await find({ states: unfinished, before: today, most: listed, latestFirst: true });
     const rows = await rowsOf(tx, actor, ofDay);
-    const nextDay = coming[0]?.startsLocal.slice(0, 10);
     return {
       day,
       today,
@@ -61,9 +60,7 @@ export async function workDay(actor: Actor, asked?: Day): Promise<WorkDay> {
       demo,
       reach: own ? "own" : "all",
       visits: rows.map((row, index) => ({ ...row, accessNotes: ofDay[index]?.accessNotes ?? null })),
-      next: nextDay
-        ? { day: nextDay, visits: coming.filter(({ startsLocal }) => startsLocal.startsWith(nextDay)).length }
-        : null,
+      next,
       unanswered: await rowsOf(tx, actor, unanswered),
       leftOpen: await rowsOf(tx, actor, leftOpen),
     };
