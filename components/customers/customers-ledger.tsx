@@ -48,22 +48,22 @@ export function CustomersLedger({
   const archived = useSearchParams().get("archived") === "only";
   const columns = useMemo<LedgerColumn<Row>[]>(
     () => [
-      { id: "name", header: "Name", cell: (row) => row.name, sortable: true, width: 2, phone: "title" },
+      { id: "name", header: "Name", cell: (row) => row.name, sortable: true, phone: "title" },
       {
         id: "contact",
         header: "Contact",
         cell: (row) => row.contactName ?? "",
-        width: 1.3,
-        from: "xl",
+        width: 130,
+        extra: true,
         phone: "none",
       },
-      { id: "phone", header: "Telephone", cell: (row) => row.phone ?? "", width: 1.4, phone: "line" },
+      { id: "phone", header: "Telephone", cell: (row) => row.phone ?? "", width: 140, phone: "line" },
       {
         id: "email",
         header: "E-mail",
         cell: (row) => row.email ?? "",
-        width: 1.8,
-        from: "lg",
+        width: 200,
+        from: "xl",
         phone: "none",
       },
       {
@@ -71,7 +71,7 @@ export function CustomersLedger({
         header: "Instruments",
         cell: (row) => row.instruments,
         align: "right",
-        width: 0.9,
+        width: 88,
         phone: "aside",
       },
       {
@@ -79,8 +79,8 @@ export function CustomersLedger({
         header: "Sites",
         cell: (row) => row.sites,
         align: "right",
-        width: 0.6,
-        from: "lg",
+        width: 56,
+        from: "xl",
         phone: "none",
       },
       {

@@ -58,7 +58,6 @@ export function InstrumentsLedger({
         header: "Instrument",
         cell: (row) => row.name,
         sortable: true,
-        width: 1.8,
         phone: "title",
       },
       {
@@ -71,7 +70,7 @@ export function InstrumentsLedger({
           </>
         ),
         sortable: true,
-        width: 2,
+        width: 160,
         phone: "line",
       },
       {
@@ -79,8 +78,8 @@ export function InstrumentsLedger({
         header: "Owner",
         cell: (row) => row.ownerName,
         sortable: true,
-        width: 1.6,
-        from: "lg",
+        width: 130,
+        from: "xl",
         phone: "none",
       },
       {
@@ -101,7 +100,7 @@ export function InstrumentsLedger({
             signed(row.lastFoundCents, 1)
           ),
         align: "right",
-        width: 0.9,
+        width: 88,
         from: "sm",
         phone: "aside",
       },
@@ -115,8 +114,8 @@ export function InstrumentsLedger({
             <span className="text-ink-soft">not yet</span>
           ),
         align: "right",
-        width: 1.1,
-        from: "sm",
+        width: 104,
+        from: "xl",
         phone: "end",
       },
       {

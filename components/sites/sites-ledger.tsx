@@ -46,13 +46,13 @@ export function SitesLedger({
   const archived = useSearchParams().get("archived") === "only";
   const columns = useMemo<LedgerColumn<Row>[]>(
     () => [
-      { id: "name", header: "Site", cell: (row) => row.name, sortable: true, width: 1.8, phone: "title" },
+      { id: "name", header: "Site", cell: (row) => row.name, sortable: true, phone: "title" },
       {
         id: "street",
         header: "Street",
         cell: (row) => row.street,
-        width: 1.6,
-        from: "xl",
+        width: 140,
+        extra: true,
         phone: "none",
       },
       {
@@ -60,7 +60,7 @@ export function SitesLedger({
         header: "Town",
         cell: (row) => [row.postalCode, row.city].filter(Boolean).join(" "),
         sortable: true,
-        width: 1.4,
+        width: 160,
         phone: "line",
       },
       {
@@ -68,8 +68,8 @@ export function SitesLedger({
         header: "Customer",
         cell: (row) => row.customerName,
         sortable: true,
-        width: 1.6,
-        from: "sm",
+        width: 150,
+        from: "xl",
         phone: "end",
       },
       {
@@ -77,7 +77,7 @@ export function SitesLedger({
         header: "Instruments",
         cell: (row) => row.instruments,
         align: "right",
-        width: 0.9,
+        width: 88,
         phone: "aside",
       },
       {
