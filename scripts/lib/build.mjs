@@ -12,9 +12,9 @@ const notServed = new Set(["cache", "dev", "types", "diagnostics", "trace", "tra
 
 export const nextCommand = inProject("node_modules", "next", "dist", "bin", "next");
 
-function readStamp() {
+function readText(file) {
   try {
-    return fs.readFileSync(stampFile, "utf8");
+    return fs.readFileSync(file, "utf8");
   } catch {
     return undefined;
   }
@@ -22,7 +22,7 @@ function readStamp() {
 
 export async function ensureBuild(report) {
   const hash = hashSources(projectRoot);
-  if (readStamp() === hash) return "unchanged";
+  if (readText(stampFile) === hash) return "unchanged";
   fs.rmSync(stampFile, { force: true });
   await run(process.execPath, [nextCommand, "build"], {
     env: childEnvironment({ NODE_ENV: "production" }),
@@ -41,10 +41,16 @@ export async function ensureBuild(report) {
  */
 export function copyBuildFor(name) {
   const copy = path.join(localFolder, "serving", name);
-  fs.rmSync(copy, { recursive: true, force: true });
-  fs.cpSync(buildFolder, copy, {
-    recursive: true,
-    filter: (source) => path.dirname(source) !== buildFolder || !notServed.has(path.basename(source)),
-  });
+  const markFile = path.join(copy, "copied-from");
+  const mark = `${projectRoot} ${readText(path.join(buildFolder, "BUILD_ID"))}`;
+  if (readText(markFile) !== mark) {
+    fs.rmSync(copy, { recursive: true, force: true });
+    fs.cpSync(buildFolder, copy, {
+      recursive: true,
+      filter: (source) => path.dirname(source) !== buildFolder || !notServed.has(path.basename(source)),
+    });
+    // Written last: a copy that was cut short has none.
+    fs.writeFileSync(markFile, mark);
+  }
   return path.relative(projectRoot, copy);
 }
