@@ -91,7 +91,14 @@ export function SubmitButton({
   ...rest
 }: Omit<ButtonProps, "busy" | "type"> & { state: Pick<State, "busy"> }) {
   return (
-    <Button type="submit" kind={kind} busy={state.busy} {...rest}>
+    <Button
+      type="submit"
+      kind={kind}
+      busy={state.busy}
+      // Leaving a field may show its error, which moves this button away from under the press that left it.
+      onMouseDown={(event) => event.preventDefault()}
+      {...rest}
+    >
       {children}
     </Button>
   );

@@ -130,8 +130,8 @@ function NoteRow({
               onFocus={(event) => event.target.select()}
               onChange={(event) => type(row.midi, { [field]: event.target.value })}
               className={cx(
-                "h-8 w-full rounded-sm border border-transparent bg-transparent px-2 text-right text-16 -outline-offset-1 touch:h-11",
-                canChange && "hover:border-edge focus:border-edge",
+                "h-7 w-full rounded-sm border border-transparent bg-transparent px-2 text-right text-16 -outline-offset-1 touch:h-11",
+                canChange && "border-edge",
                 row.errors[field] && "border-rust!",
               )}
             />

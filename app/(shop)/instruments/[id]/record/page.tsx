@@ -6,6 +6,7 @@ import { StringsTable } from "@/components/instruments/strings-table";
 import { ArchiveButton } from "@/components/records/archive-button";
 import { PageSection } from "@/components/shell/page-section";
 import { WorkHead } from "@/components/shell/spread";
+import { Disclosure } from "@/components/ui/disclosure";
 import { Facts } from "@/components/ui/facts";
 import { may } from "@/lib/auth/access";
 import { showDayOf } from "@/lib/dates";
@@ -78,13 +79,15 @@ export default async function InstrumentRecordPage({ params }: PageProps<"/instr
           aside={strings.items.length > 0 ? `${strings.items.length} notes` : undefined}
         >
           {strings.items.length > 0 || instrument.canChange ? (
-            <StringsTable
-              key={`${instrument.firstMidi}-${instrument.lastMidi}`}
-              instrument={instrument}
-              saved={strings.items}
-              canChange={instrument.canChange}
-              actions={{ save: saveStringAction, saveAll: saveStringsAction, remove: removeStringAction }}
-            />
+            <Disclosure label="Note by note" open={strings.items.length > 0}>
+              <StringsTable
+                key={`${instrument.firstMidi}-${instrument.lastMidi}`}
+                instrument={instrument}
+                saved={strings.items}
+                canChange={instrument.canChange}
+                actions={{ save: saveStringAction, saveAll: saveStringsAction, remove: removeStringAction }}
+              />
+            </Disclosure>
           ) : (
             <p className="text-ink-soft">Nobody has measured them yet.</p>
           )}
