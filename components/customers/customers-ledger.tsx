@@ -69,7 +69,14 @@ export function CustomersLedger({
       {
         id: "instruments",
         header: "Instruments",
-        cell: (row) => row.instruments,
+        cell: (row) => (
+          <>
+            {row.instruments}
+            <span className="text-ink-soft sm:hidden">
+              {row.instruments === 1 ? " instrument" : " instruments"}
+            </span>
+          </>
+        ),
         align: "right",
         width: 88,
         phone: "aside",

@@ -97,11 +97,13 @@ export function InstrumentsLedger({
           row.lastFoundCents === null ? (
             <span className="text-ink-soft">–</span>
           ) : (
-            signed(row.lastFoundCents, 1)
+            <>
+              {signed(row.lastFoundCents, 1)}
+              <span className="text-ink-soft sm:hidden"> cents</span>
+            </>
           ),
         align: "right",
         width: 88,
-        from: "sm",
         phone: "aside",
       },
       {

@@ -75,7 +75,14 @@ export function SitesLedger({
       {
         id: "instruments",
         header: "Instruments",
-        cell: (row) => row.instruments,
+        cell: (row) => (
+          <>
+            {row.instruments}
+            <span className="text-ink-soft sm:hidden">
+              {row.instruments === 1 ? " instrument" : " instruments"}
+            </span>
+          </>
+        ),
         align: "right",
         width: 88,
         phone: "aside",

@@ -41,7 +41,7 @@ export default async function InstrumentVisitsPage({ params }: PageProps<"/instr
                 className="grid min-h-11 grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 border-b border-hairline py-2 -outline-offset-2 hover:bg-cover"
               >
                 <span className="font-semibold">{showWallTime(visit.startsLocal, locale)}</span>
-                <VisitStateWord state={visit.state} />
+                <VisitStateWord state={visit.state} className="justify-self-end" />
                 <span className="truncate">{visit.work}</span>
                 <span className="lab justify-self-end">{visit.technicians.join(", ")}</span>
                 {visit.remarks ? (
