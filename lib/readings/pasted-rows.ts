@@ -40,9 +40,11 @@ function keyOf(field: string): number | null {
   return /^\d{1,3}$/.test(field) ? Number(field) : null;
 }
 
+/** Words over the columns. A misspelt note with its readings is no header: its line is to be named, not skipped. */
 function isHeader({ fields }: Line): boolean {
-  const first = fields[0] ?? "";
-  return keyOf(first) === null && readTyped(first) === null;
+  const [first = "", ...rest] = fields;
+  if (keyOf(first) !== null || readTyped(first) !== null || /^[A-Za-z]\S{0,2}\d$/.test(first)) return false;
+  return rest.every((field) => readTyped(field) === null || /^\d{1,2}$/.test(field));
 }
 
 /** The partial over each column, when the header numbers them; otherwise they count from one. */
