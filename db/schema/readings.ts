@@ -1,6 +1,7 @@
 import { sql } from "drizzle-orm";
 import {
   check,
+  customType,
   doublePrecision,
   foreignKey,
   index,
@@ -20,6 +21,12 @@ import { instrument } from "./instruments";
 import { member } from "./shop";
 import { job } from "./visits";
 import { shopWall } from "./walls";
+
+/** The driver gives NaN where an array's entry is null; what is not known is null here. */
+const knownOrNull = customType<{ data: number | null; driverData: number | null }>({
+  dataType: () => "double precision",
+  fromDriver: (value) => (value === null || Number.isNaN(value) ? null : value),
+});
 
 export const stage = pgEnum("stage", ["as-found", "after-raise", "as-left"]);
 
@@ -72,7 +79,7 @@ export const noteReading = pgTable(
     partials: smallint("partials").array().notNull(),
     hz: doublePrecision("hz").array().notNull(),
     /** Null entries: no error was given. */
-    sigmaCents: doublePrecision("sigma_cents").array().$type<(number | null)[]>().notNull(),
+    sigmaCents: knownOrNull("sigma_cents").array().notNull(),
     kept: smallint("kept").array().notNull().default(sql`'{}'`),
     dropped: smallint("dropped").array().notNull().default(sql`'{}'`),
     f1Hz: doublePrecision("f1_hz").notNull(),
