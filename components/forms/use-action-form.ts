@@ -6,6 +6,7 @@ import {
   type DefaultValues,
   type FieldPath,
   type FieldValues,
+  get,
   type RegisterOptions,
   type UseFormReturn,
   useForm,
@@ -98,7 +99,11 @@ export function useActionForm<Input extends FieldValues, Data>({
 
   /** Spread into a field: registration and its error in one. */
   function field(name: FieldPath<Input>, options?: RegisterOptions<Input, FieldPath<Input>>) {
-    return { ...form.register(name, options), error: messageAt(form, name) };
+    return {
+      ...form.register(name, options),
+      defaultValue: shownAtFirst(get(defaultValues, name)),
+      error: messageAt(form, name),
+    };
   }
 
   /** A field whose empty text is "not given" rather than an empty string. */
@@ -122,6 +127,11 @@ export type ActionForm = {
   // biome-ignore lint/suspicious/noExplicitAny: the form's frame works for every shape of values
   form: UseFormReturn<any, any, any>;
 };
+
+/** Written by the server too, so that a field is never seen empty before the scripts are there. */
+function shownAtFirst(value: unknown): string | number | undefined {
+  return typeof value === "string" || typeof value === "number" ? value : undefined;
+}
 
 function showRefusal<Input extends FieldValues>(
   form: UseFormReturn<Input, unknown, Input>,
