@@ -3,6 +3,7 @@
 import type { Route } from "next";
 import { useRouter } from "next/navigation";
 import { useMemo } from "react";
+import { v7 } from "uuid";
 import { z } from "zod";
 import { ActionForm, SubmitButton } from "@/components/forms/action-form";
 import { Select } from "@/components/forms/select";
@@ -45,7 +46,7 @@ export function NewSheetForm({
 }: Props) {
   const router = useRouter();
   // Made once, so that pressing twice, or again after silence, begins one sheet.
-  const id = useMemo(() => crypto.randomUUID(), []);
+  const id = useMemo(() => v7(), []);
   const state = useActionForm<Input, { id: string }>({
     schema: form,
     action: (input) => {
