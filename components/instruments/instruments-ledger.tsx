@@ -70,7 +70,7 @@ export function InstrumentsLedger({
           </>
         ),
         sortable: true,
-        width: 160,
+        width: 190,
         phone: "line",
       },
       {
@@ -78,7 +78,7 @@ export function InstrumentsLedger({
         header: "Owner",
         cell: (row) => row.ownerName,
         sortable: true,
-        width: 130,
+        width: 120,
         from: "xl",
         phone: "none",
       },
@@ -103,7 +103,7 @@ export function InstrumentsLedger({
             </>
           ),
         align: "right",
-        width: 88,
+        width: 84,
         phone: "aside",
       },
       {
@@ -116,7 +116,7 @@ export function InstrumentsLedger({
             <span className="text-ink-soft">not yet</span>
           ),
         align: "right",
-        width: 104,
+        width: 96,
         from: "xl",
         phone: "end",
       },

@@ -1,7 +1,6 @@
 import type { Metadata } from "next";
 import { InstrumentLines } from "@/components/instruments/instrument-lines";
 import { ArchiveButton } from "@/components/records/archive-button";
-import { PageSection } from "@/components/shell/page-section";
 import { RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { SiteAbout } from "@/components/sites/site-about";
 import { LinkButton } from "@/components/ui/button";
@@ -34,7 +33,10 @@ export default async function SitePage({ params }: Props) {
       right={
         <RightPage>
           <WorkHead
-            title={count === 1 ? "1 instrument" : `${count}${instruments.next ? "+" : ""} instruments`}
+            title="Standing here"
+            summary={
+              count === 1 ? "1 instrument" : `${count}${instruments.next ? " and more" : ""} instruments`
+            }
             actions={
               <>
                 {may(actor.role, "sites.change") ? (
@@ -60,9 +62,7 @@ export default async function SitePage({ params }: Props) {
               </>
             }
           />
-          <PageSection title="Standing here" aside={instruments.next ? "the first 100" : undefined}>
-            <InstrumentLines instruments={instruments.items} clock={clock} showOwner />
-          </PageSection>
+          <InstrumentLines instruments={instruments.items} clock={clock} showOwner />
         </RightPage>
       }
     />
