@@ -25,7 +25,7 @@ export type AccountActions = {
 
 export function AccountSections({ account, actions }: { account: AccountView; actions: AccountActions }) {
   return (
-    <div className="grid max-w-160 gap-9">
+    <div className="mt-5 grid max-w-160 gap-9">
       <PageSection title="Name">
         <NameForm key={account.name} action={actions.changeNameAction} name={account.name} />
       </PageSection>

@@ -44,7 +44,7 @@ export function TwoStepEnrol({
             <b className="font-semibold">1.</b> Scan this with an authenticator on your phone, or type the
             secret into it:
           </p>
-          <p className="text-16 font-semibold break-all">{setup.secret.match(/.{1,4}/g)?.join(" ")}</p>
+          <p className="text-16 font-semibold">{setup.secret.match(/.{1,4}/g)?.join(" ")}</p>
           <p>
             <b className="font-semibold">2.</b> Type the six digits it then shows.
           </p>

@@ -2,7 +2,7 @@ const browsers: ReadonlyArray<[RegExp, string]> = [
   [/\bEdg(?:A|iOS)?\//, "Edge"],
   [/\bOPR\//, "Opera"],
   [/\bFirefox\/|\bFxiOS\//, "Firefox"],
-  [/\bChrome\/|\bCriOS\//, "Chrome"],
+  [/Chrome\/|\bCriOS\//, "Chrome"],
   [/\bSafari\//, "Safari"],
 ];
 

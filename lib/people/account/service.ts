@@ -51,7 +51,8 @@ export async function listSessions(actor: Actor, requestHeaders: Headers): Promi
     .map((session) => ({
       id: session.id,
       device: session.userAgent ?? "",
-      address: session.ipAddress || null,
+      // All zeros stand for an address that was not told.
+      address: /[1-9a-f]/.test(session.ipAddress ?? "") ? (session.ipAddress ?? null) : null,
       since: session.createdAt.toISOString(),
       lastSeen: session.updatedAt.toISOString(),
       current: session.id === actor.sessionId,
