@@ -10,7 +10,6 @@ import { CursorHint, Readout } from "@/components/charts/readout";
 import { Select } from "@/components/forms/select";
 import { WorkHead } from "@/components/shell/spread";
 import { Button } from "@/components/ui/button";
-import { DemoBadge } from "@/components/ui/demo-badge";
 import { StateWord } from "@/components/ui/state-word";
 import { studentQuantile } from "@/lib/acoustics";
 import type { ComparisonRecord } from "@/lib/plans/compare/schema";
@@ -22,10 +21,9 @@ type Props = {
   instrument: { firstMidi: number; lastMidi: number; breakMidi: number | null };
   sheets: readonly SheetOption[];
   names: { before: string; after: string };
-  demo: boolean;
 };
 
-export function CompareView({ comparison, instrument, sheets, names, demo }: Props) {
+export function CompareView({ comparison, instrument, sheets, names }: Props) {
   const changed = comparison.notes.filter((note) => note.verdict === "changed");
   const comparable = comparison.notes.filter((note) => note.verdict !== "not-comparable");
   const [cursor, setCursor] = useState(changed[0]?.midi ?? comparison.notes[0]?.midi ?? 69);
@@ -50,12 +48,9 @@ export function CompareView({ comparison, instrument, sheets, names, demo }: Pro
         title="Compare"
         summary={`${names.before} against ${names.after}. ${comparable.length} of ${comparison.notes.length} notes can be compared; false discoveries held to ${fixed(100 * comparison.falseDiscoveryRate, 0)} %.`}
         actions={
-          <>
-            {demo ? <DemoBadge /> : null}
-            <Button kind="quiet" aria-expanded={numbers} onClick={() => setNumbers(!numbers)}>
-              {numbers ? "Hide numbers" : "Numbers"}
-            </Button>
-          </>
+          <Button kind="quiet" aria-expanded={numbers} onClick={() => setNumbers(!numbers)}>
+            {numbers ? "Hide numbers" : "Numbers"}
+          </Button>
         }
       />
       <SidesChoice comparison={comparison} sheets={sheets} />

@@ -9,7 +9,6 @@ import { noteText } from "@/components/charts/note-spelling";
 import { ActionStrip } from "@/components/shell/action-strip";
 import { WorkHead } from "@/components/shell/spread";
 import { Button, LinkButton } from "@/components/ui/button";
-import { DemoBadge } from "@/components/ui/demo-badge";
 import { StateWord } from "@/components/ui/state-word";
 import type { AnalysisRecord } from "@/lib/plans/schema";
 import { adviceSentence } from "./advice-words";
@@ -24,11 +23,10 @@ type Props = {
   sheet: { id: string; words: string; notesRead: number; found: string };
   sheets: readonly SheetOption[];
   canRead: boolean;
-  demo: boolean;
 };
 
 /** Measured and predicted B over the keys, with the plan it leads to under it. */
-export function InharmonicityView({ analysis: initial, instrument, sheet, sheets, canRead, demo }: Props) {
+export function InharmonicityView({ analysis: initial, instrument, sheet, sheets, canRead }: Props) {
   const router = useRouter();
   const { data: analysis = initial } = useAnalysis(sheet.id, {}, initial);
   const flagged = flaggedKeys(analysis);
@@ -39,6 +37,7 @@ export function InharmonicityView({ analysis: initial, instrument, sheet, sheets
       inharmonicityPlot(analysis),
       {
         ...stretchPlot(analysis, sheet.found),
+        height: 188,
         aside: (
           <>
             House style <b className="font-semibold text-ink">{analysis.style.name}</b>
@@ -83,8 +82,19 @@ export function InharmonicityView({ analysis: initial, instrument, sheet, sheets
           </>
         }
       />
+      <KeyPlots
+        range={{ ...instrument, breakMidi: analysis.breakMidi }}
+        plots={plots}
+        marks={marks}
+        cursor={cursor}
+        onCursor={setCursor}
+        {...(canRead ? { onEnter: (midi) => router.push(`${sheetHref}?note=${midi}` as Route) } : {})}
+        tables={numbers ? "shown" : "hidden"}
+      >
+        <KeyReadout analysis={analysis} midi={cursor} canRead={canRead} />
+      </KeyPlots>
       {flagged.length > 0 ? (
-        <ul className="mb-3 grid gap-1" aria-label="Notes that do not belong">
+        <ul className="mt-3 grid gap-1" aria-label="Notes that do not belong">
           {flagged.map((key) => (
             <li key={key.midi}>
               <StateWord kind="attention" wrap>
@@ -97,22 +107,6 @@ export function InharmonicityView({ analysis: initial, instrument, sheet, sheets
           ))}
         </ul>
       ) : null}
-      {demo ? (
-        <div className="mb-2 flex justify-end">
-          <DemoBadge />
-        </div>
-      ) : null}
-      <KeyPlots
-        range={{ ...instrument, breakMidi: analysis.breakMidi }}
-        plots={plots}
-        marks={marks}
-        cursor={cursor}
-        onCursor={setCursor}
-        {...(canRead ? { onEnter: (midi) => router.push(`${sheetHref}?note=${midi}` as Route) } : {})}
-        tables={numbers ? "shown" : "hidden"}
-      >
-        <KeyReadout analysis={analysis} midi={cursor} canRead={canRead} />
-      </KeyPlots>
       <p className="lab mt-3 max-w-160">
         {breakWords(analysis)} Bands are 95 %. Figures come from the readings typed in; they do not prove that
         a string is sound.

@@ -7,7 +7,6 @@ import { NumbersTable } from "@/components/charts/plot-table";
 import { ActionStrip } from "@/components/shell/action-strip";
 import { WorkHead } from "@/components/shell/spread";
 import { Button } from "@/components/ui/button";
-import { DemoBadge } from "@/components/ui/demo-badge";
 import { ErrorState } from "@/components/ui/states";
 import type { Temperament } from "@/lib/acoustics/types";
 import type { PlanChoices } from "@/lib/plans/keys";
@@ -32,13 +31,12 @@ type Props = {
   canSave: boolean;
   /** Why this person cannot save, where they cannot. */
   whyNot: string;
-  demo: boolean;
   locale: string;
   timeZone: string;
 };
 
 export function StretchView(props: Props) {
-  const { analysis: initial, instrument, sheet, sheets, styles, demo } = props;
+  const { analysis: initial, instrument, sheet, sheets, styles } = props;
   const [choices, setChoices] = useState<Required<PlanChoices>>({
     style: initial.style.ref,
     temperament: temperamentValue(initial.temperament),
@@ -84,12 +82,7 @@ export function StretchView(props: Props) {
             {sheet.words}. <SharpText text={adviceSentence(analysis)} />
           </>
         }
-        actions={
-          <>
-            {demo ? <DemoBadge /> : null}
-            <span className="contents max-lg:hidden">{saveButton}</span>
-          </>
-        }
+        actions={<span className="contents max-lg:hidden">{saveButton}</span>}
       />
       <PlanChoiceFields
         styles={styles}

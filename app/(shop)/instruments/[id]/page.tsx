@@ -12,7 +12,7 @@ export default async function InharmonicityPage({ params, searchParams }: PagePr
   const { id } = await params;
   const { sheet: wanted } = await searchParams;
   const instrument = await getInstrument(actor, id);
-  const { chosen, options, name, canRead, clock } = await sheetInHand(
+  const { chosen, options, name, canRead } = await sheetInHand(
     actor,
     id,
     typeof wanted === "string" ? wanted : undefined,
@@ -31,7 +31,6 @@ export default async function InharmonicityPage({ params, searchParams }: PagePr
       }}
       sheets={options}
       canRead={canRead}
-      demo={clock.demo}
     />
   );
 }

@@ -41,7 +41,6 @@ export default async function ComparePage({ params, searchParams }: PageProps<"/
           before: sheetName(comparison.before, clock.locale, clock.timeZone),
           after: sheetName(comparison.after, clock.locale, clock.timeZone),
         }}
-        demo={clock.demo}
       />
     );
   } catch (error) {

@@ -41,7 +41,6 @@ export default async function StretchPage({ params, searchParams }: PageProps<"/
           ? "This sheet belongs to a visit you are not on."
           : "Plans are kept by technicians and owners."
       }
-      demo={clock.demo}
       locale={clock.locale}
       timeZone={clock.timeZone}
     />
