@@ -33,31 +33,35 @@ beforeAll(async () => {
   const [most] = await large.owner<{ id: string }[]>`select instrument_id as id from reading_sheet
     where shop_id = ${office.shopId} group by 1 order by count(*) desc limit 1`;
   practised = most?.id ?? "";
-});
+}, 400_000);
 
 afterAll(async () => {
   await closeDatabases();
   await large?.drop();
-  console.info(["list | index | buffers | median ms | p95 ms", ...figures].join("\n"));
+  console.info(["list | index | buffers | median ms | 95th percentile ms | calls", ...figures].join("\n"));
 });
 
 const ofShop = (table: string) => sizes.find((size) => size.table === table)?.ofShop ?? 0;
 
-/** Holds one call to the shop's rows, an index and a number of buffers, and notes how long thirty take. */
+const turns = 30;
+const mostMilliseconds = 1_500;
+
+/** Holds a call to the shop's rows, an index and a number of buffers, and notes how long it takes, in 30 turns if they are quick. */
 async function hold<T>(name: string, call: () => Promise<T>, index: string, mostBuffers: number) {
   await call();
   const before = await indexUse(large.owner);
   const reading = await readPlans(call);
   const after = await indexUse(large.owner);
   const times: number[] = [];
-  for (let turn = 0; turn < 30; turn += 1) {
+  const until = performance.now() + mostMilliseconds;
+  while (times.length < turns && (times.length < 5 || performance.now() < until)) {
     const begun = performance.now();
     await call();
     times.push(performance.now() - begun);
   }
   times.sort((a, b) => a - b);
   const at = (part: number) => (times[Math.ceil(part * times.length) - 1] ?? Number.NaN).toFixed(1);
-  figures.push([name, index, reading.buffers, at(0.5), at(0.95)].join(" | "));
+  figures.push([name, index, reading.buffers, at(0.5), at(0.95), times.length].join(" | "));
   expect(faultsOf(reading, sizes), name).toEqual([]);
   expect((after.get(index) ?? 0) - (before.get(index) ?? 0), `${name} enters ${index}`).toBeGreaterThan(0);
   expect(reading.buffers, `${name}: buffers`).toBeLessThanOrEqual(mostBuffers);
@@ -144,7 +148,12 @@ describe("a shop of 5 000 instruments among twenty, for staff", () => {
     ["visits", { state: "offered" }, "visit_unfinished", 2_400],
     ["visits", { state: "cancelled" }, "visit_come_to_nothing", 2_400],
   ] as const)("lists %s of %j", async (name, query, index, buffers) => {
-    await hold(`${name}, ${Object.values(query)}`, () => lists[name](office, query), index, buffers);
+    await hold(
+      [name, ...Object.entries(query).flat()].join(" "),
+      () => lists[name](office, query),
+      index,
+      buffers,
+    );
   });
 
   it("lists the visits of some days, of a site, a customer, an instrument and a technician", async () => {
@@ -160,8 +169,7 @@ describe("a shop of 5 000 instruments among twenty, for staff", () => {
     await of("a site", { siteId: here.site }, "visit_of_site", 500);
     await of("a customer", { customerId: conservatory.customerId ?? "" }, "visit_of_site", 3_000);
     await of("an instrument", { instrumentId: here.instrument }, "job_of_instrument", 500);
-    // A technician's visits are found by the technician, then put in order: linear in them.
-    await of("a technician", { technicianId: technician.memberId }, "visit_technician_member", 12_000);
+    await of("a technician", { technicianId: technician.memberId }, "visit_by_start", 3_000);
     await hold("a day's work", () => workDay(office, here.day), "visit_by_start", 3_000);
     await hold("a technician's day", () => workDay(technician, here.day), "visit_by_start", 3_000);
   });
@@ -219,7 +227,7 @@ describe("a customer's session in such a shop", () => {
     ["instruments", { q: "house" }, "instrument_holding_owner", 120],
     ["visits", {}, "visit_of_site", 200],
   ] as const)("of two instruments, reads %s %j and little else", async (name, query, index, buffers) => {
-    const words = `${name} ${Object.values(query)}, a household's own`;
+    const words = [name, ...Object.values(query), "a household's own"].join(", ");
     const page = await hold(words, () => lists[name](household, query), index, buffers);
     expect(page.items.length).toBeGreaterThan(0);
     expect(page.items.length).toBeLessThan(10);
@@ -233,7 +241,7 @@ describe("a customer's session in such a shop", () => {
     ["visits", {}, "visit_of_site", 4_000],
   ] as const)("of 300 instruments, reads %s %j of its own", async (name, query, index, buffers) => {
     await hold(
-      `${name} ${Object.values(query)}, a conservatory's own`,
+      [name, ...Object.values(query), "a conservatory's own"].join(", "),
       () => lists[name](conservatory, query),
       index,
       buffers,
