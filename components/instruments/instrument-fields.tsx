@@ -50,14 +50,7 @@ export function InstrumentFields({ state }: { state: FormOfInstrument }) {
         <TextInput label="Model" optional autoComplete="off" {...state.field("model")} />
         <TextInput label="Serial number" optional autoComplete="off" {...state.field("serial")} />
         <NumberInput label="Year" optional whole maxLength={4} {...state.numberField("year")} />
-        <Select
-          label="Kind"
-          options={kindOptions}
-          placeholder="Choose"
-          {...state.field("kind")}
-          // Given outright: a list that is only registered can show its first entry until it is touched.
-          value={form.watch("kind") ?? ""}
-        />
+        <Select label="Kind" options={kindOptions} placeholder="Choose" {...state.field("kind")} />
         <TextInput
           label="Room"
           optional

@@ -126,18 +126,8 @@ export function SiteForm({
         />
         <TextInput label="Postal code" optional autoComplete="off" {...state.field("postalCode")} />
         <TextInput label="Town" optional autoComplete="off" {...state.field("city")} />
-        <Select
-          label="Country"
-          options={countries}
-          {...state.field("country")}
-          value={state.form.watch("country") ?? ""}
-        />
-        <Select
-          label="Time zone"
-          options={timeZones}
-          {...state.field("timeZone")}
-          value={state.form.watch("timeZone") ?? ""}
-        />
+        <Select label="Country" options={countries} {...state.field("country")} />
+        <Select label="Time zone" options={timeZones} {...state.field("timeZone")} />
         <NumberInput label="Latitude" optional unit="degrees" {...state.numberField("latitude")} />
         <NumberInput label="Longitude" optional unit="degrees" {...state.numberField("longitude")} />
         <TextArea
