@@ -103,7 +103,7 @@ export function InstrumentsLedger({
             </>
           ),
         align: "right",
-        width: 84,
+        width: 92,
         phone: "aside",
       },
       {
