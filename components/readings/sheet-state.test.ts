@@ -274,6 +274,15 @@ describe("undo", () => {
     expect(isWhole(row(back), 440)).toBe(true);
   });
 
+  it("takes a note off again that was empty before it was saved", () => {
+    const typedIn = run(empty, { type: "choose", place: G3 }, type(1, "2.8"), settle);
+    const saved = run(typedIn, { type: "saved", key: g3, record: note(55, [2.8]) });
+    const back = run(saved, { type: "undo", key: g3 });
+    expect(row(back).removed).toBe(true);
+    expect(shownRows(back)).toEqual([]);
+    expect(isChanged(row(back), 440)).toBe(true);
+  });
+
   it("writes a note again whose removal was undone while it was on its way", () => {
     const state = run(
       withG3,

@@ -117,7 +117,14 @@ export function undone(state: SheetState, key: RowKey | null): SheetState {
     if (part.before) {
       const before = part.before;
       const there = row ? now : withRow(now, placeOf(part.key));
-      return withChange(there, part.key, (one) => ({ ...before, faults: {}, trouble: mended(one.trouble) }));
+      // A note keeps at least one partial: one that had none before it was saved goes again.
+      const removed = before.removed || (Object.keys(before.cells).length === 0 && row?.saved != null);
+      return withChange(there, part.key, (one) => ({
+        ...before,
+        removed,
+        faults: {},
+        trouble: mended(one.trouble),
+      }));
     }
     if (!row) return now;
     return row.saved || row.sending
