@@ -52,7 +52,7 @@ export const NoteRow = memo(function NoteRow(props: Props) {
       <tr
         className={cx(
           "group/row h-11 align-top max-lg:h-16",
-          open ? "bg-brass-wash" : "border-b border-hairline",
+          open ? "bg-brass-wash" : measures.wide && "border-b border-hairline",
           open && "[&>*:first-child]:shadow-[inset_3px_0_0_var(--brass-fill)]",
         )}
       >
@@ -117,7 +117,12 @@ export const NoteRow = memo(function NoteRow(props: Props) {
         )}
       </tr>
       {measures.wide ? null : (
-        <tr className={cx("h-6", open ? "bg-brass-wash" : "border-b border-hairline")}>
+        <tr
+          className={cx(
+            "h-6",
+            open ? "bg-brass-wash shadow-[inset_3px_0_0_var(--brass-fill)]" : "border-b border-hairline",
+          )}
+        >
           <td colSpan={columns.length + 2} className="pr-1.5 pb-1.5 text-right text-12">
             <span className="inline-flex items-baseline gap-4">
               <FittedB live={live} predictedB={predictedB} />

@@ -1,7 +1,6 @@
 "use client";
 
 import { useEffect, useMemo, useState } from "react";
-import { flushSync } from "react-dom";
 import type { KeyMark } from "@/components/charts/keyboard-ribbon";
 import { NoteName } from "@/components/charts/note-name";
 import { useAnalysis } from "@/components/plans/use-analysis";
@@ -72,7 +71,9 @@ export function ReadingSheet(props: Props) {
   const rows = shownRows(state);
   const readKeys = new Set(rows.filter((row) => partialsOf(row).length > 0).map((row) => row.place.midi));
   const proposed = steps?.chain.find(({ midi }) => !state.rows[rowKey({ midi, string: "all", take: 1 })]);
-  const suggestion = canChange && proposed ? { midi: proposed.midi, b: proposed.predictedB } : null;
+  const enough = notes.length > 0 && (analysis?.advice.enough ?? false);
+  const suggestion =
+    canChange && proposed && !enough ? { midi: proposed.midi, b: proposed.predictedB } : null;
   const suggestedKey = suggestion && rowKey({ midi: suggestion.midi, string: "all", take: 1 });
   const order = [...rows.map((row) => rowKey(row.place)), ...(suggestedKey ? [suggestedKey] : [])];
 
@@ -108,11 +109,11 @@ export function ReadingSheet(props: Props) {
   }
 
   function choose(place: Place) {
-    flushSync(() => dispatch({ type: "choose", place }));
+    dispatch({ type: "choose", place });
     const key = rowKey(place);
     const at = firstEmpty(state.rows[key], columns);
-    // The phone's page shows the note; only the table takes the focus, so that no keyboard covers the page.
-    table.goTo(key, at);
+    // Once the row stands. Only the table takes the focus: on the phone the keyboard would cover the page.
+    requestAnimationFrame(() => table.goTo(key, at));
   }
 
   const actions = useMemo<OpenNoteActions>(
@@ -211,7 +212,7 @@ export function ReadingSheet(props: Props) {
       >
         {troubled.length === 1 ? "Save 1 note again" : `Save ${troubled.length} notes again`}
       </Button>
-    ) : suggestion && analysis && !analysis.advice.enough ? (
+    ) : suggestion ? (
       <Button kind="primary" onClick={() => chooseKey?.(suggestion.midi)}>
         <span>
           Read <NoteName midi={suggestion.midi} />
@@ -235,7 +236,7 @@ export function ReadingSheet(props: Props) {
             notesRead={readKeys.size}
             keys={keys}
             steps={steps}
-            enough={analysis?.advice.enough ?? false}
+            enough={enough}
             onChoose={chooseKey}
           />
         </div>

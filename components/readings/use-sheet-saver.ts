@@ -114,10 +114,11 @@ export function useSheetSaver({ sheetId, state, dispatch, liveOf }: Saver): void
   });
 
   const { mutate: removeOne } = useMutation({
-    mutationFn: ({ place: { midi, string, take }, version }: Row) =>
+    mutationFn: ({ place: { midi, string, take }, version, saved }: Row) =>
       fetchJson<void>(`/api/v1/sheets/${sheetId}/notes/${midi}`, {
         method: "DELETE",
-        query: { string, take, version },
+        // A draft begun before the note was there is removed as the note stands now.
+        query: { string, take, version: version > 0 ? version : saved?.version },
       }),
     onMutate: (row) => begin([row]),
     onSuccess: (_, row) => {

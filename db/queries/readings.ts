@@ -136,12 +136,18 @@ export type NoteRow = {
   version: number;
 };
 
+/** Nulls inside an array of numbers come back as not-a-number. */
+function withNulls(row: NoteRow): NoteRow {
+  return { ...row, sigmaCents: row.sigmaCents.map((sigma) => (Number.isNaN(sigma) ? null : sigma)) };
+}
+
 export async function notesOfSheet(db: Handle, shopId: string, sheetId: string): Promise<NoteRow[]> {
-  return db
+  const rows = await db
     .select(noteColumns)
     .from(noteReading)
     .where(and(eq(noteReading.shopId, shopId), eq(noteReading.sheetId, sheetId)))
     .orderBy(noteReading.midi, noteReading.string, noteReading.take);
+  return rows.map(withNulls);
 }
 
 export type NotePlace = { sheetId: string; midi: number; string: number; take: number };
@@ -163,7 +169,7 @@ export async function noteForUpdate(
   place: NotePlace,
 ): Promise<NoteRow | undefined> {
   const [row] = await db.select(noteColumns).from(noteReading).where(atPlace(shopId, place)).for("update");
-  return row;
+  return row && withNulls(row);
 }
 
 export type NoteValues = Omit<NoteRow, "id" | "version" | "midi" | "string" | "take">;
@@ -184,7 +190,7 @@ export async function insertNote(
     .values({ ...values, ...fitColumns(values.fit), ...place, shopId, id, takenBy })
     .onConflictDoNothing()
     .returning(noteColumns);
-  return row;
+  return row && withNulls(row);
 }
 
 export async function updateNote(
@@ -199,7 +205,7 @@ export async function updateNote(
     .set({ ...values, ...fitColumns(values.fit), version: version + 1, updatedAt: sql`now()` })
     .where(and(atPlace(shopId, place), eq(noteReading.version, version)))
     .returning(noteColumns);
-  return row;
+  return row && withNulls(row);
 }
 
 export async function deleteNote(

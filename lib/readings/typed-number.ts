@@ -74,13 +74,13 @@ export function shownReading(
   return text.startsWith("−") || Number(text) === 0 ? text : `+${text}`;
 }
 
-/** The number as it is mended: with the digits that were typed, not only those that fit. */
+/** The number as it is mended: with the hundredths that a cell at rest may leave out. */
 export function editedReading(
   hz: number,
   unit: ReadingUnit,
   { partial, midi, referenceHz }: Harmonic,
 ): string {
-  if (unit === "hz") return trimmed(hz, 2, 4);
-  const text = trimmed(readingCents(partial, hz, midi, referenceHz), 1, 3);
+  if (unit === "hz") return hz.toFixed(2);
+  const text = trimmed(readingCents(partial, hz, midi, referenceHz), 1, 2);
   return text.startsWith("−") || Number(text) === 0 ? text : `+${text}`;
 }

@@ -93,6 +93,7 @@ describe("saving a note", () => {
       visitId: place.visitId,
     });
     expect(read.notes).toEqual([saved]);
+    expect(saved.readings.map(({ sigmaCents }) => sigmaCents)).toEqual(clean.map(() => null));
     expect(
       (await findSheets(place.shop.office, place.instrumentId, { most: 10, archived: "hide" })).items,
     ).toMatchObject([{ id: place.sheet.id, notesRead: 1, stage: "as-found" }]);
@@ -103,6 +104,21 @@ describe("saving a note", () => {
     const saved = await save({ readings: [{ partial: 2, cents: 120 }] }, 69, place);
     expect(saved.readings[0]?.hz).toBeCloseTo(880 * 2 ** 0.1, 9);
     expect(saved).toMatchObject({ b: null, warnings: ["single-reading"] });
+  });
+
+  it("keeps an error that was given with its reading, and none where none was", async () => {
+    const place = await furnished();
+    const readings = clean.map((reading, index) => (index === 2 ? { ...reading, sigmaCents: 0.4 } : reading));
+    await save({ readings }, A3, place);
+    const { notes } = await getSheet(place.shop.technician, place.sheet.id);
+    expect(notes[0]?.readings.map(({ sigmaCents }) => sigmaCents)).toEqual([
+      null,
+      null,
+      0.4,
+      null,
+      null,
+      null,
+    ]);
   });
 
   it("keeps strings and takes of one key apart", async () => {
