@@ -6,7 +6,7 @@ import { PowerOfTen } from "@/components/ui/glyphs";
 import type { ReadingUnit } from "@/lib/readings/typed-number";
 import { NoteRow } from "./note-row";
 import type { OpenNoteActions } from "./open-note";
-import { emptyRow, rowKey } from "./sheet-row";
+import { emptyRow, type Row, rowKey } from "./sheet-row";
 import { shownRows } from "./sheet-state";
 import type { useCells } from "./use-cells";
 import type { ReadingSheetState } from "./use-reading-sheet";
@@ -41,8 +41,14 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
   const width = useWidth(box, 856);
   const measures = tableMeasures(width, columns.length);
   const { state, liveOf } = sheet;
-  const rows = shownRows(state);
-  const next = suggestion && emptyRow({ midi: suggestion.midi, string: "all", take: 1 });
+  const rows = shownRows(state).map((row) => ({ row, predictedB: undefined }));
+  // One list with the proposed row, so that a row which becomes real keeps its cells, and the cursor in them.
+  const lines: ReadonlyArray<{ row: Row; predictedB: number | null | undefined }> = suggestion
+    ? [
+        ...rows,
+        { row: emptyRow({ midi: suggestion.midi, string: "all", take: 1 }), predictedB: suggestion.b },
+      ]
+    : rows;
   const tabPartial = cells.inHand?.partial ?? columns[0] ?? 1;
 
   return (
@@ -91,7 +97,7 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
           </tr>
         </thead>
         <tbody>
-          {rows.map((row) => {
+          {lines.map(({ row, predictedB }) => {
             const key = rowKey(row.place);
             return (
               <NoteRow
@@ -107,30 +113,12 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
                 columns={columns}
                 measures={measures}
                 canChange={canChange}
+                predictedB={predictedB}
                 actions={actions}
                 onType={cells.onType}
               />
             );
           })}
-          {next ? (
-            <NoteRow
-              key={rowKey(next.place)}
-              prefix={prefix}
-              row={next}
-              live={liveOf(next)}
-              open={false}
-              inHand={null}
-              tabPartial={tabPartial}
-              unit={unit}
-              referenceHz={state.referenceHz}
-              columns={columns}
-              measures={measures}
-              canChange={canChange}
-              predictedB={suggestion.b}
-              actions={actions}
-              onType={cells.onType}
-            />
-          ) : null}
         </tbody>
       </table>
     </div>
