@@ -44,9 +44,14 @@ export function FormError({ state }: { state: State }) {
   const errors = listErrors(form.formState.errors);
   const shown = attempts > 0 && (failure !== null || errors.length > 0);
 
+  // The errors may be drawn after the attempt was counted; and an attempt takes the focus once, not again
+  // when an error comes and goes while somebody types.
+  const focusedFor = useRef(0);
   useEffect(() => {
-    if (attempts > 0) box.current?.focus();
-  }, [attempts]);
+    if (!shown || focusedFor.current === attempts) return;
+    focusedFor.current = attempts;
+    box.current?.focus();
+  }, [shown, attempts]);
 
   if (!shown) return null;
   return (

@@ -1,0 +1,29 @@
+import type { APIRequestContext } from "@playwright/test";
+
+/** Ids of the demo's records, as a member of that shop finds them. */
+export async function demoRecords(request: APIRequestContext) {
+  const instrumentId = await firstId(request, "/api/v1/instruments", { q: "48213" });
+  const answer = await request.get(`/api/v1/instruments/${instrumentId}`);
+  const { siteId, ownerId } = (await answer.json()) as { siteId: string; ownerId: string };
+  return {
+    instrumentId,
+    siteId,
+    customerId: ownerId,
+    sheetId: await firstId(request, `/api/v1/instruments/${instrumentId}/sheets`),
+    visitId: await firstId(request, "/api/v1/visits", { instrumentId }),
+    styleId: await firstId(request, "/api/v1/styles"),
+  };
+}
+
+export type DemoRecords = Awaited<ReturnType<typeof demoRecords>>;
+
+async function firstId(request: APIRequestContext, path: string, params: Record<string, string> = {}) {
+  const answer = await request.get(path, { params });
+  const { items = [], house = [] } = (await answer.json()) as {
+    items?: { id: string }[];
+    house?: { id: string }[];
+  };
+  const [first] = [...items, ...house];
+  if (!first) throw new Error(`${path} lists nothing: ${answer.status()}`);
+  return first.id;
+}
