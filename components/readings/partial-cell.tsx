@@ -48,7 +48,7 @@ export const PartialCell = memo(function PartialCell(props: PartialCellProps) {
       aria-describedby={describedBy}
       className={cx(
         "block w-full rounded bg-transparent text-right outline-none focus:bg-sheet focus:text-ink focus:no-underline focus:shadow-[inset_0_0_0_2px_var(--brass)]",
-        big ? "h-11 pr-4 text-16" : "h-7.5 pr-2 pl-0 text-14 max-lg:h-11 max-lg:pr-1 max-lg:text-16",
+        big ? "h-11 pr-4 text-16" : "h-7.5 pr-1.5 pl-0 text-14 max-lg:h-11 max-lg:pr-1 max-lg:text-16",
         looks[look],
       )}
     />

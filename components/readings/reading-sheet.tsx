@@ -1,6 +1,6 @@
 "use client";
 
-import { useEffect, useMemo, useState } from "react";
+import { useEffect, useMemo, useRef, useState } from "react";
 import type { KeyMark } from "@/components/charts/keyboard-ribbon";
 import { NoteName } from "@/components/charts/note-name";
 import { useAnalysis } from "@/components/plans/use-analysis";
@@ -28,7 +28,7 @@ import { firstEmpty, shownRows } from "./sheet-state";
 import { SheetTable } from "./sheet-table";
 import { placeOf } from "./sheet-typing";
 import { useBandSteps } from "./use-band-steps";
-import { useCells } from "./use-cells";
+import { type InHand, useCells } from "./use-cells";
 import { useReadingSheet } from "./use-reading-sheet";
 
 const LOW = Array.from({ length: 10 }, (_, index) => index + 1);
@@ -67,6 +67,7 @@ export function ReadingSheet(props: Props) {
   const [pasting, setPasting] = useState(false);
   const [pasteText, setPasteText] = useState("");
   const columns = high ? HIGH : LOW;
+  const wanted = useRef<InHand | null>(null);
 
   const rows = shownRows(state);
   const readKeys = new Set(rows.filter((row) => partialsOf(row).length > 0).map((row) => row.place.midi));
@@ -111,10 +112,13 @@ export function ReadingSheet(props: Props) {
   function choose(place: Place) {
     dispatch({ type: "choose", place });
     const key = rowKey(place);
-    const at = firstEmpty(state.rows[key], columns);
-    // Once the row stands. Only the table takes the focus: on the phone the keyboard would cover the page.
-    requestAnimationFrame(() => table.goTo(key, at));
+    wanted.current = { key, partial: firstEmpty(state.rows[key], columns) };
   }
+
+  // Once the row stands. Only the table takes the focus: on the phone the keyboard would cover the page.
+  useEffect(() => {
+    if (wanted.current && table.goTo(wanted.current.key, wanted.current.partial)) wanted.current = null;
+  });
 
   const actions = useMemo<OpenNoteActions>(
     () => ({

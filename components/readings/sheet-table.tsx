@@ -77,7 +77,7 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
               Note
             </th>
             {columns.map((partial) => (
-              <th key={partial} scope="col" className="pr-2 text-right max-lg:pr-1">
+              <th key={partial} scope="col" className="pr-1.5 text-right max-lg:pr-1">
                 <span className="sr-only">Partial </span>
                 {partial}
               </th>
