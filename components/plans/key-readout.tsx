@@ -23,6 +23,7 @@ export function KeyReadout({
   return (
     <Readout
       midi={midi}
+      noteWidth={236}
       about={`${bridge}, ${source}`}
       cells={[
         {
@@ -38,13 +39,17 @@ export function KeyReadout({
           width: 140,
         },
         { key: "target", label: "Target, Hz", value: hertz(note.targetHz), width: 124 },
-        {
-          key: "listen",
-          label: `Partial ${note.listenPartial}, Hz`,
-          value: hertz(note.listenHz),
-          width: 124,
-          deskOnly: true,
-        },
+        ...(canRead
+          ? []
+          : [
+              {
+                key: "listen",
+                label: `Partial ${note.listenPartial}, Hz`,
+                value: hertz(note.listenHz),
+                width: 124,
+                deskOnly: true,
+              },
+            ]),
       ]}
       hint={<CursorHint {...(canRead ? { enter: "read it" } : {})} />}
     />

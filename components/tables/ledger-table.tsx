@@ -102,7 +102,7 @@ export function LedgerTable<Row extends LedgerRow>({
                 style={column.id === titleId ? undefined : { width: column.width ?? usualWidth }}
                 aria-sort={column.sortable ? (sorted ?? "none") : undefined}
                 className={cx(
-                  "sticky top-0 z-10 h-8 border-b border-edge bg-sheet pr-3 pl-0 text-12 font-medium text-ink-soft last:pr-2",
+                  "sticky top-0 z-10 h-8 border-b border-edge bg-sheet pr-3 pl-0 text-12 font-medium text-ink-soft first:pl-3 last:pr-2",
                   column.align === "right" ? "text-right" : "text-left",
                   column.from && from[column.from],
                 )}

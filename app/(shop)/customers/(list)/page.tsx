@@ -1,6 +1,7 @@
 import type { Metadata } from "next";
 import { CustomersLedger } from "@/components/customers/customers-ledger";
 import { listTabs } from "@/components/customers/list-tabs";
+import { KeptViews } from "@/components/shell/kept-views";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { Tabs } from "@/components/shell/tabs";
 import { LinkButton } from "@/components/ui/button";
@@ -12,6 +13,12 @@ import { addressQuery } from "@/lib/pages/ledger-request";
 import { staffActor } from "@/lib/pages/page-actor";
 import { shopClock } from "@/lib/shop-clock/service";
 import { changeCustomerAction } from "../actions";
+
+const views = [
+  { href: "/customers", label: "All in use" },
+  { href: "/customers?sort=-updated", label: "Changed last" },
+  { href: "/customers?archived=only", label: "Archived" },
+];
 
 export const metadata: Metadata = { title: "Customers" };
 
@@ -28,8 +35,10 @@ export default async function CustomersPage({ searchParams }: PageProps<"/custom
           title="Customers"
           subtitle="People and organisations whose instruments the shop looks after."
           aside={demo ? <DemoBadge /> : null}
-          fold={null}
-        />
+          fold="Views"
+        >
+          <KeptViews views={views} />
+        </LeftPage>
       }
       right={
         <RightPage>

@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import { InstrumentsLedger } from "@/components/instruments/instruments-ledger";
+import { KeptViews } from "@/components/shell/kept-views";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { LinkButton } from "@/components/ui/button";
 import { DemoBadge } from "@/components/ui/demo-badge";
@@ -10,6 +11,15 @@ import { addressQuery } from "@/lib/pages/ledger-request";
 import { staffActor } from "@/lib/pages/page-actor";
 import { shopClock } from "@/lib/shop-clock/service";
 import { archiveInstrumentAction } from "../actions";
+
+const views = [
+  { href: "/instruments", label: "All in use" },
+  { href: "/instruments?kind=grand", label: "Grands" },
+  { href: "/instruments?kind=upright", label: "Uprights" },
+  { href: "/instruments?sort=place", label: "By place" },
+  { href: "/instruments?sort=-updated", label: "Changed last" },
+  { href: "/instruments?archived=only", label: "Archived" },
+];
 
 export const metadata: Metadata = { title: "Instruments" };
 
@@ -26,8 +36,10 @@ export default async function InstrumentsPage({ searchParams }: PageProps<"/inst
           title="Instruments"
           subtitle="Every piano the shop looks after, with its readings and its history."
           aside={demo ? <DemoBadge /> : null}
-          fold={null}
-        />
+          fold="Views"
+        >
+          <KeptViews views={views} />
+        </LeftPage>
       }
       right={
         <RightPage>

@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import { listTabs } from "@/components/customers/list-tabs";
+import { KeptViews } from "@/components/shell/kept-views";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { Tabs } from "@/components/shell/tabs";
 import { SitesLedger } from "@/components/sites/sites-ledger";
@@ -12,6 +13,13 @@ import { shopClock } from "@/lib/shop-clock/service";
 import { siteListQuery } from "@/lib/sites/schema";
 import { findSites } from "@/lib/sites/service";
 import { changeSiteAction } from "../actions";
+
+const views = [
+  { href: "/sites", label: "All in use" },
+  { href: "/sites?sort=city", label: "By town" },
+  { href: "/sites?sort=-updated", label: "Changed last" },
+  { href: "/sites?archived=only", label: "Archived" },
+];
 
 export const metadata: Metadata = { title: "Sites" };
 
@@ -28,8 +36,10 @@ export default async function SitesPage({ searchParams }: PageProps<"/sites">) {
           title="Sites"
           subtitle="Addresses with instruments: homes, schools, halls, churches."
           aside={demo ? <DemoBadge /> : null}
-          fold={null}
-        />
+          fold="Views"
+        >
+          <KeptViews views={views} />
+        </LeftPage>
       }
       right={
         <RightPage>

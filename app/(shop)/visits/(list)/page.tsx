@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { KeptViews } from "@/components/shell/kept-views";
 import { LeftPage, RightPage, Spread } from "@/components/shell/spread";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { readSpan } from "@/components/visits/visit-span";
@@ -9,6 +10,14 @@ import { shopClock } from "@/lib/shop-clock/service";
 import { bookableTechnicians } from "@/lib/visits/booking/service";
 import { visitListQuery } from "@/lib/visits/schema";
 import { findVisits } from "@/lib/visits/service";
+
+const views = [
+  { href: "/visits", label: "From today on" },
+  { href: "/visits?state=offered", label: "Offered" },
+  { href: "/visits?state=confirmed", label: "Confirmed" },
+  { href: "/visits?state=done", label: "Done, not closed" },
+  { href: "/visits?state=cancelled", label: "Cancelled" },
+];
 
 export const metadata: Metadata = { title: "Visits" };
 
@@ -36,8 +45,10 @@ export default async function VisitsPage({ searchParams }: PageProps<"/visits">)
           title="Visits"
           subtitle="Every appointment, from offered to closed."
           aside={demo ? <DemoBadge /> : null}
-          fold={null}
-        />
+          fold="Views"
+        >
+          <KeptViews views={views} />
+        </LeftPage>
       }
       right={
         <RightPage>
