@@ -1,3 +1,4 @@
+import { fixed } from "@/components/charts/format";
 import { AppLink } from "@/components/ui/app-link";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { showInstant } from "@/lib/dates";
@@ -66,7 +67,7 @@ export function SheetsLedger({
                 {sheet.temperatureC === null ? (
                   <span className="text-ink-soft">–</span>
                 ) : (
-                  `${String(sheet.temperatureC).replace("-", "−")} °C`
+                  `${fixed(sheet.temperatureC, 1)} °C`
                 )}
               </td>
               <td className="pr-0! pl-3 max-lg:hidden">{sheet.takenByName ?? "–"}</td>

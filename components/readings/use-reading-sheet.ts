@@ -1,6 +1,6 @@
 "use client";
 
-import { useQuery } from "@tanstack/react-query";
+import { useQuery, useQueryClient } from "@tanstack/react-query";
 import { useCallback, useEffect, useMemo, useReducer, useRef, useState } from "react";
 import { showMessage } from "@/components/ui/message-queue";
 import { fetchJson } from "@/lib/client/fetch-json";
@@ -24,6 +24,11 @@ export function useReadingSheet(given: SheetRecord, range: KeyRange) {
     queryFn: ({ signal }) => fetchJson<SheetRecord>(`/api/v1/sheets/${given.id}`, { signal }),
     initialData: given,
   });
+  const client = useQueryClient();
+  // The page was made anew on the server, as after archiving.
+  useEffect(() => {
+    client.setQueryData(readingKeys.sheet(given.id), given);
+  }, [client, given]);
   useEffect(() => dispatch({ type: "received", notes: sheet.notes }), [sheet]);
 
   const notes = useSavedNotes(state.rows);

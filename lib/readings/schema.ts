@@ -7,9 +7,20 @@ export const newSheet = z.object({
   jobId: z.uuid().nullish(),
   stage: z.enum(stages),
   takenAt: z.iso.datetime({ offset: true }),
-  referenceHz: z.number().min(380, "Between 380 and 480 Hz.").max(480, "Between 380 and 480 Hz."),
-  humidityPercent: z.number().min(0, "Between 0 and 100 %.").max(100, "Between 0 and 100 %.").nullish(),
-  temperatureC: z.number().min(-30, "Between −30 and 60 °C.").max(60, "Between −30 and 60 °C.").nullish(),
+  referenceHz: z
+    .number("Not a number. Write 440.")
+    .min(380, "Between 380 and 480 Hz.")
+    .max(480, "Between 380 and 480 Hz."),
+  humidityPercent: z
+    .number("Not a number. Write 58.")
+    .min(0, "Between 0 and 100 %.")
+    .max(100, "Between 0 and 100 %.")
+    .nullish(),
+  temperatureC: z
+    .number("Not a number. Write 21.4.")
+    .min(-30, "Between −30 and 60 °C.")
+    .max(60, "Between −30 and 60 °C.")
+    .nullish(),
 });
 
 export const sheetChange = z.object({
