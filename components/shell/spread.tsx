@@ -101,22 +101,26 @@ export function WorkHead({
   title,
   summary,
   actions,
+  unseen = false,
   className,
 }: {
   title: ReactNode;
   summary?: ReactNode;
   actions?: ReactNode;
+  /** Where the left page's title says it already: the heading is for screen readers. */
+  unseen?: boolean;
   className?: string;
 }) {
   return (
     <div
       className={cx(
         "mt-3.5 mb-3 flex items-center justify-between gap-x-4 gap-y-3 max-lg:flex-wrap",
+        unseen && !actions && "mt-0 mb-0",
         className,
       )}
     >
       <div className="min-w-0">
-        <h2>{title}</h2>
+        <h2 className={unseen ? "sr-only" : undefined}>{title}</h2>
         {summary ? <p className="lab mt-1">{summary}</p> : null}
       </div>
       {actions ? (

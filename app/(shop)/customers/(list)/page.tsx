@@ -45,6 +45,7 @@ export default async function CustomersPage({ searchParams }: PageProps<"/custom
           <Tabs label="Customers and sites" items={listTabs} />
           <WorkHead
             title="Customers"
+            unseen
             actions={
               mayChange ? (
                 <LinkButton kind="primary" href="/customers/new">

@@ -45,6 +45,7 @@ export default async function InstrumentsPage({ searchParams }: PageProps<"/inst
         <RightPage>
           <WorkHead
             title="Instruments"
+            unseen
             actions={
               mayAdd ? (
                 <LinkButton kind="primary" href="/instruments/new">

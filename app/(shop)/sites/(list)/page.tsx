@@ -46,6 +46,7 @@ export default async function SitesPage({ searchParams }: PageProps<"/sites">) {
           <Tabs label="Customers and sites" items={listTabs} />
           <WorkHead
             title="Sites"
+            unseen
             actions={
               mayChange ? (
                 <LinkButton kind="primary" href="/sites/new">
