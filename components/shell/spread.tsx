@@ -114,8 +114,8 @@ export function WorkHead({
   return (
     <div
       className={cx(
-        "mt-3.5 mb-3 flex items-center justify-between gap-x-4 gap-y-3 max-lg:flex-wrap",
-        unseen && !actions && "mt-0 mb-0",
+        "flex items-center justify-between gap-x-4 gap-y-3 max-lg:flex-wrap",
+        unseen && !actions ? "mt-2" : "mt-3.5 mb-3",
         className,
       )}
     >
