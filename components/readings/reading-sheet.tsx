@@ -7,7 +7,6 @@ import { useAnalysis } from "@/components/plans/use-analysis";
 import { RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { Button, LinkButton } from "@/components/ui/button";
 import { DemoBadge } from "@/components/ui/demo-badge";
-import { Kbd } from "@/components/ui/kbd";
 import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
 import { Segmented } from "@/components/ui/segmented";
 import { EmptyState } from "@/components/ui/states";
@@ -385,47 +384,5 @@ export function ReadingSheet(props: Props) {
         </RightPage>
       }
     />
-  );
-}
-
-function KeyWords() {
-  const keys = [
-    ["Enter", "next partial"],
-    ["Tab", "next note"],
-    ["Space", "keep or drop"],
-  ] as const;
-  return (
-    <ul className="flex flex-wrap items-center gap-x-5 gap-y-1 text-12 text-ink-soft max-lg:hidden">
-      {keys.map(([key, words]) => (
-        <li key={key} className="flex items-center gap-2">
-          <Kbd>{key}</Kbd> {words}
-        </li>
-      ))}
-    </ul>
-  );
-}
-
-function Exports({ sheetId }: { sheetId: string }) {
-  const at = `/api/v1/sheets/${sheetId}/export`;
-  const links = [
-    { what: "readings", format: "csv" },
-    { what: "readings", format: "json" },
-    { what: "fits", format: "csv" },
-    { what: "fits", format: "json" },
-  ] as const;
-  return (
-    <p className="flex flex-wrap items-center gap-x-4 gap-y-1 text-12 text-ink-soft">
-      Export
-      {links.map(({ what, format }) => (
-        <a
-          key={`${what} ${format}`}
-          className="link touch:inline-flex touch:h-11 touch:items-center"
-          href={`${at}?format=${format}&what=${what}`}
-          download
-        >
-          {what} as {format.toUpperCase()}
-        </a>
-      ))}
-    </p>
   );
 }
