@@ -22,6 +22,7 @@ import { PasteDialog } from "./paste-dialog";
 import { PhoneNote } from "./phone-note";
 import { rowState } from "./row-state";
 import { ChoosingRibbon, type Clock, SheetAbout, type SheetInstrument } from "./sheet-about";
+import { Exports, KeyWords } from "./sheet-foot";
 import { emptyRow, type Place, partialsOf, rowKey } from "./sheet-row";
 import { firstEmpty, shownRows } from "./sheet-state";
 import { SheetTable } from "./sheet-table";
