@@ -1,8 +1,9 @@
-import { type Browser, expect, type Page, test } from "@playwright/test";
+import { type Browser, expect, test } from "@playwright/test";
 import { allPages, builtPages } from "./support/all-pages";
 import { type DemoRecords, demoRecords } from "./support/demo-records";
 import {
   expectAccessible,
+  expectAccessibleInBothThemes,
   expectNoSidewaysScroll,
   expectTouchTargets,
   listenForFaults,
@@ -29,14 +30,6 @@ async function pageFor(browser: Browser, person: DemoPerson | null, size: typeof
   // As after a right password, when the second step is still to come.
   if (!person) await context.addCookies([{ name: "agraffe.two_factor", value: "waiting", url: ownOrigin() }]);
   return context.newPage();
-}
-
-/** In both themes as the device asks for them. */
-async function expectAccessibleInBothThemes(page: Page, what: string) {
-  for (const colorScheme of ["light", "dark"] as const) {
-    await page.emulateMedia({ colorScheme });
-    await expectAccessible(page, `${what}, ${colorScheme}`);
-  }
 }
 
 test("every page of the build has its line among those tested here", () => {

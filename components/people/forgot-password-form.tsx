@@ -34,7 +34,7 @@ export function ForgotPasswordForm({
         <p>The link in it works once, for one hour. Look among the unwanted mail if it does not come.</p>
         {mailboxHref ? (
           <p>
-            <AppLink href={mailboxHref} className="link">
+            <AppLink href={mailboxHref} className="link link-alone">
               Open the local mailbox
             </AppLink>
           </p>

@@ -25,7 +25,7 @@ export function ResetPasswordForm({ action, token }: { action: GoingOn; token: s
         {...state.field("password")}
       />
       {linkIsDead ? (
-        <AppLink href="/forgot-password" className="link">
+        <AppLink href="/forgot-password" className="link link-alone">
           Ask for a new link
         </AppLink>
       ) : null}

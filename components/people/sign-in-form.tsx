@@ -38,7 +38,10 @@ export function SignInForm({
         <PasswordInput
           label="Password"
           aside={
-            <AppLink href="/forgot-password" className="link">
+            <AppLink
+              href="/forgot-password"
+              className="link touch:-mt-4 touch:-mb-2 touch:inline-flex touch:h-11 touch:items-end touch:pb-2"
+            >
               Forgotten?
             </AppLink>
           }

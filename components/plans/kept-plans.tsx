@@ -9,6 +9,8 @@ import { planKeys } from "@/lib/plans/keys";
 import { temperamentName } from "@/lib/plans/rules";
 import type { PlanRow } from "@/lib/plans/schema";
 
+const exportLook = "touch:inline-flex touch:h-11 touch:min-w-11 touch:items-center touch:justify-center";
+
 /** Plans saved from this sheet; each stays as it was computed. */
 export function KeptPlans({
   sheetId,
@@ -64,10 +66,10 @@ export function KeptPlans({
                     <StateWord kind="returned">replaced</StateWord>
                   )
                 ) : null}
-                <a href={`/api/v1/plans/${plan.id}/export?format=csv`} download>
+                <a href={`/api/v1/plans/${plan.id}/export?format=csv`} download className={exportLook}>
                   CSV
                 </a>
-                <a href={`/api/v1/plans/${plan.id}/export?format=json`} download>
+                <a href={`/api/v1/plans/${plan.id}/export?format=json`} download className={exportLook}>
                   JSON
                 </a>
               </span>

@@ -46,7 +46,7 @@ export function Tabs({
                 aria-current={on ? "page" : undefined}
                 scroll={false}
                 className={cx(
-                  "flex items-center rounded whitespace-nowrap -outline-offset-2 max-lg:text-16",
+                  "flex items-center rounded whitespace-nowrap -outline-offset-2 max-lg:text-16 touch:min-w-11 touch:justify-center",
                   on ? "font-semibold text-ink" : "font-text text-ink-soft hover:text-ink",
                 )}
               >

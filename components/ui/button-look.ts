@@ -9,7 +9,7 @@ const base =
 /** "small" belongs inside rows; "big" (52 px) is the next action under the thumb. */
 const sizes: Record<ButtonSize, string> = {
   small: "h-7 px-2.5 text-12 touch:h-11 touch:px-3.5 touch:text-14",
-  normal: "h-9 text-14 touch:h-11",
+  normal: "h-9 text-14 touch:h-11 touch:min-w-11",
   big: "h-13 w-full px-4 text-16",
 };
 

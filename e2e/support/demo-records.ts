@@ -2,9 +2,11 @@ import type { APIRequestContext } from "@playwright/test";
 
 /** Ids of the demo's records, as a member of that shop finds them. */
 export async function demoRecords(request: APIRequestContext) {
-  const instrumentId = await firstId(request, "/api/v1/instruments", { q: "48213" });
-  const answer = await request.get(`/api/v1/instruments/${instrumentId}`);
-  const { siteId, ownerId } = (await answer.json()) as { siteId: string; ownerId: string };
+  const answer = await request.get("/api/v1/instruments", { params: { q: "48213" } });
+  const { items } = (await answer.json()) as { items: { id: string; siteId: string; ownerId: string }[] };
+  const [instrument] = items;
+  if (!instrument) throw new Error("The demo has no instrument 48213");
+  const { id: instrumentId, siteId, ownerId } = instrument;
   return {
     instrumentId,
     siteId,

@@ -3,15 +3,27 @@ import { expect, type Page } from "@playwright/test";
 
 const standard = ["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"];
 
+/** What a change of theme can break; all else is the same in both. */
+const ofColour = ["color-contrast", "link-in-text-block"];
+
 /** No violation that can be found by rule, named with the elements it stands at. */
-export async function expectAccessible(page: Page, what = page.url()) {
-  const { violations } = await new AxeBuilder({ page }).withTags(standard).analyze();
+export async function expectAccessible(page: Page, what = page.url(), rules?: readonly string[]) {
+  const axe = new AxeBuilder({ page });
+  const { violations } = await (rules ? axe.withRules([...rules]) : axe.withTags(standard)).analyze();
   const found = violations.map(({ id, help, nodes }) => ({
     id,
     help,
     at: nodes.map(({ html, failureSummary }) => `${html} ${failureSummary}`),
   }));
   expect(found, what).toEqual([]);
+}
+
+/** In both themes as the device asks for them. */
+export async function expectAccessibleInBothThemes(page: Page, what: string) {
+  await page.emulateMedia({ colorScheme: "light" });
+  await expectAccessible(page, `${what}, light`);
+  await page.emulateMedia({ colorScheme: "dark" });
+  await expectAccessible(page, `${what}, dark`, ofColour);
 }
 
 /** Everything the page complains about: to the console, as an uncaught error, or as a request that failed. */
@@ -41,34 +53,58 @@ export async function expectNoSidewaysScroll(page: Page, what: string) {
 }
 
 /**
- * What can be pressed on a phone is at least 44 pixels in both directions, its label counted. Links within
- * running words are exempt, as in WCAG 2.5.5; a field drawn smaller than the label around it is as large as that.
+ * What can be pressed on a phone answers at least 22 pixels to each side of its middle: by its own box, its
+ * label's, or the row that opens wherever it is pressed. Links within running words are exempt, as in WCAG 2.5.5.
  */
 export async function expectTouchTargets(page: Page, what: string) {
   const small = await page.evaluate(() => {
-    const least = 43.5;
+    const least = 44;
+    const reach = least / 2 - 1;
     const pressable = "a[href], button, input:not([type=hidden]), select, textarea, summary, [role=slider]";
-    const isShown = (element: Element) =>
-      element.checkVisibility({ opacityProperty: true, visibilityProperty: true });
+
+    /** Kept for screen readers, or out of the window until it is wanted. */
+    const isHidden = (element: Element) => {
+      if (!element.checkVisibility({ visibilityProperty: true })) return true;
+      if (element.getBoundingClientRect().bottom + window.scrollY <= 0) return true;
+      for (let box: Element | null = element; box; box = box.parentElement)
+        if (box.clientWidth <= 1 && box.clientHeight <= 1 && getComputedStyle(box).overflow === "hidden")
+          return true;
+      return false;
+    };
     const inWords = (element: Element) =>
       getComputedStyle(element).display === "inline" &&
       [...(element.parentElement?.childNodes ?? [])].some(
         (node) => node.nodeType === Node.TEXT_NODE && (node.textContent ?? "").trim() !== "",
       );
+    const partsOf = (element: Element): Element[] => {
+      const labels = element instanceof HTMLInputElement ? [...(element.labels ?? [])] : [];
+      const around = element.closest(".field-box, label");
+      const row = element.matches("[data-row-focus]") ? element.closest("[data-row]") : null;
+      return [element, around, row, ...labels].filter((part) => part !== null);
+    };
+    const answersAround = (element: Element, parts: readonly Element[]) => {
+      element.scrollIntoView({ block: "center", inline: "center" });
+      const { left, top, width, height } = element.getBoundingClientRect();
+      const [x, y] = [left + width / 2, top + height / 2];
+      return [
+        [x - reach, y],
+        [x + reach, y],
+        [x, y - reach],
+        [x, y + reach],
+      ].every(([atX = 0, atY = 0]) => {
+        const hit = document.elementFromPoint(atX, atY);
+        return parts.some((part) => hit !== null && (part === hit || part.contains(hit)));
+      });
+    };
+
     return [...document.querySelectorAll(pressable)].flatMap((element) => {
-      if (!isShown(element) || element.closest(".sr-only") || inWords(element)) return [];
-      const labels =
-        "labels" in element ? [...((element.labels as NodeListOf<HTMLElement> | null) ?? [])] : [];
-      const boxes = [element, ...labels, element.closest(".field-box, label")]
-        .filter((one): one is Element => one !== null)
-        .map((one) => one.getBoundingClientRect());
-      const box = element.getBoundingClientRect();
-      // Drawn outside the window until it is wanted: the link that skips to the page.
-      if (box.bottom <= 0) return [];
-      const high = Math.max(...boxes.map(({ height }) => height));
-      const wide = Math.max(...boxes.map(({ width }) => width));
-      if (high >= least && wide >= least) return [];
-      return [`${Math.round(wide)} × ${Math.round(high)}: ${element.outerHTML.slice(0, 160)}`];
+      if (isHidden(element) || inWords(element)) return [];
+      const parts = partsOf(element);
+      const boxes = parts.map((part) => part.getBoundingClientRect());
+      const large = boxes.some(({ width, height }) => width >= least - 0.5 && height >= least - 0.5);
+      if (large || answersAround(element, parts)) return [];
+      const { width, height } = element.getBoundingClientRect();
+      return [`${Math.round(width)} × ${Math.round(height)}: ${element.outerHTML.slice(0, 160)}`];
     });
   });
   expect(small, `targets under 44 pixels on ${what}`).toEqual([]);

@@ -15,7 +15,7 @@ export default function ForgotPasswordPage() {
       title="Forgotten password"
       subtitle="We mail you a link that lets you set a new one."
       footer={
-        <AppLink href="/sign-in" className="link">
+        <AppLink href="/sign-in" className="link link-alone">
           Back to sign-in
         </AppLink>
       }

@@ -28,7 +28,7 @@ export default async function OpenShopPage() {
         <div className="flex flex-wrap items-center justify-between gap-3">
           <span className="min-w-0 break-words">Signed in as {person.email}</span>
           {person.actor ? (
-            <AppLink href="/" className="link">
+            <AppLink href="/" className="link link-alone">
               Back to {person.actor.shopName}
             </AppLink>
           ) : (

@@ -20,7 +20,7 @@ export default async function ResetPasswordPage({
       title="Set a new password"
       subtitle={typeof token === "string" ? "Every device is signed out when it is set." : undefined}
       footer={
-        <AppLink href="/sign-in" className="link">
+        <AppLink href="/sign-in" className="link link-alone">
           Back to sign-in
         </AppLink>
       }

@@ -30,10 +30,10 @@ export default async function SecondStepPage({
       }
       footer={
         <div className="flex flex-wrap justify-between gap-3">
-          <AppLink href={`/second-step?${other}`} className="link">
+          <AppLink href={`/second-step?${other}`} className="link link-alone">
             {recovery ? "Use the authenticator" : "Use a recovery code"}
           </AppLink>
-          <AppLink href="/sign-in" className="link">
+          <AppLink href="/sign-in" className="link link-alone">
             Begin again
           </AppLink>
         </div>

@@ -19,7 +19,7 @@ export default async function InvitationPage({ params }: { params: Promise<{ tok
   const { token } = await params;
   const [invitation, person] = await Promise.all([invitationBehind(token), currentPerson()]);
   const toSignIn = (
-    <AppLink href="/sign-in" className="link">
+    <AppLink href="/sign-in" className="link link-alone">
       Go to sign-in
     </AppLink>
   );
