@@ -1,5 +1,5 @@
 import "server-only";
-import { withShop } from "@/db/client";
+import { type Tx, withShop } from "@/db/client";
 import { historySheets, type InstrumentVisit, visitsOfInstrument } from "@/db/queries/instrument-history";
 import { openHoldingOf } from "@/db/queries/instrument-holdings";
 import type { Actor } from "@/lib/auth/actor";
@@ -12,14 +12,19 @@ export async function getHistory(actor: Actor, instrumentId: string): Promise<Hi
   authorise(actor, "instruments.read");
   return withShop(actor, async (tx) => {
     await readInstrument(tx, actor, instrumentId);
-    const open = await openHoldingOf(tx, actor.shopId, instrumentId);
-    const timeZone = open?.siteTimeZone ?? (await clockWithin(tx, actor.shopId)).timeZone;
-    return historyOf(
-      await historySheets(tx, actor.shopId, instrumentId),
-      await visitsOfInstrument(tx, actor.shopId, instrumentId),
-      timeZone,
-    );
+    return historyWithin(tx, actor, instrumentId);
   });
+}
+
+/** Within a transaction that is already open, of an instrument that this actor has been shown. */
+export async function historyWithin(tx: Tx, actor: Actor, instrumentId: string): Promise<HistoryEntry[]> {
+  const open = await openHoldingOf(tx, actor.shopId, instrumentId);
+  const timeZone = open?.siteTimeZone ?? (await clockWithin(tx, actor.shopId)).timeZone;
+  return historyOf(
+    await historySheets(tx, actor.shopId, instrumentId),
+    await visitsOfInstrument(tx, actor.shopId, instrumentId),
+    timeZone,
+  );
 }
 
 export async function findVisitsOf(actor: Actor, instrumentId: string): Promise<InstrumentVisit[]> {
