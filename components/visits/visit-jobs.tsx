@@ -2,27 +2,26 @@ import { AppLink } from "@/components/ui/app-link";
 import { LinkButton } from "@/components/ui/button";
 import { Sign } from "@/components/ui/sign";
 import { EmptyState } from "@/components/ui/states";
-import { showInstant } from "@/lib/dates";
-import type { VisitJob } from "@/lib/visits/schema";
+import { isFarFlat } from "@/lib/visits/progress/rules";
+import type { JobProgress, OpenedJob, VisitWork } from "@/lib/visits/progress/service";
+import { JobBackground } from "./job-background";
+import { JobRow } from "./job-row";
+import { JobSteps, type VisitClock } from "./job-steps";
+import { jobLine, jobStage, newSheetHref } from "./progress-words";
 
-const stages: Record<VisitJob["sheets"][number]["stage"], string> = {
-  "as-found": "As found",
-  "after-raise": "After raise",
-  "as-left": "As left",
-};
-
-/** The instruments of a visit, the work on each, and the readings taken on it. */
+/** The instruments of a visit: one opened with its steps, each other in a line that opens it. */
 export function VisitJobs({
-  jobs,
-  canRecord,
+  work: { visit, jobs, opened, canRecord },
+  href,
   locale,
-  timeZone,
+  named = false,
 }: {
-  jobs: readonly VisitJob[];
-  /** Whether this person may take readings on this visit. */
-  canRecord: boolean;
+  work: VisitWork;
+  /** The page these stand on. */
+  href: string;
   locale: string;
-  timeZone: string;
+  /** The page's own heading names the only instrument already. */
+  named?: boolean;
 }) {
   if (jobs.length === 0) {
     return (
@@ -31,56 +30,78 @@ export function VisitJobs({
       </EmptyState>
     );
   }
+  const clock: VisitClock = { day: visit.start.slice(0, 10), locale, timeZone: visit.timeZone };
+  const openAt = jobs.findIndex(({ id }) => id === opened?.jobId);
+  const job = jobs[openAt];
   return (
-    <ul className="border-t border-edge!">
-      {jobs.map((job) => (
-        <li key={job.id} className="border-b border-hairline py-3">
-          <div className="flex flex-wrap items-start justify-between gap-x-4 gap-y-2">
-            <div className="min-w-0">
+    <>
+      <JobLines jobs={jobs.slice(0, openAt)} href={href} label="Instruments before" />
+      {job && opened ? (
+        <section aria-label={job.instrument} className={jobs.length > 1 ? "pt-4 pb-6" : undefined}>
+          {named ? null : (
+            <div className="mb-3 flex flex-wrap items-baseline gap-x-3">
               <h3>
                 <AppLink href={`/instruments/${job.instrumentId}`} className="rounded-sm hover:underline">
                   {job.instrument}
                 </AppLink>
               </h3>
-              <p className="mt-0.5 max-lg:text-16">
-                {job.work}
-                {job.room ? <span className="text-ink-soft">, {job.room}</span> : null}
+              <p className="text-ink-soft max-lg:text-16">
+                {[job.work, job.room].filter(Boolean).join(", ")}
               </p>
             </div>
-            {canRecord ? (
-              <LinkButton
-                href={`/instruments/${job.instrumentId}/sheets/new?job=${job.id}`}
-                className="max-sm:w-full"
-                data-no-print
-              >
-                <Sign name="plus" size={12} />
-                New reading sheet
-                <span className="sr-only"> for {job.instrument}</span>
-              </LinkButton>
-            ) : null}
-          </div>
-          <Sheets job={job} locale={locale} timeZone={timeZone} />
-        </li>
-      ))}
-    </ul>
+          )}
+          <OpenedJobWork job={job} opened={opened} clock={clock} canRecord={canRecord} />
+        </section>
+      ) : null}
+      <JobLines jobs={jobs.slice(openAt + 1)} href={href} label="Instruments after" />
+    </>
   );
 }
 
-function Sheets({ job, locale, timeZone }: { job: VisitJob; locale: string; timeZone: string }) {
-  if (job.sheets.length === 0) return <p className="lab mt-2">No readings on this visit yet.</p>;
+function OpenedJobWork({
+  job,
+  opened,
+  clock,
+  canRecord,
+}: {
+  job: JobProgress;
+  opened: OpenedJob;
+  clock: VisitClock;
+  canRecord: boolean;
+}) {
   return (
-    <ul className="mt-2">
-      {job.sheets.map((sheet) => (
-        <li key={sheet.id}>
-          <AppLink
-            href={`/instruments/${job.instrumentId}/sheets/${sheet.id}`}
-            className="flex min-h-9 flex-wrap items-center gap-x-3 rounded hover:bg-cover touch:min-h-11"
-          >
-            <span className="link font-medium">{stages[sheet.stage]}</span>
-            <span>{sheet.notes === 1 ? "1 note" : `${sheet.notes} notes`}</span>
-            <span className="lab ml-auto">{showInstant(sheet.takenAt, locale, timeZone)}</span>
-          </AppLink>
-        </li>
+    <>
+      <JobSteps job={job} opened={opened} clock={clock} />
+      {canRecord ? (
+        <LinkButton size="small" href={newSheetHref(job)} className="mt-3 max-sm:w-full" data-no-print>
+          <Sign name="plus" size={12} />
+          New reading sheet
+          <span className="sr-only"> for {job.instrument}</span>
+        </LinkButton>
+      ) : null}
+      <JobBackground
+        instrumentId={job.instrumentId}
+        opened={opened}
+        farFlat={isFarFlat(job.progress.found)}
+        locale={clock.locale}
+      />
+    </>
+  );
+}
+
+function JobLines({ jobs, href, label }: { jobs: readonly JobProgress[]; href: string; label: string }) {
+  if (jobs.length === 0) return null;
+  return (
+    <ul aria-label={label} className="border-t border-edge!">
+      {jobs.map((job) => (
+        <JobRow
+          key={job.id}
+          state={jobStage(job.progress)}
+          name={job.instrument}
+          href={`${href}?job=${job.id}`}
+          words={jobLine(job.progress)}
+          end={job.room || undefined}
+        />
       ))}
     </ul>
   );

@@ -1,6 +1,7 @@
 "use client";
 
 import { useState } from "react";
+import { SharpText } from "@/components/charts/note-name";
 import { ActionStrip } from "@/components/shell/action-strip";
 import { Button, LinkButton } from "@/components/ui/button";
 import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
@@ -160,44 +161,59 @@ export function VisitMoves({
 }
 
 /**
- * On the day's page: the next step of the visit in hand, or the visit itself where no step is this person's.
+ * On the day's page: what comes next on the visit in hand. Work under way goes on where it stands, with the
+ * visit's own next step beside it; else that step leads, or the visit itself where no step is this person's.
  * `strip` draws it under the thumb instead of at the head.
  */
 export function NextStep({
   visit,
   step,
   siteName,
+  goOn,
   strip,
-}: Omit<MovesProps, "move" | "locale"> & { siteName: string; strip: boolean }) {
+}: Omit<MovesProps, "move" | "locale"> & {
+  siteName: string;
+  goOn: { label: string; href: string } | null;
+  strip: boolean;
+}) {
   const { busy, take } = useVisitMoves({ visit, step });
   const next = nextMove(visit.moves);
   const href = `/visits/${visit.id}`;
+  const lead = goOn ? (
+    <LinkButton kind="primary" href={goOn.href} className="min-w-0">
+      <span className="truncate">
+        <SharpText text={goOn.label} />
+      </span>
+    </LinkButton>
+  ) : null;
   if (!strip) {
     return (
       <>
         <LinkButton href={href}>Open visit</LinkButton>
         {next ? (
-          <Button kind="primary" busy={busy !== null} onClick={() => take(next)}>
+          <Button kind={lead ? "secondary" : "primary"} busy={busy !== null} onClick={() => take(next)}>
             {moveLabel(next)}
           </Button>
         ) : null}
+        {lead}
       </>
     );
   }
   return (
     <ActionStrip>
       {next ? <LinkButton href={href}>Open</LinkButton> : null}
-      {next ? (
-        <Button kind="primary" className="min-w-0" busy={busy !== null} onClick={() => take(next)}>
-          <span className="truncate">
-            {moveLabel(next)}: {siteName}
-          </span>
-        </Button>
-      ) : (
-        <LinkButton kind="primary" href={href} className="min-w-0">
-          <span className="truncate">Open {siteName}</span>
-        </LinkButton>
-      )}
+      {lead ??
+        (next ? (
+          <Button kind="primary" className="min-w-0" busy={busy !== null} onClick={() => take(next)}>
+            <span className="truncate">
+              {moveLabel(next)}: {siteName}
+            </span>
+          </Button>
+        ) : (
+          <LinkButton kind="primary" href={href} className="min-w-0">
+            <span className="truncate">Open {siteName}</span>
+          </LinkButton>
+        ))}
     </ActionStrip>
   );
 }

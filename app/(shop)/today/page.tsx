@@ -7,6 +7,7 @@ import { DemoBadge } from "@/components/ui/demo-badge";
 import { Sign } from "@/components/ui/sign";
 import { EmptyState } from "@/components/ui/states";
 import { DayString } from "@/components/visits/day-string";
+import { continuing } from "@/components/visits/progress-words";
 import { hoursOf } from "@/components/visits/time-words";
 import { VisitJobs } from "@/components/visits/visit-jobs";
 import { NextStep } from "@/components/visits/visit-moves";
@@ -16,27 +17,28 @@ import type { Actor } from "@/lib/auth/actor";
 import { addDays, isDay, showWeekday } from "@/lib/dates";
 import { staffActor } from "@/lib/pages/page-actor";
 import { type WorkDay, workDay } from "@/lib/visits/day/service";
+import { getVisitWork, type VisitWork } from "@/lib/visits/progress/service";
 import { inHand } from "@/lib/visits/rules";
-import type { VisitRecord } from "@/lib/visits/schema";
-import { getVisit } from "@/lib/visits/service";
 import { stepVisitAction } from "../visits/actions";
 
 export const metadata: Metadata = { title: "Today" };
 
 export default async function TodayPage({ searchParams }: PageProps<"/today">) {
   const actor = await staffActor();
-  const { date } = await searchParams;
+  const { date, job } = await searchParams;
   const day = await workDay(actor, typeof date === "string" && isDay(date) ? date : undefined);
   const now = new Date().toISOString();
   const handed = day.reach === "own" && day.day === day.today ? inHand(day.visits, now) : undefined;
-  const visit = handed ? await getVisit(actor, handed.id) : null;
+  const work = handed
+    ? await getVisitWork(actor, handed.id, typeof job === "string" ? job : undefined)
+    : null;
   return (
     <Spread
       left={<DayPage day={day} now={now} />}
       right={
         <RightPage className={day.reach === "own" && day.leftOpen.length === 0 ? "max-lg:py-0!" : undefined}>
-          {visit ? <InHand visit={visit} actor={actor} locale={day.locale} /> : null}
-          {visit || day.visits.length > 0 ? null : <NothingToday day={day} actor={actor} />}
+          {work ? <InHand work={work} locale={day.locale} /> : null}
+          {work || day.visits.length > 0 ? null : <NothingToday day={day} actor={actor} />}
           {day.reach === "all" ? <ShopsDay day={day} actor={actor} /> : null}
           <VisitSlips
             title="Left open on past days"
@@ -127,25 +129,39 @@ function groups({ reach, visits }: WorkDay) {
   }));
 }
 
-function InHand({ visit, actor, locale }: { visit: VisitRecord; actor: Actor; locale: string }) {
-  const [first, ...others] = visit.jobs;
-  const title = first ? `${first.instrument}${first.room ? `, ${first.room}` : ""}` : visit.site.name;
+function InHand({ work, locale }: { work: VisitWork; locale: string }) {
+  const { visit, jobs, opened } = work;
+  const job = jobs.find(({ id }) => id === opened?.jobId);
+  const only = jobs.length === 1 ? job : undefined;
+  const next = {
+    visit,
+    siteName: visit.site.name,
+    step: stepVisitAction,
+    goOn: job && opened ? continuing(job, opened) : null,
+  };
   return (
     <>
       <div className="max-lg:hidden">
         <WorkHead
-          title={others.length > 0 ? `${title} and ${others.length} more` : title}
-          summary={`${visit.site.name}, ${hoursOf(visit, locale)}`}
-          actions={<NextStep visit={visit} siteName={visit.site.name} step={stepVisitAction} strip={false} />}
+          title={
+            only ? (
+              <AppLink href={`/instruments/${only.instrumentId}`} className="rounded-sm hover:underline">
+                {[only.instrument, only.room].filter(Boolean).join(", ")}
+              </AppLink>
+            ) : (
+              visit.site.name
+            )
+          }
+          summary={
+            only
+              ? `${visit.site.name}, ${hoursOf(visit, locale)}. ${only.work}.`
+              : `${hoursOf(visit, locale)}, ${jobs.length} instruments`
+          }
+          actions={<NextStep {...next} strip={false} />}
         />
-        <VisitJobs
-          jobs={visit.jobs}
-          canRecord={visit.canChange && may(actor.role, "sheets.change")}
-          locale={locale}
-          timeZone={visit.timeZone}
-        />
+        <VisitJobs work={work} href="/today" locale={locale} named={only !== undefined} />
       </div>
-      <NextStep visit={visit} siteName={visit.site.name} step={stepVisitAction} strip />
+      <NextStep {...next} strip />
     </>
   );
 }

@@ -11,39 +11,44 @@ import { VisitHistory } from "@/components/visits/visit-history";
 import { VisitJobs } from "@/components/visits/visit-jobs";
 import { VisitMoves } from "@/components/visits/visit-moves";
 import { VisitStateWord } from "@/components/visits/visit-state";
-import { may } from "@/lib/auth/access";
 import { idParams } from "@/lib/doors/params";
 import { AppError } from "@/lib/errors";
 import { staffActor } from "@/lib/pages/page-actor";
 import { shopClock } from "@/lib/shop-clock/service";
+import { getVisitWork, type VisitWork } from "@/lib/visits/progress/service";
 import { isOver } from "@/lib/visits/rules";
 import type { VisitRecord } from "@/lib/visits/schema";
-import { getVisit } from "@/lib/visits/service";
 import { moveVisitAction, stepVisitAction } from "../actions";
 
 type Props = PageProps<"/visits/[id]">;
 
-const visitOf = cache(async (id: string): Promise<VisitRecord> => {
+const workOf = cache(async (id: string, job: string | undefined): Promise<VisitWork> => {
   const read = idParams.safeParse({ id });
   if (!read.success) notFound();
   try {
-    return await getVisit(await staffActor(), id);
+    return await getVisitWork(await staffActor(), id, job);
   } catch (error) {
     if (error instanceof AppError && error.code === "not-found") notFound();
     throw error;
   }
 });
 
-export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  const visit = await visitOf((await params).id);
+/** Asked by title and page alike with the same words, so that it is read once. */
+async function workAsked({ params, searchParams }: Props): Promise<VisitWork> {
+  const { job } = await searchParams;
+  return workOf((await params).id, typeof job === "string" ? job : undefined);
+}
+
+export async function generateMetadata(props: Props): Promise<Metadata> {
+  const { visit } = await workAsked(props);
   return { title: `${visit.site.name}, ${dayWithYear(visit.start, "en-GB")}` };
 }
 
-export default async function VisitPage({ params }: Props) {
+export default async function VisitPage(props: Props) {
   const actor = await staffActor();
-  const visit = await visitOf((await params).id);
+  const work = await workAsked(props);
+  const { visit } = work;
   const { locale, demo, timeZone: shopZone } = await shopClock(actor);
-  const canRecord = visit.canChange && may(actor.role, "sheets.change") && visit.state !== "moved";
   return (
     <Spread
       left={<About visit={visit} locale={locale} shopZone={shopZone} />}
@@ -67,7 +72,7 @@ export default async function VisitPage({ params }: Props) {
               </>
             }
           />
-          <VisitJobs jobs={visit.jobs} canRecord={canRecord} locale={locale} timeZone={visit.timeZone} />
+          <VisitJobs work={work} href={`/visits/${visit.id}`} locale={locale} />
           {visit.canChange ? null : (
             <p className="lab mt-4">
               This is another technician’s visit: you can read it. The office can put you on it.
