@@ -50,7 +50,8 @@ export function JobBackground({
         ) : null}
       </section>
       {farFlat || standingNote ? (
-        <div className="grid content-start gap-5">
+        // Where the two stand under each other, the caution comes before the past.
+        <div className="grid content-start gap-5 max-xl:order-first max-lg:text-16">
           {farFlat ? <RaiseCaution /> : null}
           {standingNote ? (
             <Note quoted by="Standing note">

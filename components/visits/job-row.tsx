@@ -37,7 +37,7 @@ export function JobRow({
       className={cx(
         "relative grid min-h-13 grid-cols-[24px_minmax(0,1fr)_auto] items-center gap-x-2 border-b border-hairline py-2",
         "lg:min-h-[50px] lg:grid-cols-[24px_112px_minmax(0,1fr)_auto] xl:grid-cols-[24px_176px_minmax(0,1fr)_auto]",
-        inHand && "-mx-3 bg-brass-wash px-3",
+        inHand && "-mx-3 bg-brass-wash px-3 max-sm:-mx-4 max-sm:px-4",
         href && !inHand && "hover:bg-paper",
       )}
     >
@@ -55,7 +55,7 @@ export function JobRow({
       </span>
       <span
         className={cx(
-          "min-w-0 break-words max-lg:col-start-2 max-lg:col-end-4 max-lg:row-start-2",
+          "min-w-0 break-words max-lg:col-start-2 max-lg:col-end-4 max-lg:row-start-2 max-lg:text-16",
           state === "open" && "text-ink-soft",
         )}
       >
