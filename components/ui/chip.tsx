@@ -88,7 +88,7 @@ export function SelectChip({
         aria-label={name}
         value={chosen ? value : ""}
         onChange={(event) => onChange(event.target.value)}
-        className="absolute inset-0 cursor-pointer opacity-0"
+        className="absolute -inset-px cursor-pointer opacity-0"
       >
         <option value="">{anyLabel}</option>
         {options.map((option) => (

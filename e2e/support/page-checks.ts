@@ -100,7 +100,13 @@ export async function expectTouchTargets(page: Page, what: string) {
     return [...document.querySelectorAll(pressable)].flatMap((element) => {
       if (isHidden(element) || inWords(element)) return [];
       const parts = partsOf(element);
-      const boxes = parts.map((part) => part.getBoundingClientRect());
+      // A link may be laid over its whole card, a button around itself, by what is drawn after it.
+      const { position, width: afterWidth, height: afterHeight } = getComputedStyle(element, "::after");
+      const laidOver =
+        position === "absolute"
+          ? [{ width: Number.parseFloat(afterWidth), height: Number.parseFloat(afterHeight) }]
+          : [];
+      const boxes = [...parts.map((part) => part.getBoundingClientRect()), ...laidOver];
       const large = boxes.some(({ width, height }) => width >= least - 0.5 && height >= least - 0.5);
       if (large || answersAround(element, parts)) return [];
       const { width, height } = element.getBoundingClientRect();
