@@ -101,7 +101,8 @@ function crumbOf({ day, today }: WorkDay): string {
 }
 
 function DayTurner({ day }: { day: WorkDay }) {
-  const turn = "flex h-9 items-center gap-1.5 rounded border border-edge! px-3 hover:bg-cover touch:h-11 touch:min-w-11 touch:justify-center";
+  const turn =
+    "flex h-9 items-center gap-1.5 rounded border border-edge! px-3 hover:bg-cover touch:h-11 touch:min-w-11 touch:justify-center";
   return (
     <nav aria-label="Day" className="flex items-center gap-2" data-no-print>
       <AppLink href={`/today?date=${addDays(day.day, -1)}`} className={turn} aria-label="The day before">
