@@ -50,7 +50,7 @@ export function StringsTable({
   return (
     <div>
       {canChange ? <PasteBox paste={paste} /> : null}
-      <div className="-mx-4 overflow-x-auto px-4 lg:mx-0 lg:px-0">
+      <div className="relative -mx-4 overflow-x-auto px-4 lg:mx-0 lg:px-0">
         <table
           ref={table}
           className="w-full min-w-130 border-t border-edge!"

@@ -124,7 +124,7 @@ export function WorkHead({
         {summary ? <p className="lab mt-1">{summary}</p> : null}
       </div>
       {actions ? (
-        <div className="flex shrink-0 flex-wrap items-center gap-2" data-no-print>
+        <div className="flex flex-wrap items-center gap-2 lg:shrink-0" data-no-print>
           {actions}
         </div>
       ) : null}

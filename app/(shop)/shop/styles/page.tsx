@@ -33,7 +33,10 @@ export default async function StylesPage() {
             className="flex min-h-14 flex-wrap items-center justify-between gap-x-4 border-hairline border-b py-2"
           >
             <span>
-              <AppLink href={`/shop/styles/${style.id}`} className="font-semibold text-16">
+              <AppLink
+                href={`/shop/styles/${style.id}`}
+                className="font-semibold text-16 touch:inline-flex touch:min-h-11 touch:items-center"
+              >
                 {style.name}
               </AppLink>
               <span className="block text-12 text-ink-soft">
@@ -61,7 +64,12 @@ export default async function StylesPage() {
               built in
               {styles.defaultStyle === name ? <StateWord kind="done">the shop's habit</StateWord> : null}
               {styles.canChange && name !== "published" ? (
-                <AppLink href={`/shop/styles/new?from=${name}`}>Start from it</AppLink>
+                <AppLink
+                  href={`/shop/styles/new?from=${name}`}
+                  className="touch:inline-flex touch:min-h-11 touch:items-center"
+                >
+                  Start from it
+                </AppLink>
               ) : null}
             </span>
           </li>
