@@ -19,7 +19,8 @@ export default defineConfig({
     viewport: { width: 1440, height: 900 },
     locale: "en-GB",
     timezoneId: "Europe/London",
-    trace: "retain-on-failure",
+    // What was done and fetched; pictures of every step would cost more than the steps.
+    trace: { mode: "retain-on-failure", screenshots: false, snapshots: false, sources: false },
     screenshot: "only-on-failure",
     launchOptions: {
       executablePath: "/usr/bin/chromium",

@@ -69,8 +69,11 @@ test("a customer is found by a part of the telephone number, however it is space
   await addCustomer(page, customer);
   const digits = customer.phone.replace(/\D/g, "").slice(-6);
   await page.goto("/today");
-  await page.keyboard.press("/");
   const find = page.getByRole("dialog", { name: "Find" });
+  await expect(async () => {
+    await page.keyboard.press("/");
+    await expect(find).toBeVisible({ timeout: 1_000 });
+  }).toPass();
   await find.getByRole("combobox").fill(digits);
   await expect(find.getByRole("option")).toHaveCount(1);
   await expect(find.getByRole("option")).toContainText(customer.name);
