@@ -1,4 +1,4 @@
-import { equalTemperedHz, inharmonicCents, raiseByCents, stretch } from "@/lib/acoustics";
+import { bAtPitch, equalTemperedHz, inharmonicCents, raiseByCents, stretch } from "@/lib/acoustics";
 import type { Chance } from "./random";
 
 /** What is true of an invented instrument's strings, before anybody measures. */
@@ -87,12 +87,11 @@ function heardPartials(chance: Chance, midi: number): number[] {
 
 /** One key as read: the string's own law, its irregularity, and a measuring error of a tenth or two of a cent. */
 export function readKey(chance: Chance, strings: Strings, midi: number, offsetCents: number): RawReading[] {
-  const b = strings.b.get(midi) ?? 0;
+  const inTuneHz = raiseByCents(equalTemperedHz(midi, strings.referenceHz), strings.inTune.get(midi) ?? 0);
+  const f1 = raiseByCents(inTuneHz, offsetCents);
+  // A string let down is slacker, and so stiffer for its tension.
+  const b = bAtPitch(strings.b.get(midi) ?? 0, inTuneHz, f1);
   const own = strings.irregularity.get(midi) ?? [];
-  const f1 = raiseByCents(
-    equalTemperedHz(midi, strings.referenceHz),
-    (strings.inTune.get(midi) ?? 0) + offsetCents,
-  );
   return heardPartials(chance, midi).map((partial) => {
     const cents = inharmonicCents(partial, b) + (own[partial] ?? 0) + 0.15 * chance.normal();
     return { partial, hz: Math.round(raiseByCents(partial * f1, cents) * 1000) / 1000 };

@@ -1,6 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
+import { getInstrument } from "@/lib/instruments/service";
 import { getPlan } from "@/lib/plans/service";
 import { getSheet } from "@/lib/readings/service";
 import { csv } from "./csv";
@@ -14,6 +15,16 @@ function file(name: string, format: "csv" | "json", text: string): ExportedFile 
   return { name: `${name}.${format}`, type, text };
 }
 
+/** "castellan-186-48213": two instruments read on one day keep their files apart. */
+async function instrumentName(actor: Actor, instrumentId: string): Promise<string> {
+  const { maker, model, serial } = await getInstrument(actor, instrumentId);
+  return [maker, model, serial]
+    .join(" ")
+    .toLowerCase()
+    .replace(/[^a-z0-9]+/g, "-")
+    .replace(/^-|-$/g, "");
+}
+
 export async function exportSheet(
   actor: Actor,
   sheetId: string,
@@ -21,7 +32,8 @@ export async function exportSheet(
 ): Promise<ExportedFile> {
   authorise(actor, "export.readings");
   const sheet = await getSheet(actor, sheetId);
-  const name = `${what}-${sheet.stage}-${sheet.takenAt.slice(0, 10)}`;
+  const instrument = await instrumentName(actor, sheet.instrumentId);
+  const name = `${instrument}-${what}-${sheet.stage}-${sheet.takenAt.slice(0, 10)}`;
   if (format === "json") {
     const { canChange: _, ...plain } = sheet;
     return file(name, format, JSON.stringify(what === "readings" ? plain : fitRows(sheet), null, 2));
@@ -40,7 +52,7 @@ export async function exportPlan(
 ): Promise<ExportedFile> {
   authorise(actor, "export.readings");
   const plan = await getPlan(actor, planId);
-  const name = `plan-${plan.createdAt.slice(0, 10)}`;
+  const name = `${await instrumentName(actor, plan.instrumentId)}-plan-${plan.createdAt.slice(0, 10)}`;
   return file(
     name,
     format,

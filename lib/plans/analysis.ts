@@ -27,7 +27,9 @@ export type AnalysisInput = {
  * measure next. Pure: the server's answer and the browser's preview are the same code.
  */
 export function analyse(input: AnalysisInput): { record: AnalysisRecord; keyboard: KeyboardResult } {
-  const { instrument, sheet, notes, style, temperament, referenceHz } = input;
+  const { instrument, sheet, style, temperament, referenceHz } = input;
+  // The compass may have been corrected after a note was read; what lies outside it belongs to no key.
+  const notes = input.notes.filter(({ midi }) => midi >= instrument.firstMidi && midi <= instrument.lastMidi);
   const curve = keyboard({
     observations: observationsOf(notes),
     firstMidi: instrument.firstMidi,

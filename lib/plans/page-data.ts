@@ -11,7 +11,7 @@ export async function sheetInHand(actor: Actor, instrumentId: string, wanted: st
   const clock = await shopClock(actor);
   const { items } = await findSheets(actor, instrumentId, { most: 100, archived: "hide" });
   const read = items.filter((sheet) => sheet.notesRead > 0);
-  const chosen = items.find((sheet) => sheet.id === wanted) ?? read[0] ?? items[0] ?? null;
+  const chosen = items.find((sheet) => sheet.id === wanted) ?? fullest(read) ?? items[0] ?? null;
   const name = (sheet: SheetRow) => sheetName(sheet, clock.locale, clock.timeZone);
   const canRead =
     chosen !== null && may(actor.role, "sheets.change") && (await getSheet(actor, chosen.id)).canChange;
@@ -23,4 +23,16 @@ export async function sheetInHand(actor: Actor, instrumentId: string, wanted: st
     canRead,
     options: items.map((sheet) => ({ id: sheet.id, label: name(sheet) })),
   };
+}
+
+const fortnight = 14 * 86_400_000;
+
+/** The sheet that says most among the newest: three notes read as left do not replace sixteen read as found. */
+function fullest(read: readonly SheetRow[]): SheetRow | undefined {
+  const newest = read[0];
+  if (!newest) return undefined;
+  const since = Date.parse(newest.takenAt) - fortnight;
+  return read
+    .filter((sheet) => Date.parse(sheet.takenAt) >= since)
+    .reduce((best, sheet) => (sheet.notesRead > best.notesRead ? sheet : best), newest);
 }

@@ -8,13 +8,22 @@ export const temperament = z.union([
 
 const weight = z.number().min(0, "A weight is not below zero.").max(100, "At most 100.");
 
-export const registerRule = z.object({
-  lowerPartial: z.int().min(1).max(32),
-  upperPartial: z.int().min(1).max(32),
-  semitones: z.int().min(1).max(60),
-  weights: z.object({ bass: weight, tenor: weight, middle: weight, treble: weight, top: weight }),
-  target: z.enum(["tempered", "just"]).optional(),
-});
+export const registerRule = z
+  .object({
+    lowerPartial: z.int().min(1).max(32),
+    upperPartial: z.int().min(1).max(32),
+    semitones: z.int().min(1).max(60),
+    weights: z.object({ bass: weight, tenor: weight, middle: weight, treble: weight, top: weight }),
+    target: z.enum(["tempered", "just"]).optional(),
+  })
+  .refine(
+    ({ lowerPartial, upperPartial, semitones }) =>
+      Math.abs(1200 * Math.log2(lowerPartial / upperPartial) - 100 * semitones) <= 50,
+    {
+      message: "These partials do not meet at this interval.",
+      path: ["semitones"],
+    },
+  );
 
 export const registerStyle = z.object({
   intervals: z

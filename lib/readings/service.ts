@@ -60,6 +60,15 @@ export function noteRecordOf(row: NoteRow): NoteRecord {
   };
 }
 
+const day = 86_400_000;
+
+/** When the notes were read. A clock may run ahead of ours; a year typed wrongly would head every list. */
+function readingTime(text: string): Date {
+  const at = new Date(text);
+  if (at.getTime() > Date.now() + day) throw invalid({ takenAt: "This is in the future: check the date." });
+  return at;
+}
+
 async function mayChange(tx: Tx, actor: Actor, sheet: { instrumentId: string; jobId: string | null }) {
   if (actor.role === "technician") return technicianIsOn(tx, actor.shopId, actor.memberId, sheet);
   return actor.role === "owner";
@@ -127,7 +136,7 @@ export async function createSheet(actor: Actor, instrumentId: string, input: New
       instrumentId,
       jobId,
       stage: input.stage,
-      takenAt: new Date(input.takenAt),
+      takenAt: readingTime(input.takenAt),
       takenBy: actor.memberId,
       referenceHz: input.referenceHz,
       humidityPercent: input.humidityPercent ?? null,
@@ -148,7 +157,7 @@ export async function changeSheet(actor: Actor, id: string, change: SheetChange)
     await sheetToChange(tx, actor, id);
     const changed = await updateSheet(tx, actor.shopId, id, version, {
       ...values,
-      ...(takenAt === undefined ? {} : { takenAt: new Date(takenAt) }),
+      ...(takenAt === undefined ? {} : { takenAt: readingTime(takenAt) }),
       ...(archived === undefined ? {} : { archivedAt: archived ? new Date() : null }),
     });
     const current = await readSheet(tx, actor, id);

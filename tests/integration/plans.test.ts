@@ -114,7 +114,7 @@ describe("analysis of a sheet", () => {
     const sheet = await createSheet(shop.technician, instrumentId, {
       jobId,
       stage: "as-left",
-      takenAt: "2030-01-01T09:00:00Z",
+      takenAt: new Date(Date.now() + 3_600_000).toISOString(),
       referenceHz: 440,
     });
     expect((await getAnalysis(shop.owner, sheet.id, {})).priorOnly).toBe(true);
@@ -248,7 +248,7 @@ describe("exports", () => {
     expect(type).toContain("text/csv");
     const lines = text.trim().split("\r\n");
     expect(lines).toHaveLength(1 + rows(11).reduce((sum, row) => sum + row.readings.length, 0));
-    expect(lines[0]).toContain("midi,note,string,take,partial,hz,cents");
+    expect(lines[0]).toContain("midi,note,string,take,partial,hz,cents,reference_hz");
     const json = JSON.parse((await exportSheet(shop.office, sheetId, { format: "json", what: "fits" })).text);
     expect(json.map((row: { midi: number }) => row.midi)).toEqual(keysRead);
   });

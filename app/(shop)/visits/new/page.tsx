@@ -7,6 +7,7 @@ import { NewVisitForm } from "@/components/visits/new-visit-form";
 import { SitePicker } from "@/components/visits/site-picker";
 import { scopeOf } from "@/lib/auth/access";
 import { isDay } from "@/lib/dates";
+import { idParams } from "@/lib/doors/params";
 import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import { staffActor } from "@/lib/pages/page-actor";
@@ -74,6 +75,7 @@ async function Book({ asked }: { asked: Asked }) {
 }
 
 async function choicesAt(siteId: string) {
+  if (!idParams.safeParse({ id: siteId }).success) notFound();
   const actor = await staffActor();
   try {
     return await bookingChoices(actor, siteId);
