@@ -15,6 +15,7 @@ import {
   makeShop,
   makeSite,
   makeVisit,
+  owner,
   type TestShop,
 } from "../support/factories";
 import { seededRandom } from "../support/simulated-instrument";
@@ -119,6 +120,37 @@ describe("analysis of a sheet", () => {
     });
     expect((await getAnalysis(shop.owner, sheet.id, {})).priorOnly).toBe(true);
     expect((await getAdvice(shop.owner, instrumentId)).sheetId).toBe(sheet.id);
+  });
+});
+
+describe("a compass corrected after notes were read", () => {
+  it("leaves the notes outside it out, and plans the keys there are", async () => {
+    const sheetId = await sheetWith(shop.technician, 13);
+    await owner()`update instrument set first_midi = 40, last_midi = 80 where shop_id = ${shop.shopId} and id = ${instrumentId}`;
+    try {
+      const analysis = await getAnalysis(shop.owner, sheetId, {});
+      expect(analysis.keys).toHaveLength(41);
+      expect(analysis.keys.filter((key) => key.source === "measured").map((key) => key.midi)).toEqual(
+        keysRead.filter((midi) => midi >= 40 && midi <= 80),
+      );
+    } finally {
+      await owner()`update instrument set first_midi = 21, last_midi = 108 where shop_id = ${shop.shopId} and id = ${instrumentId}`;
+    }
+  });
+});
+
+describe("a sheet's time", () => {
+  it("is not in the future: a wrong year would head every list", async () => {
+    const begun = createSheet(shop.technician, instrumentId, {
+      jobId,
+      stage: "as-found",
+      takenAt: "2096-12-01T10:00:00Z",
+      referenceHz: 440,
+    });
+    await expect(begun).rejects.toMatchObject({
+      code: "invalid",
+      more: { fields: { takenAt: expect.any(String) } },
+    });
   });
 });
 
