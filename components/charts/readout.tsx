@@ -4,17 +4,18 @@ import { Kbd } from "@/components/ui/kbd";
 import { NoteName } from "./note-name";
 
 /**
- * The numbers of the key in hand, under the ribbon. Columns are as wide as they are told, whatever stands in
- * them, so nothing moves while the cursor does.
+ * The numbers of the key in hand, under the ribbon. Columns depend on the width of the page and on what they are
+ * told, never on what stands in them, so nothing moves while the cursor does. Where room is short the hint goes
+ * first, then the cells for the desk, then the words beside the note.
  */
 
 export type ReadoutCell = {
   key: string;
   label: ReactNode;
   value: ReactNode;
-  /** Width on the desk in pixels; the last cell takes what is left when it has none. */
+  /** Width on the desk in pixels, at most; the last cell takes what is left when it has none. */
   width?: number;
-  /** Left out on the phone, where three cells have room. */
+  /** Left out on the phone and on a narrow page, where three cells have room. */
   deskOnly?: boolean;
   /** A size smaller, for words instead of a number. */
   small?: boolean;
@@ -31,30 +32,29 @@ type Props = {
 };
 
 export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
-  const widths = cells.map((cell) => (cell.width ? `${cell.width}px` : "minmax(0,1fr)"));
-  const columns = [`${noteWidth}px`, ...widths, ...(hint ? ["minmax(0,1fr)"] : [])].join(" ");
   const onPhone = cells.filter((cell) => !cell.deskOnly);
   return (
     <div className="@container">
       <div
-        className="grid items-end gap-y-1 border-hairline border-t pt-2 @xl:h-16 @xl:items-center @xl:border-b @xl:pt-0 @xl:[grid-template-columns:var(--desk)] [grid-template-columns:var(--phone)]"
+        className="grid items-end gap-y-1 border-hairline border-t pt-2 [grid-template-columns:var(--phone)] @xl:h-16 @xl:items-center @xl:border-b @xl:pt-0 @xl:[grid-template-columns:var(--page)] @min-[800px]:[grid-template-columns:var(--desk)]"
         style={
           {
-            "--desk": columns,
+            "--page": columnsOf(onPhone, noteWidth, false),
+            "--desk": columnsOf(cells, noteWidth, hint !== undefined),
             "--phone": `64px repeat(${onPhone.length}, minmax(0,1fr))`,
           } as React.CSSProperties
         }
       >
-        <div className="flex items-baseline gap-3">
-          <span className="font-medium font-serif text-28 leading-10 @xl:text-23">
+        <div className="flex min-w-0 items-baseline gap-3 @xl:pr-3">
+          <span className="whitespace-nowrap font-medium font-serif text-28 leading-10 @xl:text-23">
             <NoteName midi={midi} />
           </span>
-          {about && <span className="hidden truncate text-12 text-ink-soft @xl:inline">{about}</span>}
+          {about && <span className="hidden min-w-0 truncate text-12 text-ink-soft @xl:block">{about}</span>}
         </div>
         {cells.map((cell) => (
           <div
             key={cell.key}
-            className={`min-w-0 border-hairline @xl:border-l @xl:pl-4 @xl:not-last:pr-4 ${cell.deskOnly ? "hidden @xl:block" : ""}`}
+            className={`min-w-0 border-hairline @xl:border-l @xl:pl-4 @xl:not-last:pr-4 ${cell.deskOnly ? "hidden @min-[800px]:block" : ""}`}
           >
             <div className="truncate text-12 text-ink-soft">{cell.label}</div>
             <div
@@ -65,7 +65,7 @@ export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
           </div>
         ))}
         {hint && (
-          <div className="hidden items-center justify-end gap-1.5 whitespace-nowrap border-hairline border-l text-12 text-ink-soft @min-[840px]:flex">
+          <div className="hidden items-center justify-end gap-1.5 whitespace-nowrap border-hairline border-l pl-4 text-12 text-ink-soft @min-[880px]:flex">
             {hint}
           </div>
         )}
@@ -73,6 +73,14 @@ export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
       {about && <p className="mt-1 text-12 text-ink-soft @xl:hidden">{about}</p>}
     </div>
   );
+}
+
+/** The hint is as wide as it is; the note's words give way before the numbers do. */
+function columnsOf(cells: readonly ReadoutCell[], noteWidth: number, hint: boolean): string {
+  const fills = hint || cells.some((cell) => !cell.width);
+  const note = fills ? `minmax(96px,${noteWidth}px)` : "minmax(96px,1fr)";
+  const widths = cells.map((cell) => (cell.width ? `minmax(0,${cell.width}px)` : "minmax(0,1fr)"));
+  return [note, ...widths, ...(hint ? ["minmax(max-content,1fr)"] : [])].join(" ");
 }
 
 /** "B × 10⁻⁴", with a raised exponent. */
