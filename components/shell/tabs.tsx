@@ -27,7 +27,10 @@ export function Tabs({
     const strip = list.current;
     const tab = strip?.querySelector<HTMLElement>("[aria-current=page]");
     if (!strip || !tab) return;
-    strip.scrollLeft = tab.offsetLeft - (strip.clientWidth - tab.offsetWidth) / 2;
+    // By boxes: each item is positioned, so the link's own offset is always nought.
+    const outer = strip.getBoundingClientRect();
+    const inner = tab.getBoundingClientRect();
+    strip.scrollLeft += inner.left + inner.width / 2 - (outer.left + outer.width / 2);
   }, [chosen]);
 
   return (

@@ -11,14 +11,19 @@ export function useSlidingStud<E extends HTMLElement>(chosen: string | undefined
   const last = useRef<{ key: string | undefined; x: number; y: number } | null>(null);
 
   useLayoutEffect(() => {
-    const stud = container.current?.querySelector<HTMLElement>("[data-stud]");
-    const origin = container.current?.getBoundingClientRect();
-    if (!stud || !origin) {
+    const list = container.current;
+    const stud = list?.querySelector<HTMLElement>("[data-stud]");
+    if (!stud || !list) {
       last.current = null;
       return;
     }
     const box = stud.getBoundingClientRect();
-    const place = { key: chosen, x: box.left - origin.left, y: box.top - origin.top };
+    const origin = list.getBoundingClientRect();
+    const place = {
+      key: chosen,
+      x: box.left - origin.left + list.scrollLeft,
+      y: box.top - origin.top + list.scrollTop,
+    };
     const before = last.current;
     last.current = place;
     if (!before || before.key === chosen) return;
