@@ -1,6 +1,6 @@
 "use client";
 
-import { type FormEvent, useId, useState } from "react";
+import { type FormEvent, useEffect, useId, useRef, useState } from "react";
 import { SharpText } from "@/components/charts/note-name";
 import { noteText } from "@/components/charts/note-spelling";
 import { Button } from "@/components/ui/button";
@@ -10,13 +10,22 @@ import { keyFromName } from "@/lib/acoustics";
 export function AddNote({
   range,
   onChoose,
+  beginHere = false,
 }: {
   range: { firstMidi: number; lastMidi: number };
+  /** On a sheet with nothing read yet, typing begins here without a click. */
+  beginHere?: boolean;
   onChoose: (midi: number) => void;
 }) {
   const [text, setText] = useState("");
   const [fault, setFault] = useState<string | null>(null);
   const id = useId();
+  const input = useRef<HTMLInputElement>(null);
+
+  useEffect(() => {
+    // Only from nowhere: a place the person has gone to is theirs.
+    if (beginHere && document.activeElement === document.body) input.current?.focus();
+  }, [beginHere]);
 
   function add(event: FormEvent) {
     event.preventDefault();
@@ -39,6 +48,7 @@ export function AddNote({
         Add a note
       </label>
       <input
+        ref={input}
         id={id}
         value={text}
         onChange={(event) => {

@@ -290,7 +290,13 @@ export function ReadingSheet(props: Props) {
               />
             )}
             <div className="mt-3 flex flex-wrap items-center gap-x-5 gap-y-3" data-no-print>
-              {canChange ? <AddNote range={range} onChoose={(midi) => chooseKey?.(midi)} /> : null}
+              {canChange ? (
+                <AddNote
+                  range={range}
+                  onChoose={(midi) => chooseKey?.(midi)}
+                  beginHere={beginAt === null && given.notes.length === 0}
+                />
+              ) : null}
               {canChange ? <KeyWords /> : null}
               <span className="ml-auto flex items-center gap-3">
                 {turn}
