@@ -1,5 +1,13 @@
 import { describe, expect, it } from "vitest";
-import { cursorRings, drawnPoints, makeScene, pointAt, splitAtBreak, tickSide } from "./plot-scene";
+import {
+  cursorRings,
+  drawnPoints,
+  makeScene,
+  pointAt,
+  splitAtBreak,
+  tickLabelRects,
+  tickSide,
+} from "./plot-scene";
 import type { KeyPlot } from "./plot-types";
 
 const range = { firstMidi: 21, lastMidi: 108, breakMidi: 41 };
@@ -75,5 +83,16 @@ describe("one plot at one width", () => {
     const mark = (points: typeof atStart) => scene([{ kind: "marks", mark: "measured", points }], 358);
     expect(tickSide(mark(atStart))).toBe("right");
     expect(tickSide(mark(atEnd))).toBe("left");
+  });
+
+  it("keeps the uppermost number of a phone's axis clear of the legend above the plot", () => {
+    for (const first of [true, false]) {
+      for (const value of [0.5, 2.68, 3.01, 9, 26.8, 90]) {
+        const layers: KeyPlot["layers"] = [{ kind: "curve", points: [{ midi: 60, value }] }];
+        const below = makeScene({ plot: plot(layers), range, width: 358, first, last: false });
+        const tops = tickLabelRects(below, "left").map((rect) => rect.y);
+        expect(Math.min(...tops)).toBeGreaterThanOrEqual(4);
+      }
+    }
   });
 });

@@ -23,6 +23,8 @@ export type Scene = {
 /** From the plotting area of the last plot down to the ribbon. */
 const TO_RIBBON = 12;
 const AXIS_WIDTH = 56;
+/** On a phone the numbers stand on their lines: the uppermost needs this much above it, clear of the legend. */
+const TICK_LABEL_RISE = 16;
 
 export const isCompact = (width: number) => width < 560;
 export const axisWidth = (width: number) => (isCompact(width) ? 0 : AXIS_WIDTH);
@@ -54,7 +56,7 @@ type SceneInput = { plot: KeyPlot; range: KeyRange; width: number; first: boolea
 export function makeScene({ plot, range, width, first, last }: SceneInput): Scene {
   const compact = isCompact(width);
   const left = axisWidth(width);
-  const top = first ? 30 : compact ? 8 : 16;
+  const top = first ? 30 : compact ? TICK_LABEL_RISE + 4 : 16;
   const height = plotHeight(plot, compact);
   const layout = layOutKeys(range, width - left);
   return {
@@ -140,7 +142,7 @@ export function tickLabelRects(scene: Scene, side: "left" | "right"): Rect[] {
     .filter((tick) => tickIsNamed(scene, tick))
     .map((tick) => ({
       x: side === "left" ? area.x : area.x + area.width - width,
-      y: area.y + scale.y(tick.value, area.height) - 16,
+      y: area.y + scale.y(tick.value, area.height) - TICK_LABEL_RISE,
       width,
       height: 14,
     }));
