@@ -25,10 +25,15 @@ export function percentOf(deltaLnB: number): number {
   return 100 * (Math.exp(deltaLnB) - 1);
 }
 
+/** One wire size moves B by about 12 %: a smaller change than this is not a change of wire. */
+const WIRE_CHANGE = 0.08;
+
 export function verdictOf(note: Note): string {
   if (note.verdict === "not-comparable") return reasonWords[note.reason ?? "too-few-matched-partials"];
   if (note.verdict === "unchanged") return verdictWords.unchanged;
-  return (note.deltaLnB ?? 0) > 0 ? "changed: stiffer. Wire changed?" : "changed: less stiff. Wire changed?";
+  const change = percentOf(note.deltaLnB ?? 0);
+  if (Math.abs(change) < 100 * WIRE_CHANGE) return "changed a little: read it again";
+  return change > 0 ? "changed: stiffer. Wire changed?" : "changed: less stiff. Wire changed?";
 }
 
 function measured(side: Side): KeyValue[] {

@@ -131,6 +131,15 @@ function Verdict({
   changed: ComparisonRecord["notes"];
 }) {
   const notComparable = comparison.notes.filter(({ verdict }) => verdict === "not-comparable");
+  if (notComparable.length === comparison.notes.length) {
+    return (
+      <p className="mb-4">
+        <StateWord kind="unsure" wrap>
+          No note can be compared: read the same notes with three or more partials on both visits.
+        </StateWord>
+      </p>
+    );
+  }
   return (
     <ul className="mb-4 grid gap-1">
       {changed.length === 0 ? (
@@ -172,30 +181,26 @@ function PitchByRegister({ comparison: { pitch, humidity } }: { comparison: Comp
           Humidity {fixed(humidity.beforePercent, 0)} % then, {fixed(humidity.afterPercent, 0)} % now.
         </p>
       ) : null}
-      <table className="ledger mt-2">
+      <table className="mt-2 w-full border-collapse">
         <thead>
-          <tr>
-            <th scope="col">Register</th>
-            <th scope="col" className="r">
-              Notes
+          <tr className="h-8 border-b border-edge! text-right align-bottom text-12 text-ink-soft [&>*]:pb-1.5 [&>*]:font-medium [&>*:not(:first-child)]:pl-3">
+            <th scope="col" className="text-left">
+              Register
             </th>
-            <th scope="col" className="r">
-              Moved, cents
-            </th>
-            <th scope="col" className="r">
-              ± 95 %
-            </th>
+            <th scope="col">Notes</th>
+            <th scope="col">Moved, cents</th>
+            <th scope="col">± 95 %</th>
           </tr>
         </thead>
         <tbody>
           {pitch.map(({ register, notes, meanCents, sigmaCents }) => (
-            <tr key={register}>
-              <th scope="row">{registers[register]}</th>
-              <td className="r">{notes}</td>
-              <td className="r">{signedCents(meanCents)}</td>
-              <td className="r">
-                {sigmaCents === null ? "–" : fixed(studentQuantile(0.05, notes - 1) * sigmaCents, 1)}
-              </td>
+            <tr key={register} className="h-9 border-b border-hairline [&>td]:pl-3 [&>td]:text-right">
+              <th scope="row" className="text-left font-normal">
+                {registers[register]}
+              </th>
+              <td>{notes}</td>
+              <td>{signedCents(meanCents)}</td>
+              <td>{sigmaCents === null ? "–" : fixed(studentQuantile(0.05, notes - 1) * sigmaCents, 1)}</td>
             </tr>
           ))}
         </tbody>
