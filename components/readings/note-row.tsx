@@ -82,6 +82,7 @@ export const NoteRow = memo(function NoteRow(props: Props) {
               describedBy={open && cellLook(row, partial, live) !== "plain" ? wordsId : undefined}
               tabStop={partial === tabPartial}
               readOnly={!canChange}
+              figures={measures.figures}
               onType={onType}
             />
             {index === 0 && !open ? (

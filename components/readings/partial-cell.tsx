@@ -15,7 +15,17 @@ export type PartialCellProps = {
   tabStop: boolean;
   readOnly: boolean;
   big?: boolean;
+  /** The size at which six figures fit the table's column. */
+  figures?: Figures;
   onType: ChangeEventHandler<HTMLInputElement>;
+};
+
+export type Figures = 12 | 14 | 16;
+
+const sizes: Record<Figures, { six: string; more: string }> = {
+  12: { six: "pr-0.5 text-12", more: "pr-0.5 text-[11px]" },
+  14: { six: "pr-1 text-14", more: "pr-1 text-12" },
+  16: { six: "pr-1 text-16", more: "pr-1 text-14" },
 };
 
 const looks: Record<CellLook, string> = {
@@ -28,6 +38,8 @@ const looks: Record<CellLook, string> = {
 /** One reading, always ready to be typed over. */
 export const PartialCell = memo(function PartialCell(props: PartialCellProps) {
   const { prefix, rowKey, partial, text, look, label, describedBy, tabStop, readOnly, big, onType } = props;
+  const { figures = 14 } = props;
+  const size = sizes[figures][text.length > 6 ? "more" : "six"];
   return (
     <input
       id={cellId(prefix, rowKey, partial)}
@@ -48,7 +60,7 @@ export const PartialCell = memo(function PartialCell(props: PartialCellProps) {
       aria-describedby={describedBy}
       className={cx(
         "block w-full rounded bg-transparent text-right outline-none focus:bg-sheet focus:text-ink focus:no-underline focus:shadow-[inset_0_0_0_2px_var(--brass)]",
-        big ? "h-11 pr-4 text-16" : "h-7.5 pr-1.5 pl-0 text-14 max-lg:h-11 max-lg:pr-1 max-lg:text-16",
+        big ? "h-11 pr-4 text-16" : cx("h-7.5 pl-0 max-lg:h-11", size),
         looks[look],
       )}
     />

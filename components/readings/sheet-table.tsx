@@ -6,20 +6,41 @@ import { PowerOfTen } from "@/components/ui/glyphs";
 import type { ReadingUnit } from "@/lib/readings/typed-number";
 import { NoteRow } from "./note-row";
 import type { OpenNoteActions } from "./open-note";
+import type { Figures } from "./partial-cell";
 import { emptyRow, type Row, rowKey } from "./sheet-row";
 import { shownRows } from "./sheet-state";
 import type { useCells } from "./use-cells";
 import type { ReadingSheetState } from "./use-reading-sheet";
 
-export type TableMeasures = { wide: boolean; note: number; cell: number; b: number; fit: number };
+export type TableMeasures = {
+  wide: boolean;
+  note: number;
+  cell: number;
+  figures: Figures;
+  b: number;
+  fit: number;
+};
 
-/** The sheet as drawn from 800 pixels up; below, B and the quality stand on a line under the partials. */
+/** Six tabular figures with their point are 45.6, 53.2 and 60.8 px wide at 12, 14 and 16 px. */
+const ROOM: ReadonlyArray<{ figures: Figures; cell: number }> = [
+  { figures: 16, cell: 66 },
+  { figures: 14, cell: 58 },
+  { figures: 12, cell: 50 },
+];
+
+/**
+ * From 840 pixels up B and the quality stand in the row, below on a line under the partials. A column is
+ * never narrower than its figures: where the page is, the table is moved sideways.
+ */
 export function tableMeasures(width: number, columns: number): TableMeasures {
-  if (width >= 800) {
-    return { wide: true, note: 72, cell: 56, b: 120, fit: width - 72 - 56 * columns - 120 };
+  if (width >= 840) {
+    const [note, cell, b] = [60, 58, 104];
+    return { wide: true, note, cell, figures: 14, b, fit: width - note - cell * columns - b };
   }
   const note = width < 560 ? 44 : 56;
-  return { wide: false, note, cell: Math.min(72, Math.floor((width - note) / columns)), b: 0, fit: 0 };
+  const cell = Math.max(50, Math.min(72, Math.floor((width - note) / columns)));
+  const figures = ROOM.find((room) => cell >= room.cell)?.figures ?? 12;
+  return { wide: false, note, cell, figures, b: 0, fit: 0 };
 }
 
 export type Suggestion = { midi: number; b: number | null };
@@ -52,7 +73,7 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
   const tabPartial = cells.inHand?.partial ?? columns[0] ?? 1;
 
   return (
-    <div ref={box}>
+    <div ref={box} className="overflow-x-auto">
       <table
         className="w-full table-fixed border-collapse"
         onFocus={cells.onFocus}
@@ -77,7 +98,7 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
               Note
             </th>
             {columns.map((partial) => (
-              <th key={partial} scope="col" className="pr-1.5 text-right max-lg:pr-1">
+              <th key={partial} scope="col" className="pr-1 text-right">
                 <span className="sr-only">Partial </span>
                 {partial}
               </th>
