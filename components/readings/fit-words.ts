@@ -1,6 +1,8 @@
 import { fixed, signed } from "@/components/charts/format";
 import { noteText } from "@/components/charts/note-spelling";
+import { flagWords } from "@/components/plans/analysis-plots";
 import type { FitWarning, Rejection } from "@/lib/acoustics/types";
+import type { AnalysisRecord } from "@/lib/plans/schema";
 import type { AskAbout } from "@/lib/readings/rules";
 
 const cents = (value: number) => `${fixed(Math.abs(value), 0)} cents`;
@@ -61,6 +63,12 @@ export function questionWords({ partial, awayCents, expectedHz, fitsPartial }: A
     what: `Partial ${partial} is ${cents(awayCents)} ${awayCents > 0 ? "above" : "below"} where it is expected`,
     why: `(${expectedHz.toFixed(2)} Hz).${fitsPartial === null ? "" : ` It looks like partial ${fitsPartial}.`}`,
   };
+}
+
+/** "does not belong, 25 % above its neighbours": of a note whose B is not its neighbours'. */
+export function notBelongingWords(key: AnalysisRecord["keys"][number]): string {
+  const why = flagWords(key).replace(/\.$/, "");
+  return `does not belong, ${why.charAt(0).toLowerCase()}${why.slice(1)}`;
 }
 
 export function stringWords(string: number | "all"): string {

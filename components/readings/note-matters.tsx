@@ -9,7 +9,7 @@ import { questionWords, rejectionWords } from "./fit-words";
 import type { Live } from "./live-fit";
 import { NoteConflict } from "./note-conflict";
 import type { RowState } from "./row-state";
-import { cellFault, cellHz, partialsOf, type Row, type RowKey, rowKey } from "./sheet-row";
+import { cellFault, cellHz, partialsOf, type Row, type RowKey, rowKey, type Trouble } from "./sheet-row";
 
 export type NoteMattersActions = {
   judge: (key: RowKey, partial: number, keep: boolean) => void;
@@ -42,22 +42,7 @@ export function NoteMatters(props: Props) {
       {row.trouble ? (
         <Matter
           what={state.sentence}
-          actions={
-            row.trouble.kind === "signed-out" ? (
-              <>
-                <LinkButton href="/sign-in" target="_blank" size="small">
-                  Sign in in a new tab
-                </LinkButton>
-                <Button size="small" onClick={() => actions.again(key)}>
-                  Save again
-                </Button>
-              </>
-            ) : row.trouble.kind === "stale" ? null : (
-              <Button size="small" onClick={() => actions.again(key)}>
-                Save again
-              </Button>
-            )
-          }
+          actions={<TroubleActions trouble={row.trouble} again={() => actions.again(key)} />}
         />
       ) : state.kind === "attention" && state.word === "empty" ? (
         <Matter what={state.sentence} />
@@ -86,6 +71,23 @@ export function NoteMatters(props: Props) {
             />
           ))}
     </div>
+  );
+}
+
+/** What helps a failed save on; two versions are settled where both are shown. */
+export function TroubleActions({ trouble, again }: { trouble: Trouble; again: () => void }) {
+  if (trouble.kind === "stale") return null;
+  return (
+    <>
+      {trouble.kind === "signed-out" ? (
+        <LinkButton href="/sign-in" target="_blank" size="small">
+          Sign in in a new tab
+        </LinkButton>
+      ) : null}
+      <Button size="small" onClick={again}>
+        Save again
+      </Button>
+    </>
   );
 }
 

@@ -14,6 +14,7 @@ import type { Live } from "./live-fit";
 import { OpenNote, type OpenNoteActions } from "./open-note";
 import { PartialCell } from "./partial-cell";
 import { QualityWord } from "./quality-word";
+import { hasRowNotes, RowNotes } from "./row-notes";
 import { type RowState, rowState } from "./row-state";
 import { type Row, rowKey } from "./sheet-row";
 import type { TableMeasures } from "./sheet-table";
@@ -32,6 +33,8 @@ type Props = {
   canChange: boolean;
   /** Set on the row that is only proposed. */
   predictedB?: number | null;
+  /** Why the note does not belong, or null. */
+  flag: string | null;
   actions: OpenNoteActions;
   onType: ChangeEventHandler<HTMLInputElement>;
 };
@@ -39,12 +42,13 @@ type Props = {
 /** One note: its partials with the lane of their residuals, B and quality; opened, what the fit says of them. */
 export const NoteRow = memo(function NoteRow(props: Props) {
   const { prefix, row, live, open, inHand, tabPartial, unit, referenceHz, columns, measures } = props;
-  const { canChange, predictedB, actions, onType } = props;
+  const { canChange, predictedB, flag, actions, onType } = props;
   const key = rowKey(row.place);
   const proposed = predictedB !== undefined;
   const state = rowState(row, live, referenceHz);
   const words = placeWords(row.place);
   const points = residualPoints(live.fit);
+  const noted = hasRowNotes({ row, flag, open });
   const wordsId = `${prefix}${key}-words`;
 
   return (
@@ -52,7 +56,7 @@ export const NoteRow = memo(function NoteRow(props: Props) {
       <tr
         className={cx(
           "group/row h-11 align-top max-lg:h-16",
-          open ? "bg-brass-wash" : measures.wide && "border-b border-hairline",
+          open ? "bg-brass-wash" : measures.wide && !noted && "border-b border-hairline",
           open && "[&>*:first-child]:shadow-[inset_3px_0_0_var(--brass-fill)]",
         )}
       >
@@ -121,7 +125,9 @@ export const NoteRow = memo(function NoteRow(props: Props) {
         <tr
           className={cx(
             "h-6",
-            open ? "bg-brass-wash shadow-[inset_3px_0_0_var(--brass-fill)]" : "border-b border-hairline",
+            open
+              ? "bg-brass-wash shadow-[inset_3px_0_0_var(--brass-fill)]"
+              : !noted && "border-b border-hairline",
           )}
         >
           <td colSpan={columns.length + 2} className="pr-1.5 pb-1.5 text-right text-12">
@@ -132,6 +138,21 @@ export const NoteRow = memo(function NoteRow(props: Props) {
           </td>
         </tr>
       )}
+      {noted ? (
+        <tr
+          className={
+            open ? "bg-brass-wash shadow-[inset_3px_0_0_var(--brass-fill)]" : "border-b border-hairline"
+          }
+        >
+          <td
+            colSpan={columns.length + (measures.wide ? 3 : 2)}
+            className={cx("pb-2", measures.wide ? "pr-3" : "pr-1.5")}
+            style={{ paddingLeft: measures.note }}
+          >
+            <RowNotes row={row} state={state} flag={flag} open={open} actions={actions} />
+          </td>
+        </tr>
+      ) : null}
       {open ? (
         <tr className="border-b border-edge! bg-brass-wash shadow-[inset_3px_0_0_var(--brass-fill)] motion-safe:animate-[row-open_120ms_ease-out]">
           <td colSpan={columns.length + (measures.wide ? 3 : 2)} className="p-0">

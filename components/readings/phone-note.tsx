@@ -9,6 +9,7 @@ import { Button } from "@/components/ui/button";
 import { cx } from "@/components/ui/class-names";
 import { PowerOfTen } from "@/components/ui/glyphs";
 import { Sign } from "@/components/ui/sign";
+import { StateWord } from "@/components/ui/state-word";
 import type { ReadingUnit } from "@/lib/readings/typed-number";
 import { cellLook, cellText, halfB, residualPoints } from "./cell-look";
 import { expectedHalfCents } from "./expected-scatter";
@@ -29,6 +30,8 @@ type Props = {
   prefix: string;
   row: Row;
   live: Live;
+  /** Why the note does not belong, or null. */
+  flag: string | null;
   state: RowState;
   order: readonly RowKey[];
   columns: readonly number[];
@@ -49,7 +52,7 @@ const GRID = "grid grid-cols-[32px_96px_minmax(0,160px)_1fr] items-center";
 /** One note a page, as the phone shows the sheet: big rows, and the next step under the thumb. */
 export function PhoneNote(props: Props) {
   const { prefix, row, live, state, order, columns, unit, referenceHz, canChange, cells, actions } = props;
-  const { back, kept, ribbon, tools, onGo } = props;
+  const { flag, back, kept, ribbon, tools, onGo } = props;
   const key = rowKey(row.place);
   const index = order.indexOf(key);
   const points = new Map(residualPoints(live.fit).map((point) => [point.partial, point]));
@@ -152,6 +155,11 @@ export function PhoneNote(props: Props) {
       </div>
 
       <div className="mt-3 grid gap-3">
+        {flag === null ? null : (
+          <StateWord kind="attention" wrap className="text-16">
+            {flag}
+          </StateWord>
+        )}
         <NoteMatters
           wholeOnly
           big

@@ -3,6 +3,7 @@
 import { useEffect, useMemo, useRef, useState } from "react";
 import type { KeyMark } from "@/components/charts/keyboard-ribbon";
 import { NoteName } from "@/components/charts/note-name";
+import { flaggedKeys } from "@/components/plans/analysis-plots";
 import { useAnalysis } from "@/components/plans/use-analysis";
 import { RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { Button, LinkButton } from "@/components/ui/button";
@@ -16,6 +17,7 @@ import { stageWords } from "@/lib/readings/stage-words";
 import type { ReadingUnit } from "@/lib/readings/typed-number";
 import { AddNote } from "./add-note";
 import { Announcer } from "./announcer";
+import { notBelongingWords } from "./fit-words";
 import { KeptWord } from "./kept-word";
 import type { OpenNoteActions } from "./open-note";
 import { PasteDialog } from "./paste-dialog";
@@ -160,11 +162,11 @@ export function ReadingSheet(props: Props) {
   const openRow = state.open ? (state.rows[state.open] ?? null) : null;
   const openLive = openRow && liveOf(openRow);
   const openState = openRow && openLive && rowState(openRow, openLive, state.referenceHz);
-  const flagged = new Map(
-    analysis?.keys.filter(({ flag }) => flag !== null).map((key) => [key.midi, key]) ?? [],
+  const flags = new Map(
+    (analysis ? flaggedKeys(analysis) : []).map((key) => [key.midi, notBelongingWords(key)]),
   );
   const marks: KeyMark[] = [
-    ...[...readKeys].map((midi): KeyMark => ({ midi, kind: flagged.has(midi) ? "flagged" : "measured" })),
+    ...[...readKeys].map((midi): KeyMark => ({ midi, kind: flags.has(midi) ? "flagged" : "measured" })),
     ...(canChange ? (steps?.chain.slice(0, 3) ?? []) : [])
       .filter(({ midi }) => !readKeys.has(midi))
       .map(({ midi }): KeyMark => ({ midi, kind: "next" })),
@@ -286,6 +288,7 @@ export function ReadingSheet(props: Props) {
                 unit={state.unit}
                 canChange={canChange}
                 suggestion={suggestion}
+                flags={flags}
                 actions={actions}
               />
             )}
@@ -317,6 +320,7 @@ export function ReadingSheet(props: Props) {
                 prefix="p-"
                 row={phoneRow}
                 live={phoneLive}
+                flag={flags.get(phoneRow.place.midi) ?? null}
                 state={rowState(phoneRow, phoneLive, state.referenceHz)}
                 order={order}
                 columns={columns}

@@ -54,10 +54,13 @@ type Props = {
   canChange: boolean;
   /** The note to read next, ready to be typed into. */
   suggestion: Suggestion | null;
+  /** Why notes do not belong, by key. */
+  flags: ReadonlyMap<number, string>;
   actions: OpenNoteActions;
 };
 
-export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, suggestion, actions }: Props) {
+export function SheetTable(props: Props) {
+  const { prefix, sheet, cells, columns, unit, canChange, suggestion, flags, actions } = props;
   const box = useRef<HTMLDivElement>(null);
   const width = useWidth(box, 856);
   const measures = tableMeasures(width, columns.length);
@@ -135,6 +138,7 @@ export function SheetTable({ prefix, sheet, cells, columns, unit, canChange, sug
                 measures={measures}
                 canChange={canChange}
                 predictedB={predictedB}
+                flag={predictedB === undefined ? (flags.get(row.place.midi) ?? null) : null}
                 actions={actions}
                 onType={cells.onType}
               />

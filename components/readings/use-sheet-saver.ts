@@ -233,6 +233,11 @@ function useTryAgain(state: SheetState, dispatch: Dispatch<SheetAction>): void {
       for (const key of signedOut.split(" ")) dispatch({ type: "again", key });
     };
     document.addEventListener("visibilitychange", again);
-    return () => document.removeEventListener("visibilitychange", again);
+    // Signing in in another window leaves this one in sight all the while.
+    window.addEventListener("focus", again);
+    return () => {
+      document.removeEventListener("visibilitychange", again);
+      window.removeEventListener("focus", again);
+    };
   }, [signedOut, dispatch]);
 }
