@@ -108,12 +108,15 @@ function NoteRow({
           <NoteName midi={row.midi} />
         </th>
         <td className="pr-3">
-          <CheckMark
-            aria-label={`${spoken}: wound`}
-            checked={row.wound}
-            disabled={!canChange}
-            onChange={(event) => type(row.midi, { wound: event.target.checked })}
-          />
+          {/* biome-ignore lint/a11y/noLabelWithoutControl: it only makes the box as large as a thumb; the box has its own words */}
+          <label className="inline-flex items-center justify-center touch:size-11">
+            <CheckMark
+              aria-label={`${spoken}: wound`}
+              checked={row.wound}
+              disabled={!canChange}
+              onChange={(event) => type(row.midi, { wound: event.target.checked })}
+            />
+          </label>
         </td>
         {stringColumns.map(({ field, label, unit }) => (
           <td key={field} className="pl-2">

@@ -29,7 +29,10 @@ export function JobBackground({
             entries={history.slice(0, inSight).map((entry) => ({
               ...entry,
               date: entry.visitId ? (
-                <AppLink href={`/visits/${entry.visitId}`} className="hover:underline">
+                <AppLink
+                  href={`/visits/${entry.visitId}`}
+                  className="hover:underline touch:inline-flex touch:min-h-11 touch:items-center"
+                >
                   {showDay(entry.day, locale)}
                 </AppLink>
               ) : (
@@ -43,7 +46,7 @@ export function JobBackground({
         {history.length > inSight ? (
           <AppLink
             href={`/instruments/${instrumentId}/visits`}
-            className="link mt-2 inline-flex min-h-6 items-center touch:min-h-11"
+            className="link mt-2 inline-flex min-h-6 items-center touch:min-h-11 touch:min-w-11"
           >
             All {history.length}
           </AppLink>

@@ -41,7 +41,10 @@ export function VisitJobs({
           {named ? null : (
             <div className="mb-3 flex flex-wrap items-baseline gap-x-3">
               <h3>
-                <AppLink href={`/instruments/${job.instrumentId}`} className="rounded-sm hover:underline">
+                <AppLink
+                  href={`/instruments/${job.instrumentId}`}
+                  className="rounded-sm hover:underline touch:inline-flex touch:min-h-11 touch:items-center"
+                >
                   {job.instrument}
                 </AppLink>
               </h3>
