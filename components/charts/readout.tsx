@@ -36,12 +36,12 @@ export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
   return (
     <div className="@container">
       <div
-        className="grid items-end gap-y-1 border-hairline border-t pt-2 [grid-template-columns:var(--phone)] @xl:h-16 @xl:items-center @xl:border-b @xl:pt-0 @xl:[grid-template-columns:var(--page)] @min-[800px]:[grid-template-columns:var(--desk)]"
+        className="grid items-end gap-y-1 border-hairline border-t pt-2 [grid-template-columns:var(--phone)] @xl:h-16 @xl:items-center @xl:border-b @xl:pt-0 @xl:[grid-template-columns:var(--page)] @min-[50rem]:[grid-template-columns:var(--desk)]"
         style={
           {
             "--page": columnsOf(onPhone, noteWidth, false),
             "--desk": columnsOf(cells, noteWidth, hint !== undefined),
-            "--phone": `64px repeat(${onPhone.length}, minmax(0,1fr))`,
+            "--phone": phoneColumns(onPhone.length),
           } as React.CSSProperties
         }
       >
@@ -54,18 +54,18 @@ export function Readout({ midi, about, cells, hint, noteWidth = 200 }: Props) {
         {cells.map((cell) => (
           <div
             key={cell.key}
-            className={`min-w-0 border-hairline @xl:border-l @xl:pl-4 @xl:not-last:pr-4 ${cell.deskOnly ? "hidden @min-[800px]:block" : ""}`}
+            className={`min-w-0 border-hairline @xl:border-l @xl:pl-4 @xl:not-last:pr-4 ${cell.deskOnly ? "hidden @min-[50rem]:block" : ""}`}
           >
-            <div className="truncate text-12 text-ink-soft">{cell.label}</div>
+            <div className="pr-1 text-12 text-ink-soft @xl:truncate @xl:pr-0">{cell.label}</div>
             <div
-              className={`truncate font-medium proportional-nums @xl:tabular-nums ${cell.small ? "text-14" : "text-16"}`}
+              className={`truncate font-medium proportional-nums @xl:tabular-nums ${cell.small ? "text-14" : "text-14 @sm:text-16"}`}
             >
               {cell.value}
             </div>
           </div>
         ))}
         {hint && (
-          <div className="hidden items-center justify-end gap-1.5 whitespace-nowrap border-hairline border-l pl-4 text-12 text-ink-soft @min-[880px]:flex">
+          <div className="hidden items-center justify-end gap-1.5 whitespace-nowrap border-hairline border-l pl-4 text-12 text-ink-soft @min-[55rem]:flex">
             {hint}
           </div>
         )}
@@ -81,6 +81,11 @@ function columnsOf(cells: readonly ReadoutCell[], noteWidth: number, hint: boole
   const note = fills ? `minmax(96px,${noteWidth}px)` : "minmax(96px,1fr)";
   const widths = cells.map((cell) => (cell.width ? `minmax(0,${cell.width}px)` : "minmax(0,1fr)"));
   return [note, ...widths, ...(hint ? ["minmax(max-content,1fr)"] : [])].join(" ");
+}
+
+/** The first number is the longest. */
+function phoneColumns(count: number): string {
+  return ["60px", "minmax(0,1.08fr)", ...Array.from({ length: count - 1 }, () => "minmax(0,1fr)")].join(" ");
 }
 
 /** "B × 10⁻⁴", with a raised exponent. */

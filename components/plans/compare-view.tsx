@@ -79,7 +79,7 @@ export function CompareView({ comparison, instrument, sheets, names }: Props) {
               key: "seen",
               label: "Smallest change seen",
               value: inHand?.detectableChange == null ? "–" : `${fixed(100 * inHand.detectableChange, 0)} %`,
-              width: 160,
+              width: 176,
             },
           ]}
           hint={<CursorHint />}
