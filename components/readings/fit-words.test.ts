@@ -7,10 +7,12 @@ const key = (b: number, expectedB: number | null, z: number | null): AnalysisRec
   b,
   bLow: b * 0.9,
   bHigh: b * 1.1,
+  lnBSigma: 0.05,
   source: "measured",
   flag: "does-not-belong",
   expectedB,
   z,
+  detectableChange: null,
 });
 
 it("says by how much a note that does not belong stands off its neighbours", () => {
