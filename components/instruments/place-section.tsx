@@ -42,7 +42,10 @@ export function PlaceSection({
             {
               name: "Site",
               value: (
-                <AppLink className="link" href={`/sites/${place.siteId}`}>
+                <AppLink
+                  className="link inline-flex items-center touch:min-h-11"
+                  href={`/sites/${place.siteId}`}
+                >
                   {place.siteName}
                 </AppLink>
               ),
@@ -50,7 +53,10 @@ export function PlaceSection({
             {
               name: "Owner",
               value: (
-                <AppLink className="link" href={`/customers/${place.ownerId}`}>
+                <AppLink
+                  className="link inline-flex items-center touch:min-h-11"
+                  href={`/customers/${place.ownerId}`}
+                >
                   {place.ownerName}
                 </AppLink>
               ),
