@@ -18,11 +18,24 @@ export async function expectAccessible(page: Page, what = page.url(), rules?: re
   expect(found, what).toEqual([]);
 }
 
+/** Colours pass slowly from one theme to the other; half-way they are those of neither. */
+async function changeTheme(page: Page, colorScheme: "light" | "dark") {
+  await page.emulateMedia({ colorScheme });
+  await page.evaluate(async (wanted) => {
+    const nextFrame = () => new Promise(requestAnimationFrame);
+    while (!matchMedia(`(prefers-color-scheme: ${wanted})`).matches) await nextFrame();
+    await nextFrame();
+    await nextFrame();
+    const passing = document.getAnimations().filter((animation) => animation instanceof CSSTransition);
+    await Promise.allSettled(passing.map(({ finished }) => finished));
+  }, colorScheme);
+}
+
 /** In both themes as the device asks for them. */
 export async function expectAccessibleInBothThemes(page: Page, what: string) {
-  await page.emulateMedia({ colorScheme: "light" });
+  await changeTheme(page, "light");
   await expectAccessible(page, `${what}, light`);
-  await page.emulateMedia({ colorScheme: "dark" });
+  await changeTheme(page, "dark");
   await expectAccessible(page, `${what}, dark`, ofColour);
 }
 
