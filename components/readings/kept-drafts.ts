@@ -23,12 +23,12 @@ export function readKeptDrafts(sheetId: string): KeptDraft[] {
 
 function isDraft(kept: unknown): kept is KeptDraft {
   if (typeof kept !== "object" || kept === null) return false;
-  const { place, version, draft } = kept as Partial<KeptDraft>;
+  const { place, version, draft, sent } = kept as Partial<KeptDraft>;
   return (
     typeof place?.midi === "number" &&
     typeof place.take === "number" &&
     typeof version === "number" &&
     typeof draft?.cells === "object" &&
-    [draft.kept, draft.dropped, draft.confirmed].every(Array.isArray)
+    [draft.kept, draft.dropped, draft.confirmed, sent ?? []].every(Array.isArray)
   );
 }

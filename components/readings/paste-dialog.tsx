@@ -17,6 +17,7 @@ type Props = {
   onText: (text: string) => void;
   unit: ReadingUnit;
   range: { firstMidi: number; lastMidi: number };
+  referenceHz: number;
   /** Keys that have readings already: a pasted row takes their place. */
   taken: ReadonlySet<number>;
   onClose: () => void;
@@ -24,11 +25,12 @@ type Props = {
 };
 
 /** Whole rows from a spreadsheet. What does not fit stays here, with its lines named, until it is mended. */
-export function PasteDialog({ open, text, onText, unit: viewUnit, range, taken, onClose, onRows }: Props) {
+export function PasteDialog(props: Props) {
+  const { open, text, onText, unit: viewUnit, range, referenceHz, taken, onClose, onRows } = props;
   const [unit, setUnit] = useState<ReadingUnit>(viewUnit);
   const [tried, setTried] = useState(false);
   const given = text.trim() !== "";
-  const pasted = given ? readPasted(text, { unit, ...range }) : null;
+  const pasted = given ? readPasted(text, { unit, referenceHz, ...range }) : null;
   const sound = pasted !== null && pasted.faults.length === 0;
 
   return (
@@ -53,8 +55,8 @@ export function PasteDialog({ open, text, onText, unit: viewUnit, range, taken, 
       }
     >
       <p className="mt-1 mb-3 text-ink-soft">
-        One line a note: its name or MIDI number, then partials 1, 2, 3 and so on. A first line that numbers
-        the partials is used; empty cells are skipped.
+        One line a note: its name or MIDI number, then partials 1, 2, 3 and so on, divided by tabs, semicolons
+        or blanks. A first line that numbers the partials is used; empty cells are skipped.
       </p>
       <Segmented
         label="The numbers are"

@@ -105,7 +105,7 @@ export function ReadingSheet(props: Props) {
   }
 
   function enterText(text: string) {
-    const pasted = readPasted(text, { unit: state.unit, ...range });
+    const pasted = readPasted(text, { unit: state.unit, referenceHz: state.referenceHz, ...range });
     if (pasted.faults.length === 0) return enterRows(pasted.rows, state.unit);
     setPasteText(text);
     setPasting(true);
@@ -387,6 +387,7 @@ export function ReadingSheet(props: Props) {
               onText={setPasteText}
               unit={state.unit}
               range={range}
+              referenceHz={state.referenceHz}
               taken={readKeys}
               onClose={() => setPasting(false)}
               onRows={enterRows}

@@ -5,18 +5,20 @@ import {
   type Draft,
   draftOf,
   isChanged,
+  isOwnWrite,
   type Place,
   type Row,
   type RowKey,
   rowKey,
   rowOf,
+  type Sent,
   sameHz,
   savedDraft,
   type Trouble,
 } from "./sheet-row";
 import { type SheetState, type Step, withChange, withHistory, withoutRow, withRow } from "./sheet-rows";
 
-export type KeptDraft = { place: Place; version: number; draft: Draft };
+export type KeptDraft = { place: Place; version: number; draft: Draft; sent?: readonly Sent[] };
 
 /** The server's answer counts; what was typed while it was on its way stays, on top of it. */
 export function afterSave(row: Row, record: NoteRecord, referenceHz: number): Partial<Row> {
@@ -34,6 +36,7 @@ export function afterSave(row: Row, record: NoteRecord, referenceHz: number): Pa
     saved: record,
     version: record.version,
     sending: false,
+    sent: [],
     alone: false,
     trouble: null,
     faults: {},
@@ -45,7 +48,13 @@ export function afterRemoval(state: SheetState, key: RowKey): SheetState {
   if (!row) return state;
   if (row.removed) return withoutRow(state, key);
   // Undone while it was on its way: written again as a new note.
-  return withChange(state, key, () => ({ saved: null, version: 0, sending: false, trouble: null }));
+  return withChange(state, key, () => ({
+    saved: null,
+    version: 0,
+    sending: false,
+    sent: [],
+    trouble: null,
+  }));
 }
 
 export function afterFailure(
@@ -53,6 +62,11 @@ export function afterFailure(
   trouble: Trouble,
   faults: Readonly<Record<number, string>>,
 ): Partial<Row> {
+  if (trouble.kind === "stale" && isOwnWrite(row.sent, trouble.theirs)) {
+    // Our own earlier sending, of which we never heard: no clash, and what is typed goes on top of it.
+    const { theirs } = trouble;
+    return { saved: theirs, version: theirs?.version ?? 0, sending: false, trouble: null, faults: {} };
+  }
   const known = Object.fromEntries(Object.entries(faults).filter(([partial]) => row.cells[Number(partial)]));
   const atCells = Object.keys(known).length > 0;
   return {
@@ -68,7 +82,7 @@ export function conflictSettled(state: SheetState, key: RowKey, take: "theirs" |
   const row = state.rows[key];
   if (row?.trouble?.kind !== "stale") return state;
   const { theirs } = row.trouble;
-  const now = { saved: theirs, version: theirs?.version ?? 0, trouble: null, faults: {} };
+  const now = { saved: theirs, version: theirs?.version ?? 0, sent: [], trouble: null, faults: {} };
   if (take === "mine") return withChange(state, key, () => now);
   const step: Step = [{ key, before: draftOf(row) }];
   if (!theirs) return withHistory(withoutRow(state, key), step);
@@ -95,7 +109,7 @@ export function received(state: SheetState, notes: readonly NoteRecord[]): Sheet
 }
 
 export function restored(state: SheetState, drafts: readonly KeptDraft[]): SheetState {
-  return drafts.reduce((now, { place, version, draft }) => {
+  return drafts.reduce((now, { place, version, draft, sent = [] }) => {
     const cells = Object.fromEntries(
       Object.entries(draft.cells).map(([name, cell]): [string, Cell] => [
         name,
@@ -103,7 +117,13 @@ export function restored(state: SheetState, drafts: readonly KeptDraft[]): Sheet
       ]),
     );
     const key = rowKey(place);
-    const after = withChange(withRow(now, place), key, () => ({ ...draft, cells, version }));
+    const after = withChange(withRow(now, place), key, ({ saved }) => ({
+      ...draft,
+      cells,
+      sent,
+      // What was on its way when the page went has arrived: the draft stands on top of it.
+      version: saved && isOwnWrite(sent, saved) ? saved.version : version,
+    }));
     const row = after.rows[key];
     // It was saved after all, before the page went away.
     return row && isChanged(row, now.referenceHz) ? after : now;

@@ -28,12 +28,19 @@ export type Trouble =
   | { kind: "stale"; theirs: NoteRecord | null }
   | { kind: "refused"; message: string };
 
+/** What was once sent of a row; nothing that is still being typed. */
+export type Sent =
+  | { removed: true }
+  | { removed: false; readings: readonly HeldReading[]; kept: readonly number[]; dropped: readonly number[] };
+
 export type Row = Draft & {
   place: Place;
   saved: NoteRecord | null;
   /** The server's version this draft began from; 0 for a note that was not there. */
   version: number;
   sending: boolean;
+  /** Sent since the server last answered: any of these may have arrived without our hearing of it. */
+  sent: readonly Sent[];
   /** To be sent by itself, because together with others it was refused for one of them. */
   alone: boolean;
   trouble: Trouble | null;
@@ -56,6 +63,7 @@ export function emptyRow(place: Place): Row {
     saved: null,
     version: 0,
     sending: false,
+    sent: [],
     alone: false,
     trouble: null,
     faults: {},
@@ -191,4 +199,30 @@ export function inputOf(row: Row, referenceHz: number): NoteInput {
     confirmed: confirmedOf(row, referenceHz),
     version: row.version,
   };
+}
+
+const MOST_SENT = 20;
+
+/** The row as it goes out now, beside what went out before and was not answered. */
+export function withSent(row: Row, referenceHz: number): readonly Sent[] {
+  const { kept, dropped } = inputOf(row, referenceHz);
+  const now: Sent = row.removed
+    ? { removed: true }
+    : { removed: false, readings: heldReadings(row, referenceHz), kept, dropped };
+  return [...row.sent, now].slice(-MOST_SENT);
+}
+
+/** Whether what stands on the server is what we ourselves sent, its answer lost by a reload or a broken line. */
+export function isOwnWrite(sent: readonly Sent[], stored: NoteRecord | null): boolean {
+  return sent.some((one) => {
+    if (one.removed || !stored) return one.removed && !stored;
+    return (
+      sameSet(one.kept, stored.kept) &&
+      sameSet(one.dropped, stored.dropped) &&
+      one.readings.length === stored.readings.length &&
+      stored.readings.every(({ partial, hz }) =>
+        one.readings.some((reading) => reading.partial === partial && sameHz(reading.hz, hz)),
+      )
+    );
+  });
 }

@@ -233,6 +233,53 @@ describe("two people at one note", () => {
   });
 });
 
+describe("one's own write behind a reload", () => {
+  const sending = run(withG3, type(5, "7.2"), settle, { type: "sending", keys: [g3] });
+  const arrived = note(55, [2.8, 3.9, 4.7, 4.9, 7.2], 2);
+  const reload = (before: SheetState, notes: readonly NoteRecord[]) =>
+    run(sheetState(440, notes), { type: "restore", drafts: keptDrafts(before) });
+
+  it("that has arrived carries what was typed after it", () => {
+    const state = run(reload(run(sending, type(6, "9.9"), settle), [arrived]), type(7, "12.0"), settle);
+    expect(inputOf(row(state), 440)).toMatchObject({ version: 2 });
+    expect(inputOf(row(state), 440).readings).toHaveLength(7);
+  });
+
+  it("that arrives only after the page was read anew is no clash", () => {
+    const state = run(
+      reload(sending, [note(55, [2.8, 3.9, 4.7, 4.9])]),
+      type(6, "9.9"),
+      settle,
+      { type: "sending", keys: [g3] },
+      { type: "failed", key: g3, trouble: { kind: "stale", theirs: arrived } },
+    );
+    expect(row(state)).toMatchObject({ trouble: null, sending: false, version: 2 });
+    expect(text(state, 6)).toBe("9.9");
+    expect(isChanged(row(state), 440)).toBe(true);
+  });
+
+  it("is told from somebody else's, before a reload and after", () => {
+    const theirs = note(55, [2.8, 3.9, 4.7, 4.9, 8.8], 2);
+    const stale: SheetAction = { type: "failed", key: g3, trouble: { kind: "stale", theirs } };
+    expect(row(run(sending, stale)).trouble).toMatchObject({ kind: "stale" });
+    const state = reload(sending, [theirs]);
+    expect(inputOf(row(state), 440).version).toBe(1);
+    expect(row(run(state, { type: "sending", keys: [g3] }, stale)).trouble).toMatchObject({ kind: "stale" });
+  });
+
+  it("is told apart when it was a removal", () => {
+    const removing = run(withG3, { type: "remove", key: g3 }, { type: "sending", keys: [g3] });
+    const back = run(
+      removing,
+      { type: "failed", key: g3, trouble: { kind: "network" } },
+      { type: "undo", key: g3 },
+      { type: "sending", keys: [g3] },
+      { type: "failed", key: g3, trouble: { kind: "stale", theirs: null } },
+    );
+    expect(row(back)).toMatchObject({ trouble: null, version: 0, saved: null, removed: false });
+  });
+});
+
 describe("undo", () => {
   it("takes back numbers, decisions and whole pastes, one step each", () => {
     const pasted: SheetAction = {

@@ -19,6 +19,7 @@ import {
   rowKey,
   rowOf,
   type Trouble,
+  withSent,
 } from "./sheet-row";
 import { changed, type SheetState, withChange, without, withoutRow, withRow } from "./sheet-rows";
 import { entered, judged, reverted, settled, typed, undone, type Values } from "./sheet-typing";
@@ -93,7 +94,12 @@ export function sheetReducer(state: SheetState, action: SheetAction): SheetState
       return undone(settled(state), action.key);
     case "sending":
       return action.keys.reduce(
-        (after, key) => withChange(after, key, () => ({ sending: true, trouble: null })),
+        (after, key) =>
+          withChange(after, key, (row) => ({
+            sending: true,
+            sent: withSent(row, state.referenceHz),
+            trouble: null,
+          })),
         state,
       );
     case "saved":
@@ -121,7 +127,7 @@ export function sheetReducer(state: SheetState, action: SheetAction): SheetState
 export function keptDrafts(state: SheetState): KeptDraft[] {
   return Object.values(state.rows)
     .filter((row) => isChanged(row, state.referenceHz))
-    .map((row) => ({ place: row.place, version: row.version, draft: draftOf(row) }));
+    .map((row) => ({ place: row.place, version: row.version, draft: draftOf(row), sent: row.sent }));
 }
 
 export function shownRows(state: SheetState): Row[] {

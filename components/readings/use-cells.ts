@@ -178,10 +178,23 @@ export function useCells(options: Options) {
       const cell = cellOf(event.target);
       if (!cell) return;
       const text = event.clipboardData.getData("text/plain");
-      const pasted = readCellPaste(text);
+      const { state, dispatch, onRows } = newest.current;
+      const pasted = readCellPaste(text, {
+        unit: state.unit,
+        midi: placeOf(cell.key).midi,
+        partial: cell.partial,
+        referenceHz: state.referenceHz,
+      });
       if (pasted.kind === "one") return;
       event.preventDefault();
-      const { state, dispatch, onRows } = newest.current;
+      if (pasted.kind === "unclear") {
+        showMessage({
+          kind: "attention",
+          text: "Nothing was entered: a number can be read two ways.",
+          detail: pasted.message,
+        });
+        return;
+      }
       if (pasted.kind === "rows") return onRows(text);
       const values = pasted.texts
         .map((typed, index) => ({ partial: cell.partial + index, text: typed }))

@@ -61,11 +61,15 @@ export function useSheetSaver({ sheetId, state, dispatch, liveOf }: Saver): void
     (row: Row, error: unknown, path?: string) => {
       const { trouble, faults } = failureOf(error, partialsOf(row), path);
       dispatch({ type: "failed", key: rowKey(row.place), trouble, faults });
+      if (trouble.kind === "stale" && !row.removed) {
+        if (trouble.theirs) answered([trouble.theirs]);
+        else answered([], rowKey(row.place));
+      }
       if (trouble.kind === "refused" && row.removed) {
         showMessage({ kind: "attention", text: "The note was not removed.", detail: trouble.message });
       }
     },
-    [dispatch],
+    [dispatch, answered],
   );
 
   const begin = (rows: readonly Row[]) => {
@@ -134,21 +138,31 @@ export function useSheetSaver({ sheetId, state, dispatch, liveOf }: Saver): void
     },
   });
 
+  // A row as it was sent: any change to it makes another. The page hears of a sending with the next drawing, and
+  // another row's clock may run out before.
+  const gone = useRef(new WeakSet<Row>());
   const newest = useRef({ state, liveOf });
   newest.current = { state, liveOf };
 
   const send = useCallback(
     (key: RowKey) => {
       const { state: now, liveOf: live } = newest.current;
-      const ready = Object.values(now.rows).filter((row) => isReady(row, live(row), now));
+      const ready = Object.values(now.rows).filter(
+        (row) => !gone.current.has(row) && isReady(row, live(row), now),
+      );
       const row = ready.find(({ place }) => rowKey(place) === key);
       if (!row) return;
-      if (row.removed) return removeOne(row);
+      if (row.removed) {
+        gone.current.add(row);
+        return removeOne(row);
+      }
       const together = ready.filter(
         (one) => !one.removed && !one.alone && (one === row || rowKey(one.place) !== now.open),
       );
-      if (row.alone || together.length < 2) saveOne(row);
-      else saveMany(together.slice(0, MOST_AT_ONCE));
+      const going = row.alone || together.length < 2 ? [row] : together.slice(0, MOST_AT_ONCE);
+      for (const one of going) gone.current.add(one);
+      if (going.length === 1) saveOne(row);
+      else saveMany(going);
     },
     [removeOne, saveOne, saveMany],
   );

@@ -35,6 +35,12 @@ describe("rows from a spreadsheet", () => {
     ["quotes", '"A4","440.1","880.9"'],
     ["carriage returns", "A4,440.1,880.9\r\n"],
     ["a MIDI number", "69\t440.1\t880.9"],
+    ["a MIDI number and semicolons", "69;440,1;880,9"],
+    ["blanks with decimal commas", "A4 440,1 880,9"],
+    ["blanks round commas", "A4, 440.1, 880.9"],
+    ["tabs and blanks", "A4\t440,1 880,9"],
+    ["a blank after the note, then tabs", "A4  440,1\t880,9"],
+    ["semicolons and tabs", "A4;440,1\t880,9"],
   ])("reads %s", (_, text) => {
     const { rows, faults } = readPasted(text, hz);
     expect(faults).toEqual([]);
@@ -106,19 +112,80 @@ describe("rows from a spreadsheet", () => {
   });
 });
 
+describe("thousands in a paste", () => {
+  const faultsOf = (text: string, options: Parameters<typeof readPasted>[1] = hz) =>
+    readPasted(text, options).faults;
+
+  it("are never guessed: a number that can be read two ways is asked about with its line", () => {
+    expect(faultsOf("A4;440,1\nC6;1.046;2.093")).toEqual([
+      { line: 2, message: "C6, partial 1: “1.046”. This could be 1046 or 1.046. Write 1046 or 1.0460." },
+      { line: 2, message: "C6, partial 2: “2.093”. This could be 2093 or 2.093. Write 2093 or 2.0930." },
+    ]);
+    expect(faultsOf("C6\t1.046", hz)).toHaveLength(1);
+    expect(faultsOf("A4\t-1.046\t2", piano)[0]?.message).toContain("−1046 or −1.046");
+    expect(faultsOf("C6\t1046\t1.046,5\t1,046.5\t1.0460", hz)).toEqual([]);
+  });
+
+  it("are no question where the other numbers, or the size, show what the mark stands for", () => {
+    expect(faultsOf("A4\t440.123\t880.456", hz)).toEqual([]);
+    expect(faultsOf("A0\t27.512\t55.101", hz)).toEqual([]);
+    expect(faultsOf("A4\t1.046\t2.1", piano)).toEqual([]);
+    expect(faultsOf("A4\t1.046\t12.345", piano)).toEqual([]);
+    expect(faultsOf("A4\t1.046\t2,1", piano)).toHaveLength(1);
+  });
+
+  it("divided by blanks are one number in a cell of their key, and asked about elsewhere", () => {
+    expect(readPasted("C6\t1 046,5\t2 093", hz)).toMatchObject({
+      faults: [],
+      rows: [{ values: [{ text: "1 046,5" }, { text: "2 093" }] }],
+    });
+    expect(faultsOf("F2\t88 176\t265", hz)[0]?.message).toContain("one number or several");
+    expect(faultsOf("C6 1 046,5 2 093", hz)[0]).toMatchObject({
+      line: 1,
+      message: expect.stringContaining("“1 046,5” could be one number or two."),
+    });
+    expect(faultsOf("A1 55 110 165", hz)).toEqual([]);
+  });
+
+  it("do not make decimal commas of commas between readings", () => {
+    expect(faultsOf("A4,12,1,13,5", piano)[0]?.message).toContain("semicolons or tabs");
+    expect(faultsOf("A4,12,13,14", piano)).toEqual([]);
+    expect(faultsOf("A4,12,1,13,5\nB4,1,2,3", piano)).toEqual([]);
+    expect(readCellPaste("12,1,13,5", { ...cell, unit: "cents" }).kind).toBe("unclear");
+  });
+});
+
+const cell = { unit: "hz", midi: 69, partial: 1, referenceHz: 440 } as const;
+
 describe("a paste into a cell", () => {
   it.each([["784.2"], ["784,2"], ["1 046.5\n"], ["abc"], [""]])("leaves %j to the cell", (text) => {
-    expect(readCellPaste(text)).toEqual({ kind: "one" });
+    expect(readCellPaste(text, cell)).toEqual({ kind: "one" });
   });
 
   it("takes a row or a column of numbers for this cell and those after it", () => {
-    expect(readCellPaste("1,5\t\t3,5")).toEqual({ kind: "run", texts: ["1,5", "", "3,5"] });
-    expect(readCellPaste("1.5\n2.5\n3.5\n")).toEqual({ kind: "run", texts: ["1.5", "2.5", "3.5"] });
+    expect(readCellPaste("1,5\t\t3,5", cell)).toEqual({ kind: "run", texts: ["1,5", "", "3,5"] });
+    expect(readCellPaste("1.5\n2.5\n3.5\n", cell)).toEqual({ kind: "run", texts: ["1.5", "2.5", "3.5"] });
   });
 
   it("takes lines with notes for rows", () => {
-    expect(readCellPaste("A4\t1\t2")).toEqual({ kind: "rows" });
-    expect(readCellPaste("A4\t1\nB4\t2")).toEqual({ kind: "rows" });
-    expect(readCellPaste("1\t2\n3\t4")).toEqual({ kind: "rows" });
+    expect(readCellPaste("A4\t1\t2", cell)).toEqual({ kind: "rows" });
+    expect(readCellPaste("A4\t1\nB4\t2", cell)).toEqual({ kind: "rows" });
+    expect(readCellPaste("1\t2\n3\t4", cell)).toEqual({ kind: "rows" });
+  });
+  it("takes decimal commas divided by semicolons or blanks for a run", () => {
+    expect(readCellPaste("440,1;880,9", cell)).toEqual({ kind: "run", texts: ["440,1", "880,9"] });
+    expect(readCellPaste("440,1 880,9", cell)).toEqual({ kind: "run", texts: ["440,1", "880,9"] });
+  });
+
+  it("takes a MIDI number before frequencies of its key for a row", () => {
+    expect(readCellPaste("69;440,1;880,9", cell)).toEqual({ kind: "rows" });
+    expect(readCellPaste("12;440,1;880,9", cell)).toEqual({ kind: "run", texts: ["12", "440,1", "880,9"] });
+  });
+
+  it("enters nothing of a run in which a number can be read two ways", () => {
+    expect(readCellPaste("1.046\t2.093", { ...cell, midi: 84 })).toMatchObject({
+      kind: "unclear",
+      message: expect.stringContaining("1046 or 1.046"),
+    });
   });
 });
