@@ -84,6 +84,13 @@ export function SheetAbout(props: Props) {
         ]}
       />
       {sheet.remarks ? <Note>{sheet.remarks}</Note> : null}
+      {sheet.canChange ? (
+        <p className="-mt-4">
+          <AppLink className="link link-alone" href={`/instruments/${instrument.id}/sheets/${sheet.id}/edit`}>
+            Change the circumstances
+          </AppLink>
+        </p>
+      ) : null}
       <PageSection
         title="Notes read"
         aside={`${notesRead} of ${instrument.lastMidi - instrument.firstMidi + 1}`}

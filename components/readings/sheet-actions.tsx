@@ -1,18 +1,20 @@
 "use client";
 
 import { useState } from "react";
-import { Button } from "@/components/ui/button";
+import { Button, LinkButton } from "@/components/ui/button";
 import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
 import type { ActionResult } from "@/lib/doors/action-result";
 
 type Change = (input: unknown) => Promise<ActionResult<{ version: number }>>;
 
-/** Archiving a sheet takes it out of sight, and is taken back as easily. */
+/** The way to a sheet's circumstances; and archiving, which takes it out of sight and is taken back as easily. */
 export function SheetActions({
   sheet,
+  editHref,
   change,
 }: {
   sheet: { id: string; version: number; archived: boolean };
+  editHref: string;
   change: Change;
 }) {
   const [busy, setBusy] = useState(false);
@@ -43,8 +45,13 @@ export function SheetActions({
   }
 
   return (
-    <Button kind="quiet" busy={busy} onClick={() => setArchived(!sheet.archived)}>
-      {sheet.archived ? "Restore sheet" : "Archive sheet"}
-    </Button>
+    <>
+      <LinkButton kind="quiet" href={editHref}>
+        Circumstances
+      </LinkButton>
+      <Button kind="quiet" busy={busy} onClick={() => setArchived(!sheet.archived)}>
+        {sheet.archived ? "Restore sheet" : "Archive sheet"}
+      </Button>
+    </>
   );
 }

@@ -47,7 +47,7 @@ export type SheetAction =
   | { type: "failed"; key: RowKey; trouble: Trouble; faults?: Readonly<Record<number, string>> }
   | { type: "again"; key: RowKey; alone?: boolean }
   | { type: "settle-conflict"; key: RowKey; take: "theirs" | "mine" }
-  | { type: "received"; notes: readonly NoteRecord[] }
+  | { type: "received"; notes: readonly NoteRecord[]; referenceHz?: number }
   | { type: "restore"; drafts: readonly KeptDraft[] };
 
 export function sheetState(referenceHz: number, notes: readonly NoteRecord[]): SheetState {
@@ -117,7 +117,7 @@ export function sheetReducer(state: SheetState, action: SheetAction): SheetState
     case "settle-conflict":
       return conflictSettled(state, action.key, action.take);
     case "received":
-      return received(state, action.notes);
+      return received({ ...state, referenceHz: action.referenceHz ?? state.referenceHz }, action.notes);
     case "restore":
       return restored(state, action.drafts);
   }

@@ -29,7 +29,10 @@ export function useReadingSheet(given: SheetRecord, range: KeyRange) {
   useEffect(() => {
     client.setQueryData(readingKeys.sheet(given.id), given);
   }, [client, given]);
-  useEffect(() => dispatch({ type: "received", notes: sheet.notes }), [sheet]);
+  useEffect(
+    () => dispatch({ type: "received", notes: sheet.notes, referenceHz: sheet.referenceHz }),
+    [sheet],
+  );
 
   const notes = useSavedNotes(state.rows);
   const around = useMemo<Around>(

@@ -74,6 +74,7 @@ export async function insertSheet(
     referenceHz: number;
     humidityPercent: number | null;
     temperatureC: number | null;
+    remarks: string | null;
   },
 ): Promise<boolean> {
   const rows = await db
@@ -92,6 +93,8 @@ export async function updateSheet(
   values: Partial<{
     stage: Stage;
     takenAt: Date;
+    referenceHz: number;
+    jobId: string | null;
     humidityPercent: number | null;
     temperatureC: number | null;
     remarks: string | null;

@@ -44,6 +44,10 @@ export const allPages: Record<string, Visited> = {
     "office",
     ({ instrumentId }) => `/instruments/${instrumentId}/record`,
   ),
+  "/(shop)/instruments/[id]/sheets/[sheetId]/edit/page": staff(
+    "owner",
+    ({ instrumentId, sheetId }) => `/instruments/${instrumentId}/sheets/${sheetId}/edit`,
+  ),
   "/(shop)/instruments/[id]/sheets/new/page": staff(
     "technician",
     ({ instrumentId }) => `/instruments/${instrumentId}/sheets/new`,

@@ -83,6 +83,19 @@ export function fitNote({
   }
 }
 
+/** The note as it is when its cents are to be counted from another reference: frequencies move, and it is fitted anew. */
+export function movedNote(note: NoteRow, fromHz: number, toHz: number): NoteValues {
+  const values = {
+    partials: note.partials,
+    hz: note.hz.map((hz) => (hz * toHz) / fromHz),
+    sigmaCents: note.sigmaCents,
+    kept: note.kept,
+    dropped: note.dropped,
+  };
+  const fitInput = fitInputOf({ ...values, midi: note.midi, referenceHz: toHz });
+  return { ...values, fit: fit(fitInput), fitVersion: COMPUTATION_VERSION };
+}
+
 function field(input: NoteInput, partial: number): "hz" | "cents" {
   return input.readings.find((reading) => reading.partial === partial)?.cents === undefined ? "hz" : "cents";
 }

@@ -21,15 +21,20 @@ export const newSheet = z.object({
     .min(-30, "Between −30 and 60 °C.")
     .max(60, "Between −30 and 60 °C.")
     .nullish(),
+  remarks: z.string().max(5000, "At most 5000 characters.").nullish(),
 });
 
 export const sheetChange = z.object({
   version: z.int().positive(),
   stage: z.enum(stages).optional(),
   takenAt: z.iso.datetime({ offset: true }).optional(),
+  referenceHz: newSheet.shape.referenceHz.optional(),
+  /** What of the readings stays when the reference pitch changes: their frequencies, or the cents they were typed as. */
+  readingsKeep: z.enum(["hz", "cents"]).optional(),
+  jobId: newSheet.shape.jobId,
   humidityPercent: newSheet.shape.humidityPercent,
   temperatureC: newSheet.shape.temperatureC,
-  remarks: z.string().max(5000).nullish(),
+  remarks: newSheet.shape.remarks,
   archived: z.boolean().optional(),
 });
 

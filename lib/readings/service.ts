@@ -22,7 +22,7 @@ import { authorise } from "@/lib/auth/authorise";
 import { AppError, invalid, notFound, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import type { ListPage } from "@/lib/pages/list-query";
-import { fitNote } from "./fit-note";
+import { fitNote, movedNote } from "./fit-note";
 import { stringName, stringNumber } from "./rules";
 import type {
   NewSheet,
@@ -116,21 +116,26 @@ export async function getSheet(actor: Actor, id: string): Promise<SheetRecord> {
   return withShop(actor, (tx) => readSheet(tx, actor, id));
 }
 
+/** A sheet is of one of the instrument's jobs or of none, and the actor may write it there. */
+async function checkJob(tx: Tx, actor: Actor, instrumentId: string, jobId: string | null): Promise<void> {
+  if (jobId && !(await jobIsOfInstrument(tx, actor.shopId, jobId, instrumentId))) {
+    throw invalid({ jobId: "This job is not one of this instrument's." });
+  }
+  if (!(await mayChange(tx, actor, { instrumentId, jobId }))) {
+    throw new AppError(
+      "forbidden",
+      "You are not on a visit to this instrument. Plan one, or ask the office.",
+    );
+  }
+}
+
 export async function createSheet(actor: Actor, instrumentId: string, input: NewSheet): Promise<SheetRecord> {
   authorise(actor, "sheets.change");
   const id = input.id ?? newId();
   return withShop(actor, async (tx) => {
     if (!(await instrumentForReadings(tx, actor.shopId, instrumentId))) throw notFound("instrument");
     const jobId = input.jobId ?? null;
-    if (jobId && !(await jobIsOfInstrument(tx, actor.shopId, jobId, instrumentId))) {
-      throw invalid({ jobId: "This job is not one of this instrument's." });
-    }
-    if (!(await mayChange(tx, actor, { instrumentId, jobId }))) {
-      throw new AppError(
-        "forbidden",
-        "You are not on a visit to this instrument. Plan one, or ask the office.",
-      );
-    }
+    await checkJob(tx, actor, instrumentId, jobId);
     const made = await insertSheet(tx, actor.shopId, {
       id,
       instrumentId,
@@ -141,6 +146,7 @@ export async function createSheet(actor: Actor, instrumentId: string, input: New
       referenceHz: input.referenceHz,
       humidityPercent: input.humidityPercent ?? null,
       temperatureC: input.temperatureC ?? null,
+      remarks: input.remarks?.trim() || null,
     });
     const sheet = await sheetById(tx, actor.shopId, id);
     if (!made && sheet?.instrumentId !== instrumentId) {
@@ -152,18 +158,32 @@ export async function createSheet(actor: Actor, instrumentId: string, input: New
 
 export async function changeSheet(actor: Actor, id: string, change: SheetChange): Promise<SheetRecord> {
   authorise(actor, "sheets.change");
-  const { version, archived, takenAt, ...values } = change;
+  const { version, archived, takenAt, readingsKeep, ...values } = change;
   return withShop(actor, async (tx) => {
-    await sheetToChange(tx, actor, id);
+    const before = await sheetToChange(tx, actor, id);
+    if (values.jobId !== undefined && values.jobId !== before.jobId) {
+      await checkJob(tx, actor, before.instrumentId, values.jobId);
+    }
     const changed = await updateSheet(tx, actor.shopId, id, version, {
       ...values,
       ...(takenAt === undefined ? {} : { takenAt: readingTime(takenAt) }),
       ...(archived === undefined ? {} : { archivedAt: archived ? new Date() : null }),
     });
-    const current = await readSheet(tx, actor, id);
-    if (!changed) throw stale("reading sheet", current);
-    return current;
+    if (!changed) throw stale("reading sheet", await readSheet(tx, actor, id));
+    const { referenceHz } = values;
+    if (readingsKeep === "cents" && referenceHz !== undefined && referenceHz !== before.referenceHz) {
+      await moveNotes(tx, actor, id, before.referenceHz, referenceHz);
+    }
+    return readSheet(tx, actor, id);
   });
+}
+
+async function moveNotes(tx: Tx, actor: Actor, sheetId: string, fromHz: number, toHz: number): Promise<void> {
+  for (const { midi, string, take } of await notesOfSheet(tx, actor.shopId, sheetId)) {
+    const place: NotePlace = { sheetId, midi, string, take };
+    const note = await noteForUpdate(tx, actor.shopId, place);
+    if (note) await updateNote(tx, actor.shopId, place, note.version, movedNote(note, fromHz, toHz));
+  }
 }
 
 export async function getNotes(

@@ -4,7 +4,6 @@ import { WorkHead } from "@/components/shell/spread";
 import { LinkButton } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/states";
 import { may } from "@/lib/auth/access";
-import { showWallTime } from "@/lib/dates";
 import { findVisitsOf } from "@/lib/instruments/history/service";
 import { staffActor } from "@/lib/pages/page-actor";
 import { stages } from "@/lib/readings/schema";
@@ -12,6 +11,7 @@ import { shopClock } from "@/lib/shop-clock/service";
 import { wallTimeOf } from "@/lib/wall-time";
 import { instrumentOf } from "../../instrument-of";
 import { createSheetAction } from "../actions";
+import { sheetJobs } from "../sheet-jobs";
 
 export const metadata: Metadata = { title: "New reading sheet" };
 
@@ -47,10 +47,7 @@ export default async function NewSheetPage({ params, searchParams }: Props) {
         referenceHz={instrument.referenceHz}
         timeZone={clock.timeZone}
         now={wallTimeOf(new Date(), clock.timeZone)}
-        jobs={visits.slice(0, 20).map(({ jobId, startsLocal, work }) => ({
-          id: jobId,
-          label: [showWallTime(startsLocal, clock.locale), work].filter(Boolean).join(", "),
-        }))}
+        jobs={sheetJobs(visits, clock.locale, chosen?.jobId ?? null)}
         jobId={chosen?.jobId ?? null}
         stage={stages.find((one) => one === stage) ?? "as-found"}
         action={createSheetAction}

@@ -56,6 +56,7 @@ export default async function ReadingSheetPage({ params, searchParams }: Props) 
         sheet.canChange ? (
           <SheetActions
             sheet={{ id: sheet.id, version: sheet.version, archived: sheet.archivedAt !== null }}
+            editHref={`/instruments/${id}/sheets/${sheet.id}/edit`}
             change={changeSheetAction}
           />
         ) : null
