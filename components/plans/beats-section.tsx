@@ -20,7 +20,8 @@ export function BeatsSection({ analysis }: { analysis: AnalysisRecord }) {
     <section aria-labelledby="beats-heading" className="mt-8">
       <h3 id="beats-heading">Beats</h3>
       <p className="lab mt-1">
-        Beats per second where the partials coincide: + wide, − narrow. From the plan and the B of each key.
+        Beats per second where the partials coincide: + wide, − narrow. From the plan and the B of each key;
+        of a note that does not belong, the B its neighbours foretell.
       </p>
       <Evenness evenness={analysis.evenness} />
       <Select
@@ -60,7 +61,7 @@ const risingWords: Record<string, string> = {
 
 function Evenness({ evenness }: { evenness: AnalysisRecord["evenness"] }) {
   return (
-    <ul className="mt-3 grid gap-1">
+    <ul className="mt-3 grid gap-1" aria-label="Evenness over the temperament octaves, by the lower key">
       {evenness.intervals.map(({ name, roughness, reversals, rates }) => {
         const uneven = reversals.length > 0 || roughness > audibleRoughness;
         const first = rates[0];
@@ -69,6 +70,9 @@ function Evenness({ evenness }: { evenness: AnalysisRecord["evenness"] }) {
           <li key={name} className="flex flex-wrap items-baseline gap-x-2">
             <StateWord kind={uneven ? "partial" : "done"} wrap>
               {risingWords[name] ?? name} {uneven ? "rise unevenly" : "rise evenly"}
+              {first && last ? (
+                <SharpText text={` from ${noteText(first.lowerMidi)} to ${noteText(last.lowerMidi)}`} />
+              ) : null}
             </StateWord>
             <span className="text-ink-soft">
               {first && last

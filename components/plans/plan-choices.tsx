@@ -1,20 +1,13 @@
 "use client";
 
-import { useState } from "react";
+import { useEffect, useRef, useState } from "react";
 import { Select } from "@/components/forms/select";
 import { NumberInput } from "@/components/forms/text-input";
 import type { Temperament } from "@/lib/acoustics/types";
 import type { PlanChoices } from "@/lib/plans/keys";
+import { HIGHEST_HZ, LOWEST_HZ, readPitch, temperamentValue } from "@/lib/plans/plan-address";
 import { builtInWords, temperamentName, temperamentWords } from "@/lib/plans/rules";
 import type { StyleList } from "@/lib/plans/schema";
-
-const lowestHz = 380;
-const highestHz = 480;
-
-/** A temperament as the address and the analysis take it: its name, or twelve offsets. */
-export function temperamentValue(temperament: Temperament): string {
-  return typeof temperament === "string" ? temperament : temperament.join(",");
-}
 
 export function PlanChoiceFields({
   styles,
@@ -25,17 +18,24 @@ export function PlanChoiceFields({
   styles: StyleList;
   instrumentTemperament: Temperament;
   chosen: Required<PlanChoices>;
-  onChange: (choices: Required<PlanChoices>) => void;
+  /** `again` while one number is still being typed: the same step for Back. */
+  onChange: (choices: Required<PlanChoices>, again: boolean) => void;
 }) {
-  const [typedHz, setTypedHz] = useState(String(chosen.referenceHz));
-  const [hzFault, setHzFault] = useState<string>();
+  const [typedHz, setTypedHz] = useState<string | null>(null);
+  const stepped = useRef(false);
+  const hzFault = typedHz !== null && readPitch(typedHz) === null;
+
+  // The address was gone back in: the field follows it.
+  useEffect(() => {
+    setTypedHz((typed) => (typed !== null && readPitch(typed) === chosen.referenceHz ? typed : null));
+  }, [chosen.referenceHz]);
 
   function typeHz(text: string) {
     setTypedHz(text);
-    const hz = Number(text.replace(",", "."));
-    const fits = text.trim() !== "" && hz >= lowestHz && hz <= highestHz;
-    setHzFault(fits ? undefined : `Between ${lowestHz} and ${highestHz} Hz.`);
-    if (fits) onChange({ ...chosen, referenceHz: hz });
+    const hz = readPitch(text);
+    if (hz === null || hz === chosen.referenceHz) return;
+    onChange({ ...chosen, referenceHz: hz }, stepped.current);
+    stepped.current = true;
   }
 
   const own = typeof instrumentTemperament === "string" ? [] : [instrumentTemperament];
@@ -44,7 +44,7 @@ export function PlanChoiceFields({
       <Select
         label="Style"
         value={chosen.style}
-        onChange={(event) => onChange({ ...chosen, style: event.target.value })}
+        onChange={(event) => onChange({ ...chosen, style: event.target.value }, false)}
         options={[
           ...styles.house.map(({ id, name }) => ({ value: id, label: name })),
           ...Object.entries(builtInWords).map(([value, { title }]) => ({ value, label: title })),
@@ -53,7 +53,7 @@ export function PlanChoiceFields({
       <Select
         label="Temperament"
         value={chosen.temperament}
-        onChange={(event) => onChange({ ...chosen, temperament: event.target.value })}
+        onChange={(event) => onChange({ ...chosen, temperament: event.target.value }, false)}
         options={[
           ...Object.entries(temperamentWords).map(([value, label]) => ({ value, label })),
           ...own.map((offsets) => ({ value: temperamentValue(offsets), label: temperamentName(offsets) })),
@@ -62,9 +62,15 @@ export function PlanChoiceFields({
       <NumberInput
         label="A4"
         unit="Hz"
-        value={typedHz}
+        value={typedHz ?? String(chosen.referenceHz)}
         onChange={(event) => typeHz(event.target.value)}
-        {...(hzFault ? { error: hzFault } : {})}
+        onFocus={() => {
+          stepped.current = false;
+        }}
+        onBlur={() => {
+          if (!hzFault) setTypedHz(null);
+        }}
+        {...(hzFault ? { error: `Between ${LOWEST_HZ} and ${HIGHEST_HZ} Hz.` } : {})}
       />
     </div>
   );

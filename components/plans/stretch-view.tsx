@@ -1,5 +1,6 @@
 "use client";
 
+import { useSearchParams } from "next/navigation";
 import { useMemo, useState } from "react";
 import { KeyPlots } from "@/components/charts/key-plots";
 import { SharpText } from "@/components/charts/note-name";
@@ -7,24 +8,33 @@ import { NumbersTable } from "@/components/charts/plot-table";
 import { ActionStrip } from "@/components/shell/action-strip";
 import { WorkHead } from "@/components/shell/spread";
 import { Button } from "@/components/ui/button";
+import { StateWord } from "@/components/ui/state-word";
 import { ErrorState } from "@/components/ui/states";
 import type { Temperament } from "@/lib/acoustics/types";
 import type { PlanChoices } from "@/lib/plans/keys";
+import { addressOf, planInAddress, styleRefs, temperamentValue } from "@/lib/plans/plan-address";
 import { temperamentName } from "@/lib/plans/rules";
 import type { AnalysisRecord, StyleList } from "@/lib/plans/schema";
 import { adviceSentence } from "./advice-words";
 import { keyMarks, planTable, stretchPlot } from "./analysis-plots";
 import { BeatsSection } from "./beats-section";
+import { FlaggedNotes } from "./flagged-notes";
 import { KeptPlans } from "./kept-plans";
 import { KeyReadout } from "./key-readout";
-import { PlanChoiceFields, temperamentValue } from "./plan-choices";
+import { PlanChoiceFields } from "./plan-choices";
 import { SheetChoice, type SheetOption } from "./sheet-choice";
 import { useAnalysis } from "./use-analysis";
 import { useSavePlan } from "./use-save-plan";
 
 type Props = {
   analysis: AnalysisRecord;
-  instrument: { id: string; firstMidi: number; lastMidi: number; temperament: Temperament };
+  instrument: {
+    id: string;
+    firstMidi: number;
+    lastMidi: number;
+    temperament: Temperament;
+    referenceHz: number;
+  };
   sheet: { id: string; words: string; found: string; jobId: string | null };
   sheets: readonly SheetOption[];
   styles: StyleList;
@@ -37,11 +47,7 @@ type Props = {
 
 export function StretchView(props: Props) {
   const { analysis: initial, instrument, sheet, sheets, styles } = props;
-  const [choices, setChoices] = useState<Required<PlanChoices>>({
-    style: initial.style.ref,
-    temperament: temperamentValue(initial.temperament),
-    referenceHz: initial.referenceHz,
-  });
+  const { choices, faults, choose } = useChoicesInAddress(instrument, styles);
   const untouched =
     choices.style === initial.style.ref &&
     choices.temperament === temperamentValue(initial.temperament) &&
@@ -88,8 +94,15 @@ export function StretchView(props: Props) {
         styles={styles}
         instrumentTemperament={instrument.temperament}
         chosen={choices}
-        onChange={setChoices}
+        onChange={choose}
       />
+      {faults.map((fault) => (
+        <p key={fault} className="mt-3">
+          <StateWord kind="attention" wrap>
+            {fault} The plan below is drawn with the usual one.
+          </StateWord>
+        </p>
+      ))}
       {error ? (
         <ErrorState
           title="The plan was not computed"
@@ -114,6 +127,7 @@ export function StretchView(props: Props) {
       <p className="lab mt-2 max-w-160">
         In the bass listen to the named partial: the first partial there is weak and off its place.
       </p>
+      <FlaggedNotes analysis={analysis} />
       <BeatsSection analysis={analysis} />
       <KeptPlans sheetId={sheet.id} locale={props.locale} timeZone={props.timeZone} />
       <div className="mt-6">
@@ -122,4 +136,23 @@ export function StretchView(props: Props) {
       <ActionStrip>{saveButton}</ActionStrip>
     </>
   );
+}
+
+/** What is chosen stands in the address; what is not there is the instrument's and the shop's habit. */
+function useChoicesInAddress(instrument: Props["instrument"], styles: StyleList) {
+  const search = useSearchParams();
+  const { choices: asked, faults } = planInAddress(search, { styles: styleRefs(styles) });
+  const habit: Required<PlanChoices> = {
+    style: styles.defaultStyle,
+    temperament: temperamentValue(instrument.temperament),
+    referenceHz: instrument.referenceHz,
+  };
+  const choices: Required<PlanChoices> = { ...habit, ...asked };
+  // The browser's own history: the page need not be asked for anew, only the plan.
+  const choose = (next: Required<PlanChoices>, again: boolean) => {
+    const address = `${window.location.pathname}${addressOf(window.location.search, next, habit)}`;
+    if (again) window.history.replaceState(null, "", address);
+    else window.history.pushState(null, "", address);
+  };
+  return { choices, faults, choose };
 }

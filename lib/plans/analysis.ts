@@ -26,25 +26,32 @@ export type AnalysisInput = {
  * Everything the pages draw from one sheet: B of all keys, the plan with its band, beats, evenness and what to
  * measure next. Pure: the server's answer and the browser's preview are the same code.
  */
-export function analyse(input: AnalysisInput): { record: AnalysisRecord; keyboard: KeyboardResult } {
+export function analyse(input: AnalysisInput): { record: AnalysisRecord; planned: KeyboardResult } {
   const { instrument, sheet, style, temperament, referenceHz } = input;
   // The compass may have been corrected after a note was read; what lies outside it belongs to no key.
   const notes = input.notes.filter(({ midi }) => midi >= instrument.firstMidi && midi <= instrument.lastMidi);
-  const curve = keyboard({
-    observations: observationsOf(notes),
-    firstMidi: instrument.firstMidi,
-    lastMidi: instrument.lastMidi,
-    ...(instrument.breakMidi === null ? {} : { breakMidi: instrument.breakMidi }),
-  });
+  const observations = observationsOf(notes);
+  const { firstMidi, lastMidi, breakMidi } = instrument;
+  const curveOf = (some: typeof observations) =>
+    keyboard({
+      observations: some,
+      firstMidi,
+      lastMidi,
+      ...(breakMidi === null ? {} : { breakMidi }),
+    });
+  const curve = curveOf(observations);
+  const flagged = new Set(curve.keys.filter(({ flag }) => flag !== null).map(({ midi }) => midi));
+  // A note that does not belong informs no other: plan and beats take what its neighbours foretell of it.
+  const planned = flagged.size === 0 ? curve : curveOf(observations.filter(({ midi }) => !flagged.has(midi)));
   const options = { style: style.style, temperament, referenceHz };
-  const plan = planFrom(curve, options);
+  const plan = planFrom(planned, options);
   const tuned = plan.notes.map((note, index) => ({
     midi: note.midi,
     f1Hz: note.targetHz,
-    b: curve.keys[index]?.b ?? 0,
+    b: planned.keys[index]?.b ?? 0,
   }));
   return {
-    keyboard: curve,
+    planned,
     record: {
       sheetId: sheet.id,
       instrumentId: instrument.id,

@@ -26,7 +26,7 @@ async function analysisOf(tx: Tx, actor: Actor, sheetId: string, choices: Choice
   if (!instrument) throw notFound("instrument");
   const notes = await notesOfSheet(tx, actor.shopId, sheetId);
   const style = await chosenStyle(tx, actor.shopId, choices.style, instrument);
-  const { record, keyboard } = analyse({
+  const { record, planned } = analyse({
     instrument,
     sheet,
     style,
@@ -34,7 +34,7 @@ async function analysisOf(tx: Tx, actor: Actor, sheetId: string, choices: Choice
     temperament: choices.temperament ?? instrument.temperament,
     referenceHz: choices.referenceHz ?? instrument.referenceHz,
   });
-  return { sheet, style, record, keyboard };
+  return { sheet, style, record, planned };
 }
 
 export async function getAnalysis(
@@ -99,7 +99,7 @@ export async function savePlan(actor: Actor, sheetId: string, input: PlanInput):
       if (existing.sheetId === sheetId) return planRecordOf(existing);
       throw new AppError("id-in-use", "This id is taken. Send the plan with another one.");
     }
-    const { sheet, style, record } = await analysisOf(tx, actor, sheetId, input);
+    const { sheet, style, record, planned } = await analysisOf(tx, actor, sheetId, input);
     if (actor.role === "technician" && !(await technicianIsOn(tx, actor.shopId, actor.memberId, sheet))) {
       throw new AppError(
         "forbidden",
@@ -127,8 +127,8 @@ export async function savePlan(actor: Actor, sheetId: string, input: PlanInput):
       targetHz: record.notes.map((note) => note.targetHz),
       listenPartial: record.notes.map((note) => note.listenPartial),
       listenHz: record.notes.map((note) => note.listenHz),
-      b: record.keys.map((key) => key.b),
-      lnBSigma: record.keys.map((key) => key.lnBSigma),
+      b: planned.keys.map((key) => key.b),
+      lnBSigma: planned.keys.map((key) => key.lnBSigma),
       computationVersion: record.computationVersion,
       madeBy: actor.memberId,
     });
