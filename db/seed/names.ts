@@ -102,5 +102,5 @@ export const accessNotes = [
   "Key with the neighbour at number 4.",
   "Park in the yard, the street is residents only.",
   "Second floor, no lift.",
-  "The caretaker opens from eight.",
+  "The gate sticks: lift and push.",
 ] as const;

@@ -63,6 +63,7 @@ const venues: Venue[] = [
     contactName: "Mirela Auvray",
     site: "Averil Conservatory",
     street: "1 Lantern Hill",
+    accessNotes: "The caretaker opens from eight. Lid keys hang at the desk.",
     email: "venue@example.org",
   },
   {
@@ -71,6 +72,7 @@ const venues: Venue[] = [
     contactName: "Jonah Lorrimer",
     site: "Harbour Hall",
     street: "12 Anchor Row",
+    accessNotes: "Stage door. The stage is free until five.",
     email: "hall@example.org",
   },
   {
@@ -79,6 +81,7 @@ const venues: Venue[] = [
     contactName: "Odile Ivensen",
     site: "Chapel of the Tide",
     street: "3 Ebb Street",
+    accessNotes: "The heating is off on weekdays: bring a hygrometer.",
     email: "chapel@example.org",
   },
   {
@@ -87,6 +90,7 @@ const venues: Venue[] = [
     contactName: "Hugo Penhallow",
     site: "St Brannoc's Church",
     street: "27 Beacon Street",
+    accessNotes: "Key at the parish office, weekdays until noon.",
     email: "church@example.org",
   },
 ];
@@ -186,7 +190,7 @@ export function demoCustomers(): SeedCustomer[] {
         postalCode,
         latitude,
         longitude,
-        accessNotes: "The caretaker opens from eight.",
+        accessNotes: venue.accessNotes,
       },
       instruments: instrumentsOf[venue.key] ?? [],
     };
