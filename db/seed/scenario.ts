@@ -54,7 +54,15 @@ function place(index: number, jitter: number) {
   };
 }
 
-type Venue = { key: string; name: string; contactName: string; site: string; street: string; email: string };
+type Venue = {
+  key: string;
+  name: string;
+  contactName: string;
+  site: string;
+  street: string;
+  accessNotes: string;
+  email: string;
+};
 
 const venues: Venue[] = [
   {
