@@ -154,7 +154,7 @@ test("what was typed or removed is taken back step by step, on the server too", 
   await page.keyboard.press("Control+z");
   await expect(cell("A4", 3)).toHaveValue("");
   await expect(cell("A4", 2)).not.toHaveValue("");
-  await expect(row("A4")).toContainText("repeat");
+  await expect(row("A4")).toContainText("too few");
   await page.getByRole("button", { name: "Remove note" }).click();
   await expect(row("A4")).toHaveCount(0);
   await page.getByRole("button", { name: "Undo", exact: true }).click();

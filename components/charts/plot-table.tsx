@@ -25,7 +25,7 @@ export function NumbersButton({ open, controls, title, onClick, children }: Butt
       aria-controls={open ? controls : undefined}
       aria-label={children ? `Numbers: ${title}` : `${open ? "Hide numbers" : "Numbers"}: ${title}`}
       onClick={onClick}
-      className="relative cursor-pointer font-semibold text-iron text-12 after:absolute after:-inset-x-2 after:-inset-y-3.5 after:content-['']"
+      className="relative min-w-7 cursor-pointer font-semibold text-iron text-12 after:absolute after:-inset-x-2 after:-inset-y-3.5 after:content-['']"
     >
       {children ?? (open ? "Hide numbers" : "Numbers")}
     </button>
@@ -136,7 +136,7 @@ function CopyButton({ table }: { table: PlotTableData }) {
       <button
         type="button"
         onClick={copy}
-        className="relative cursor-pointer font-semibold text-12 text-iron after:absolute after:-inset-x-2 after:-inset-y-3.5 after:content-['']"
+        className="-my-3 inline-flex min-h-11 min-w-11 cursor-pointer items-center justify-center font-semibold text-12 text-iron"
       >
         Copy
       </button>

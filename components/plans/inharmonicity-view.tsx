@@ -108,8 +108,9 @@ export function InharmonicityView({ analysis: initial, instrument, sheet, sheets
         </ul>
       ) : null}
       <p className="lab mt-3 max-w-160">
-        {breakWords(analysis)} Bands are 95 %. Figures come from the readings typed in; they do not prove that
-        a string is sound.
+        {breakWords(analysis)} Bands and ± are 95 % and weigh all notes of the sheet together, so a note's ±
+        is smaller here than on its reading sheet, where it stands for that note's readings alone. Figures
+        come from the readings typed in; they do not prove that a string is sound.
       </p>
       <div className="mt-4">
         <SheetChoice sheets={sheets} value={sheet.id} />

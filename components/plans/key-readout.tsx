@@ -28,7 +28,11 @@ export function KeyReadout({
       cells={[
         {
           key: "b",
-          label: <TimesTenTo exponent={exponent} />,
+          label: (
+            <>
+              <TimesTenTo exponent={exponent} />, all notes
+            </>
+          ),
           value: inharmonicity(key.b, halfBand(key), exponent),
           width: 156,
         },

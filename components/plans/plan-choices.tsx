@@ -6,7 +6,7 @@ import { NumberInput } from "@/components/forms/text-input";
 import type { Temperament } from "@/lib/acoustics/types";
 import type { PlanChoices } from "@/lib/plans/keys";
 import { HIGHEST_HZ, LOWEST_HZ, readPitch, temperamentValue } from "@/lib/plans/plan-address";
-import { builtInWords, temperamentName, temperamentWords } from "@/lib/plans/rules";
+import { builtInChoices, temperamentName, temperamentWords } from "@/lib/plans/rules";
 import type { StyleList } from "@/lib/plans/schema";
 
 export function PlanChoiceFields({
@@ -45,10 +45,7 @@ export function PlanChoiceFields({
         label="Style"
         value={chosen.style}
         onChange={(event) => onChange({ ...chosen, style: event.target.value }, false)}
-        options={[
-          ...styles.house.map(({ id, name }) => ({ value: id, label: name })),
-          ...Object.entries(builtInWords).map(([value, { title }]) => ({ value, label: title })),
-        ]}
+        options={[...styles.house.map(({ id, name }) => ({ value: id, label: name })), ...builtInChoices]}
       />
       <Select
         label="Temperament"

@@ -4,6 +4,7 @@ import { useEffect, useState } from "react";
 import { spokenNote } from "@/components/charts/note-spelling";
 import { halfB } from "./cell-look";
 import type { Live } from "./live-fit";
+import { qualityWords } from "./quality-word";
 import type { RowState } from "./row-state";
 import type { Row } from "./sheet-row";
 
@@ -42,5 +43,5 @@ function sentence(row: Row, live: Live, state: RowState): string {
   const b = `B ${unit(fit.b)}${half === null ? "" : ` plus or minus ${unit(half)}`} times ten to the minus four`;
   const leftOut = fit.rejected.map(({ partial }) => partial);
   const out = leftOut.length > 0 ? ` Left out: partial ${leftOut.join(", ")}.` : "";
-  return `${name}: ${b}, ${fit.quality}.${out}`;
+  return `${name}: ${b}, ${qualityWords(fit).full}.${out}`;
 }

@@ -54,6 +54,10 @@ export const warningWords: Record<FitWarning, string> = {
   "scatter-exceeds-sigma": "The readings scatter more than their errors say.",
 };
 
+/** Which ± this is: the keyboard's own, on the page of all keys, is another. */
+export const ownErrorWords =
+  "± of B: from this note's readings alone; Inharmonicity weighs all notes together.";
+
 /** The question at a reading far from where it is expected. */
 export function questionWords({ partial, awayCents, expectedHz, fitsPartial }: AskAbout): {
   what: string;

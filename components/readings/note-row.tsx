@@ -191,6 +191,6 @@ function FittedB({ live, predictedB }: { live: Live; predictedB?: number | null 
 function FitWord({ live, state, proposed }: { live: Live; state: RowState; proposed: boolean }) {
   if (proposed) return <span className="text-ink-soft">next</span>;
   if (state.kind === "attention") return <StateWord kind="attention">{state.word}</StateWord>;
-  if (live.fit) return <QualityWord quality={live.fit.quality} />;
+  if (live.fit) return <QualityWord fit={live.fit} />;
   return <span className="text-ink-soft">{state.kind === "empty" ? "" : state.word}</span>;
 }

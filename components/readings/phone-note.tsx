@@ -266,7 +266,7 @@ function Foot({ row, live, order, columns, cells, canChange, onGo }: Props) {
         <span className="lab">
           f1, Hz <b className="text-16 font-semibold text-ink">{fit ? fixed(fit.f1Hz, 2) : "–"}</b>
         </span>
-        <span className="ml-auto">{fit ? <QualityWord quality={fit.quality} /> : null}</span>
+        <span className="ml-auto">{fit ? <QualityWord fit={fit} /> : null}</span>
       </div>
       {canChange ? (
         <div className="flex gap-2">

@@ -12,7 +12,7 @@ import { showMessage } from "@/components/ui/message-queue";
 import { Sign } from "@/components/ui/sign";
 import type { RegisterStyle } from "@/lib/acoustics";
 import type { ActionResult } from "@/lib/doors/action-result";
-import { registerStyle, type StyleRecord, styleFields } from "@/lib/plans/schema";
+import { type PreviewInstrument, registerStyle, type StyleRecord, styleFields } from "@/lib/plans/schema";
 import {
   draftOf,
   draftRule,
@@ -30,11 +30,16 @@ type Props = {
   style: RegisterStyle & { name: string };
   saved: { id: string; version: number } | null;
   canChange: boolean;
+  /** The shop's instruments to try it on, the one with the most readings first. */
+  instruments: readonly PreviewInstrument[];
+  /** What a new style begins with, in a sentence: "Even, built in". */
+  beginsWith?: string;
   create: (input: unknown) => Promise<ActionResult<StyleRecord>>;
   change: (input: unknown) => Promise<ActionResult<StyleRecord>>;
 };
 
-export function StyleEditor({ style, saved, canChange, create, change }: Props) {
+export function StyleEditor(props: Props) {
+  const { style, saved, canChange, instruments, beginsWith = "its beginning", create, change } = props;
   const router = useRouter();
   const [draft, setDraft] = useState(() => draftOf(style));
   const [errors, setErrors] = useState<Record<string, string>>({});
@@ -85,7 +90,11 @@ export function StyleEditor({ style, saved, canChange, create, change }: Props) 
           <Sign name="attention" className="mt-[3px]" /> {failure}
         </p>
       ) : null}
-      <StylePreview style={preview} />
+      <StylePreview
+        style={preview}
+        before={{ style, name: saved ? "what was saved" : beginsWith }}
+        instruments={instruments}
+      />
       <div className="grid gap-4 sm:grid-cols-3">
         <TextInput
           label="Name"

@@ -1,4 +1,4 @@
-import { and, eq, isNotNull, isNull, type SQL, sql } from "drizzle-orm";
+import { and, desc, eq, isNotNull, isNull, type SQL, sql } from "drizzle-orm";
 import type { Handle } from "@/db/client";
 import { instrument, job, member, noteReading, readingSheet, visitTechnician } from "@/db/schema";
 import type { FitResult } from "@/lib/acoustics/types";
@@ -107,6 +107,43 @@ export async function updateSheet(
     .where(and(eq(readingSheet.shopId, shopId), eq(readingSheet.id, id), eq(readingSheet.version, version)))
     .returning({ id: readingSheet.id });
   return rows.length === 1;
+}
+
+/** The sheets in use with the most notes read, over all the shop's instruments. */
+export function fullestSheets(db: Handle, shopId: string, most: number) {
+  const notesRead = sql<number>`count(distinct ${noteReading.midi})::int`;
+  return db
+    .select({
+      sheetId: readingSheet.id,
+      stage: readingSheet.stage,
+      takenAt: readingSheet.takenAt,
+      instrumentId: instrument.id,
+      name: instrument.name,
+      firstMidi: instrument.firstMidi,
+      lastMidi: instrument.lastMidi,
+      breakMidi: instrument.breakMidi,
+      notesRead,
+    })
+    .from(noteReading)
+    .innerJoin(
+      readingSheet,
+      and(eq(readingSheet.shopId, noteReading.shopId), eq(readingSheet.id, noteReading.sheetId)),
+    )
+    .innerJoin(
+      instrument,
+      and(eq(instrument.shopId, readingSheet.shopId), eq(instrument.id, readingSheet.instrumentId)),
+    )
+    .where(
+      and(
+        eq(noteReading.shopId, shopId),
+        isNull(readingSheet.archivedAt),
+        isNull(instrument.archivedAt),
+        isNotNull(noteReading.b),
+      ),
+    )
+    .groupBy(readingSheet.shopId, readingSheet.id, instrument.shopId, instrument.id)
+    .orderBy(desc(notesRead), desc(readingSheet.takenAt), readingSheet.id)
+    .limit(most);
 }
 
 const noteColumns = {

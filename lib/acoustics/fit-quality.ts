@@ -33,7 +33,8 @@ export function qualityOf(result: Judged): Quality {
   if (warnings.includes("scatter-exceeds-sigma") || mistakes.length * 3 >= used.length + mistakes.length)
     return "repeat";
   const share = bSigma / Math.abs(b);
-  if (result.dof === 0 && share > 0.3) return "repeat";
+  // Two readings give B exactly: there is nothing by which a mistake could be seen.
+  if (result.dof < 1) return "repeat";
   if (result.dof < 2 || share > 0.1 || mistakes.length > 1) return "usable";
   return warnings.includes("ambiguous-outlier") || warnings.includes("kept-off-curve") ? "usable" : "good";
 }

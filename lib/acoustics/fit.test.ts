@@ -181,6 +181,7 @@ describe("few readings", () => {
     expect(result.rmsCents).toBeLessThan(1e-9);
     expect(result.dof).toBe(0);
     expect(result.warnings).toContain("exact-no-check");
+    expect(result.quality).toBe("repeat");
     expect(result.bSigma).toBeGreaterThan(0);
   });
 

@@ -1,2 +1,2 @@
 /** Counted up whenever a change of the computation changes its results: stored fits and plans name it. */
-export const COMPUTATION_VERSION = 1;
+export const COMPUTATION_VERSION = 2;

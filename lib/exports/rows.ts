@@ -3,6 +3,11 @@ import type { PlanRecord } from "@/lib/plans/schema";
 import { readingCents } from "@/lib/readings/rules";
 import type { SheetRecord } from "@/lib/readings/schema";
 
+/*
+ * Names are those of the API and of the command line (Low and High are the ends, Band the half-width at 95 %), in
+ * CSV as in JSON: one thing has one name wherever it is met.
+ */
+
 type Cell = string | number | boolean | null;
 
 export const readingColumns = [
@@ -13,11 +18,11 @@ export const readingColumns = [
   "partial",
   "hz",
   "cents",
-  "reference_hz",
-  "sigma_cents",
-  "residual_cents",
+  "referenceHz",
+  "sigmaCents",
+  "residualCents",
   "used",
-  "left_out_because",
+  "leftOutBecause",
 ] as const;
 
 /** One row a reading. `cents` are from the nth harmonic of the equal-tempered note at the sheet's reference. */
@@ -31,11 +36,11 @@ export function readingRows(sheet: SheetRecord): Record<(typeof readingColumns)[
       partial,
       hz,
       cents: readingCents(partial, hz, note.midi, sheet.referenceHz),
-      reference_hz: sheet.referenceHz,
-      sigma_cents: sigmaCents,
-      residual_cents: note.residuals.find((residual) => residual.partial === partial)?.cents ?? null,
+      referenceHz: sheet.referenceHz,
+      sigmaCents: sigmaCents,
+      residualCents: note.residuals.find((residual) => residual.partial === partial)?.cents ?? null,
       used: note.used.includes(partial),
-      left_out_because: note.rejected.find((rejection) => rejection.partial === partial)?.reason ?? null,
+      leftOutBecause: note.rejected.find((rejection) => rejection.partial === partial)?.reason ?? null,
     })),
   );
 }
@@ -45,15 +50,15 @@ export const fitColumns = [
   "note",
   "string",
   "take",
-  "f1_hz",
-  "f1_sigma_cents",
+  "f1Hz",
+  "f1SigmaCents",
   "b",
-  "b_sigma",
-  "b_low_95",
-  "b_high_95",
-  "rms_cents",
-  "partials_used",
-  "highest_partial",
+  "bSigma",
+  "bLow",
+  "bHigh",
+  "rmsCents",
+  "partialsUsed",
+  "nMax",
   "quality",
 ] as const;
 
@@ -63,15 +68,15 @@ export function fitRows(sheet: SheetRecord): Record<(typeof fitColumns)[number],
     note: keyName(note.midi),
     string: note.string,
     take: note.take,
-    f1_hz: note.f1Hz,
-    f1_sigma_cents: note.f1SigmaCents,
+    f1Hz: note.f1Hz,
+    f1SigmaCents: note.f1SigmaCents,
     b: note.b,
-    b_sigma: note.bSigma,
-    b_low_95: note.bLow,
-    b_high_95: note.bHigh,
-    rms_cents: note.rmsCents,
-    partials_used: note.used.length,
-    highest_partial: note.nMax,
+    bSigma: note.bSigma,
+    bLow: note.bLow,
+    bHigh: note.bHigh,
+    rmsCents: note.rmsCents,
+    partialsUsed: note.used.length,
+    nMax: note.nMax,
     quality: note.quality,
   }));
 }
@@ -79,25 +84,32 @@ export function fitRows(sheet: SheetRecord): Record<(typeof fitColumns)[number],
 export const planColumns = [
   "midi",
   "note",
-  "stretch_cents",
-  "band_95_cents",
-  "target_f1_hz",
-  "listen_partial",
-  "listen_hz",
+  "stretchCents",
+  "bandCents",
+  "targetHz",
+  "listenPartial",
+  "listenHz",
   "b",
-  "ln_b_sigma",
+  "lnBSigma",
+  "style",
+  "temperament",
+  "referenceHz",
 ] as const;
 
+/** One row a key. What the plan was made with stands in every row, so that the file can be read by itself. */
 export function planRows(plan: PlanRecord): Record<(typeof planColumns)[number], Cell>[] {
   return plan.notes.map((note) => ({
     midi: note.midi,
     note: keyName(note.midi),
-    stretch_cents: note.stretchCents,
-    band_95_cents: note.bandCents,
-    target_f1_hz: note.targetHz,
-    listen_partial: note.listenPartial,
-    listen_hz: note.listenHz,
+    stretchCents: note.stretchCents,
+    bandCents: note.bandCents,
+    targetHz: note.targetHz,
+    listenPartial: note.listenPartial,
+    listenHz: note.listenHz,
     b: note.b,
-    ln_b_sigma: note.lnBSigma,
+    lnBSigma: note.lnBSigma,
+    style: plan.styleName,
+    temperament: typeof plan.temperament === "string" ? plan.temperament : plan.temperament.join(" "),
+    referenceHz: plan.referenceHz,
   }));
 }

@@ -4,13 +4,13 @@ import {
   centsBetween,
   equalTemperedHz,
   type KeyboardResult,
-  keyboard,
   planFrom,
   raiseByCents,
 } from "@/lib/acoustics";
 import type { Style, Temperament } from "@/lib/acoustics/types";
 import { COMPUTATION_VERSION } from "@/lib/acoustics/version";
 import { type FittedNote, observationsOf, pitchOf } from "@/lib/readings/rules";
+import { plannedKeyboard } from "./planned-keyboard";
 import type { AnalysisRecord } from "./schema";
 
 export type AnalysisInput = {
@@ -30,19 +30,7 @@ export function analyse(input: AnalysisInput): { record: AnalysisRecord; planned
   const { instrument, sheet, style, temperament, referenceHz } = input;
   // The compass may have been corrected after a note was read; what lies outside it belongs to no key.
   const notes = input.notes.filter(({ midi }) => midi >= instrument.firstMidi && midi <= instrument.lastMidi);
-  const observations = observationsOf(notes);
-  const { firstMidi, lastMidi, breakMidi } = instrument;
-  const curveOf = (some: typeof observations) =>
-    keyboard({
-      observations: some,
-      firstMidi,
-      lastMidi,
-      ...(breakMidi === null ? {} : { breakMidi }),
-    });
-  const curve = curveOf(observations);
-  const flagged = new Set(curve.keys.filter(({ flag }) => flag !== null).map(({ midi }) => midi));
-  // A note that does not belong informs no other: plan and beats take what its neighbours foretell of it.
-  const planned = flagged.size === 0 ? curve : curveOf(observations.filter(({ midi }) => !flagged.has(midi)));
+  const { curve, planned } = plannedKeyboard(observationsOf(notes), instrument);
   const options = { style: style.style, temperament, referenceHz };
   const plan = planFrom(planned, options);
   const tuned = plan.notes.map((note, index) => ({

@@ -12,6 +12,14 @@ export const builtInWords: Record<BuiltInStyle, { title: string; words: string }
   },
 };
 
+/** The built-in styles as they stand in a list to choose from. */
+export const builtInChoices: ReadonlyArray<{ value: BuiltInStyle; label: string }> = builtInNames.map(
+  (value) => ({
+    value,
+    label: builtInWords[value].title,
+  }),
+);
+
 export const temperamentWords: Record<TemperamentName, string> = {
   equal: "Equal",
   pythagorean: "Pythagorean",

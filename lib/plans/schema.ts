@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { TEMPERAMENT_NAMES } from "@/lib/acoustics";
+import type { Observation } from "@/lib/acoustics/types";
 
 export const temperament = z.union([
   z.enum(TEMPERAMENT_NAMES),
@@ -179,6 +180,18 @@ export const planList = z.object({ items: z.array(planRow), next: z.null() });
 
 export const adviceRecord = advice.extend({ sheetId: z.uuid() });
 
+/** An instrument that a style can be tried on: its fullest sheet, as far as a plan is drawn from it. */
+export type PreviewInstrument = {
+  instrumentId: string;
+  sheetId: string;
+  name: string;
+  sheetName: string;
+  notesRead: number;
+  firstMidi: number;
+  lastMidi: number;
+  breakMidi: number | null;
+  observations: Observation[];
+};
 export type StyleFields = z.infer<typeof styleFields>;
 export type NewStyle = z.infer<typeof newStyle>;
 export type StyleChange = z.infer<typeof styleChange>;

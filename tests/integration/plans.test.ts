@@ -6,7 +6,7 @@ import { exportPlan, exportSheet } from "@/lib/exports/service";
 import { newId } from "@/lib/ids";
 import { compareSheets } from "@/lib/plans/compare/service";
 import { findPlans, getAdvice, getAnalysis, getPlan, savePlan } from "@/lib/plans/service";
-import { changeStyle, createStyle, getStyles } from "@/lib/plans/styles/service";
+import { changeStyle, createStyle, getStyles, previewInstruments } from "@/lib/plans/styles/service";
 import { createSheet, saveNotes } from "@/lib/readings/service";
 import {
   closeFactories,
@@ -256,6 +256,38 @@ describe("house styles", () => {
     expect((await getStyles(other.owner)).house).toEqual([]);
   });
 
+  it("are tried on the instrument with the most readings, by its fullest sheet", async () => {
+    const place = await makeShop();
+    expect(await previewInstruments(place.owner)).toEqual([]);
+    const customerId = await makeCustomer(place.shopId);
+    const siteId = await makeSite(place.shopId, customerId);
+    const [few, many] = [
+      await makeInstrument(place.shopId, { siteId, ownerId: customerId }),
+      await makeInstrument(place.shopId, { siteId, ownerId: customerId }),
+    ];
+    for (const [instrument, most] of [
+      [few, 3],
+      [many, 5],
+      [many, 8],
+    ] as const) {
+      const sheet = await createSheet(place.owner, instrument, {
+        stage: "as-found",
+        takenAt: "2026-05-14T09:12:00Z",
+        referenceHz: 440,
+      });
+      await saveNotes(place.owner, sheet.id, { notes: rows(13).slice(0, most) });
+    }
+    const found = await previewInstruments(place.office);
+    expect(found.map(({ instrumentId, notesRead }) => [instrumentId, notesRead])).toEqual([
+      [many, 8],
+      [few, 3],
+    ]);
+    expect(found[0]?.observations.map(({ midi }) => midi)).toEqual(keysRead.slice(0, 8));
+    expect((await previewInstruments(other.owner)).map(({ instrumentId }) => instrumentId)).not.toContain(
+      many,
+    );
+  });
+
   it("keep a name once, and answer a stale change with the newer style", async () => {
     const style = await createStyle(shop.owner, { ...wide, name: "Quay" });
     await expect(createStyle(shop.owner, { ...wide, name: "quay" })).rejects.toMatchObject({
@@ -280,16 +312,26 @@ describe("exports", () => {
     expect(type).toContain("text/csv");
     const lines = text.trim().split("\r\n");
     expect(lines).toHaveLength(1 + rows(11).reduce((sum, row) => sum + row.readings.length, 0));
-    expect(lines[0]).toContain("midi,note,string,take,partial,hz,cents,reference_hz");
+    expect(lines[0]).toContain("midi,note,string,take,partial,hz,cents,referenceHz");
     const json = JSON.parse((await exportSheet(shop.office, sheetId, { format: "json", what: "fits" })).text);
     expect(json.map((row: { midi: number }) => row.midi)).toEqual(keysRead);
+    expect(Object.keys(json[0])).toEqual(expect.arrayContaining(["f1Hz", "bSigma", "bLow", "bHigh"]));
+    const names = [lines[0]?.replace("\uFEFF", "").split(",") ?? [], Object.keys(json[0])].flat();
+    expect(names.filter((name) => !/^[a-z][a-zA-Z0-9]*$/.test(name))).toEqual([]);
   });
 
   it("carry a plan's every key, and are nobody else's", async () => {
     const sheetId = await sheetWith(shop.technician, 12);
-    const plan = await savePlan(shop.technician, sheetId, {});
+    const plan = await savePlan(shop.technician, sheetId, {
+      style: "wide",
+      temperament: "vallotti",
+      referenceHz: 442,
+    });
     const { text } = await exportPlan(shop.technician, plan.id, "csv");
-    expect(text.trim().split("\r\n")).toHaveLength(89);
+    const lines = text.trim().split("\r\n");
+    expect(lines).toHaveLength(89);
+    expect(lines[0]).toMatch(/,style,temperament,referenceHz$/);
+    for (const line of lines.slice(1)) expect(line).toMatch(/,Wide,vallotti,442$/);
     await expect(exportPlan(other.owner, plan.id, "csv")).rejects.toMatchObject({ code: "not-found" });
   });
 });

@@ -3,10 +3,10 @@ import { ShopFactsForm } from "@/components/people/shop-facts-form";
 import { WorkHead } from "@/components/shell/spread";
 import { may } from "@/lib/auth/access";
 import { staffActor } from "@/lib/pages/page-actor";
+import { builtInChoices } from "@/lib/plans/rules";
 import { countryChoices, currencyChoices, timeZoneChoices } from "@/lib/shop/choices";
 import { currencyCodes, locales } from "@/lib/shop/places";
 import { getShopSettings } from "@/lib/shop/service";
-import { styleWords } from "@/lib/shop/style-words";
 import { changeShopAction } from "./actions";
 
 export const metadata: Metadata = { title: "Shop" };
@@ -34,7 +34,7 @@ export default async function ShopPage() {
         currencies={currencyChoices(currencyCodes)}
         timeZones={timeZoneChoices()}
         locales={locales}
-        styles={[...styleWords, ...houseStyles.map(({ id, name }) => ({ value: id, label: name }))]}
+        styles={[...builtInChoices, ...houseStyles.map(({ id, name }) => ({ value: id, label: name }))]}
       />
     </>
   );
