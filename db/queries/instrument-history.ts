@@ -30,6 +30,15 @@ export async function historySheets(
   return [...rows];
 }
 
+/** The same for a customer's session, which reads no sheet: what own_sheets lets it know of its own. */
+export async function ownHistorySheets(db: Handle, instrumentId: string): Promise<HistorySheet[]> {
+  const rows = await db.execute<HistorySheet>(sql`
+    select id, stage, ${isoInstant(sql`taken_at`)} as "takenAt", job_id as "jobId",
+           humidity_percent as "humidityPercent", cents
+      from own_sheets(${instrumentId})`);
+  return [...rows];
+}
+
 export type InstrumentVisit = {
   jobId: string;
   visitId: string;

@@ -36,7 +36,13 @@ export async function lockTechnicians(db: Handle, shopId: string, ids: readonly 
 export async function insertVisit(
   db: Handle,
   shopId: string,
-  fields: VisitTime & { id: string; siteId: string; state: VisitState; notes: string | null },
+  fields: VisitTime & {
+    id: string;
+    siteId: string;
+    customerId: string;
+    state: VisitState;
+    notes: string | null;
+  },
 ) {
   const [row] = await db
     .insert(visit)

@@ -31,16 +31,21 @@ const time = {
   timeZone: visit.timeZone,
 };
 
+/** What of the site the session may see: the one it was booked by sees a site no longer, once it is another's. */
+const place = {
+  siteName: sql<string>`coalesce(${site.name}, '')`,
+  street: sql<string>`coalesce(${site.street}, '')`,
+  city: sql<string>`coalesce(${site.city}, '')`,
+  accessNotes: site.accessNotes,
+};
+
 const summary = {
   id: visit.id,
   state: visit.state,
   ...time,
   siteId: visit.siteId,
-  siteName: site.name,
-  street: site.street,
-  city: site.city,
-  accessNotes: site.accessNotes,
-  customerName: customer.name,
+  ...place,
+  customerName: sql<string>`coalesce(${customer.name}, '')`,
   version: visit.version,
 };
 
@@ -59,10 +64,7 @@ function chosen(shopId: string, filter: Filter): SQL | undefined {
     filter.from ? sql`${visit.startsLocal} >= ${filter.from}::date::timestamp` : undefined,
     filter.before ? sql`${visit.startsLocal} < ${filter.before}::date::timestamp` : undefined,
     filter.siteId ? eq(visit.siteId, filter.siteId) : undefined,
-    filter.customerId
-      ? sql`visit.site_id in (select s.id from site s where s.shop_id = ${shopId}
-          and s.customer_id = ${filter.customerId})`
-      : undefined,
+    filter.customerId ? eq(visit.customerId, filter.customerId) : undefined,
     filter.technicianId
       ? sql`exists (select 1 from visit_technician t where t.shop_id = ${shopId}
           and t.visit_id = visit.id and t.member_id = ${filter.technicianId})`
@@ -89,6 +91,7 @@ async function summaries(
       state: visit.state,
       ...time,
       siteId: visit.siteId,
+      customerId: visit.customerId,
       version: visit.version,
       orderKey: sql<string>`(visit.starts_local)::text`,
     })
@@ -97,29 +100,30 @@ async function summaries(
     .orderBy(orderBy(byStart(direction)))
     .limit(most);
   if (visits.length === 0) return [];
-  const places = await db
-    .select({
-      siteId: site.id,
-      siteName: site.name,
-      street: site.street,
-      city: site.city,
-      accessNotes: site.accessNotes,
-      customerName: sql<string>`(select c.name from customer c
-        where c.shop_id = ${shopId} and c.id = site.customer_id)`,
-    })
+  const each = (ids: readonly string[]) => [...new Set(ids)];
+  const sites = await db
+    .select({ id: site.id, ...place })
     .from(site)
-    .where(and(eq(site.shopId, shopId), inArray(site.id, [...new Set(visits.map(({ siteId }) => siteId))])));
-  const byId = new Map(places.map((place) => [place.siteId, place]));
-  return visits.flatMap((row) => {
-    const place = byId.get(row.siteId);
-    return place ? [{ ...row, ...place }] : [];
-  });
+    .where(and(eq(site.shopId, shopId), inArray(site.id, each(visits.map(({ siteId }) => siteId)))));
+  const customers = await db
+    .select({ id: customer.id, name: customer.name })
+    .from(customer)
+    .where(
+      and(
+        eq(customer.shopId, shopId),
+        inArray(customer.id, each(visits.map(({ customerId }) => customerId))),
+      ),
+    );
+  const placeById = new Map(sites.map(({ id, ...at }) => [id, at]));
+  const nameById = new Map(customers.map(({ id, name }) => [id, name]));
+  return visits.map(({ customerId, ...row }) => ({
+    ...row,
+    ...(placeById.get(row.siteId) ?? unseenPlace),
+    customerName: nameById.get(customerId) ?? "",
+  }));
 }
 
-/** What the wall says of a customer's session, once more where an index can answer it. */
-function atOwnSite(shopId: string): SQL {
-  return sql`visit.site_id in (select ${site.id} from ${site} where ${eq(site.shopId, shopId)} and ${isOwn(site.customerId)})`;
-}
+const unseenPlace = { siteName: "", street: "", city: "", accessNotes: null };
 
 function byStart(direction: Order["direction"]): Order {
   return { by: sql`visit.starts_local`, direction, id: sql`visit.id` };
@@ -128,7 +132,7 @@ function byStart(direction: Order["direction"]): Order {
 export async function listVisits(db: Handle, shopId: string, query: VisitListQuery, reach: Reach) {
   const rows = await summaries(db, shopId, {
     where: and(
-      reach === "own" ? atOwnSite(shopId) : undefined,
+      reach === "own" ? isOwn(visit.customerId) : undefined,
       chosen(shopId, {
         ...query,
         states: query.state ? [query.state] : undefined,
@@ -178,8 +182,8 @@ export async function visitById(db: Handle, shopId: string, id: string) {
   const [row] = await db
     .select({
       ...summary,
-      postalCode: site.postalCode,
-      customerId: customer.id,
+      postalCode: sql<string>`coalesce(${site.postalCode}, '')`,
+      customerId: visit.customerId,
       customerPhone: customer.phone,
       notes: visit.notes,
       movedToId: visit.movedToId,
@@ -188,8 +192,8 @@ export async function visitById(db: Handle, shopId: string, id: string) {
       updatedAt: visit.updatedAt,
     })
     .from(visit)
-    .innerJoin(site, and(eq(site.shopId, visit.shopId), eq(site.id, visit.siteId)))
-    .innerJoin(customer, and(eq(customer.shopId, site.shopId), eq(customer.id, site.customerId)))
+    .leftJoin(site, and(eq(site.shopId, visit.shopId), eq(site.id, visit.siteId)))
+    .leftJoin(customer, and(eq(customer.shopId, visit.shopId), eq(customer.id, visit.customerId)))
     .where(and(eq(visit.shopId, shopId), eq(visit.id, id)));
   return row;
 }
@@ -352,7 +356,13 @@ export async function busyOn(
 
 export async function siteForVisit(db: Handle, shopId: string, siteId: string) {
   const [row] = await db
-    .select({ id: site.id, name: site.name, timeZone: site.timeZone, archivedAt: site.archivedAt })
+    .select({
+      id: site.id,
+      customerId: site.customerId,
+      name: site.name,
+      timeZone: site.timeZone,
+      archivedAt: site.archivedAt,
+    })
     .from(site)
     .where(and(eq(site.shopId, shopId), eq(site.id, siteId)));
   return row;

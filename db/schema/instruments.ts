@@ -130,6 +130,7 @@ export const instrumentString = pgTable(
     diameterMm: doublePrecision("diameter_mm"),
     outerDiameterMm: doublePrecision("outer_diameter_mm"),
     ...stamps,
+    ...versioned,
   },
   (table) => [
     primaryKey({ columns: [table.shopId, table.instrumentId, table.midi] }),

@@ -15,7 +15,7 @@ import {
   uuid,
 } from "drizzle-orm/pg-core";
 import { instant, shopKey, stamps, versioned } from "./columns";
-import { site } from "./customers";
+import { customer, site } from "./customers";
 import { instrument } from "./instruments";
 import { member } from "./shop";
 import { appendOnlyWall, currentCustomer, shopWall } from "./walls";
@@ -44,6 +44,8 @@ export const visit = pgTable(
   {
     ...shopKey,
     siteId: uuid("site_id").notNull(),
+    /** Whose visit it is: the site's customer when it was booked. It stays theirs when the site becomes another's. */
+    customerId: uuid("customer_id").notNull(),
     state: visitState("state").notNull().default("offered"),
     startsLocal: timestamp("starts_local", { mode: "string" }).notNull(),
     endsLocal: timestamp("ends_local", { mode: "string" }).notNull(),
@@ -63,6 +65,10 @@ export const visit = pgTable(
   (table) => [
     primaryKey({ columns: [table.shopId, table.id] }),
     foreignKey({ columns: [table.shopId, table.siteId], foreignColumns: [site.shopId, site.id] }),
+    foreignKey({
+      columns: [table.shopId, table.customerId],
+      foreignColumns: [customer.shopId, customer.id],
+    }),
     foreignKey({ columns: [table.shopId, table.movedToId], foreignColumns: [table.shopId, table.id] }),
     foreignKey({ columns: [table.shopId, table.answersVisitId], foreignColumns: [table.shopId, table.id] }),
     index("visit_by_start").on(table.shopId, table.startsLocal, table.id),
@@ -74,14 +80,11 @@ export const visit = pgTable(
       .on(table.shopId, table.startsLocal, table.id)
       .where(sql`state in ('declined', 'moved', 'cancelled', 'missed')`),
     index("visit_of_site").on(table.shopId, table.siteId, table.startsLocal),
+    index("visit_of_customer").on(table.shopId, table.customerId, table.startsLocal),
     check("visit_ends_after_start", sql`${table.endsLocal} > ${table.startsLocal}`),
     check("visit_fold", sql`${table.startsFold} in (0, 1) and ${table.endsFold} in (0, 1)`),
     check("visit_within_a_day", sql`${table.endsLocal} <= ${table.startsLocal} + interval '24 hours'`),
-    ...shopWall(
-      "visit",
-      sql`exists (select 1 from site s where s.shop_id = visit.shop_id and s.id = visit.site_id
-        and s.customer_id = ${currentCustomer})`,
-    ),
+    ...shopWall("visit", sql`customer_id = ${currentCustomer}`),
   ],
 );
 
@@ -162,6 +165,11 @@ export const job = pgTable(
     }),
     uniqueIndex("job_once_a_visit").on(table.shopId, table.visitId, table.instrumentId),
     index("job_of_instrument").on(table.shopId, table.instrumentId),
-    ...shopWall("job", ofOwnVisit("job")),
+    // On a day when the instrument was somebody else's, its work is theirs to know. own_on is in the migration.
+    ...shopWall(
+      "job",
+      sql`exists (select 1 from visit v where v.shop_id = job.shop_id and v.id = job.visit_id
+        and own_on(job.instrument_id, v.starts_local::date))`,
+    ),
   ],
 );

@@ -70,6 +70,7 @@ export async function writeVisits(
       shopId,
       id,
       siteId: required(ids.sites, planned.customer.key),
+      customerId: required(ids.customers, planned.customer.key),
       state: planned.state,
       startsLocal,
       endsLocal: addMinutes(startsLocal, planned.minutes),

@@ -53,7 +53,7 @@ export async function createVisit(actor: Actor, input: NewVisit): Promise<VisitR
   return withIdInUse(() =>
     guardOverlap(actor, asked, async (tx) => {
       if (input.id && (await visitById(tx, actor.shopId, id))) return readVisit(tx, actor, id);
-      const { timeZone } = await bookableSite(tx, actor, input.siteId);
+      const { timeZone, customerId } = await bookableSite(tx, actor, input.siteId);
       const time = timeOrFaults(input, timeZone);
       asked.booking = { visitId: id, technicianIds: input.technicianIds, time };
       await requireBookable(tx, actor, input.technicianIds);
@@ -61,6 +61,7 @@ export async function createVisit(actor: Actor, input: NewVisit): Promise<VisitR
       const inserted = await insertVisit(tx, actor.shopId, {
         id,
         siteId: input.siteId,
+        customerId,
         state: input.state,
         notes: input.notes ?? null,
         ...time,

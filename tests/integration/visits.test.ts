@@ -555,8 +555,8 @@ describe("the database itself, as the role of the app", () => {
     const insert = (id: string, start: string, end: string) =>
       app.begin(async (tx) => {
         await tx`select set_config('app.shop_id', ${at.shopId}, true)`;
-        await tx`insert into visit (id, shop_id, site_id, starts_local, ends_local, time_zone, during)
-          values (${id}, ${at.shopId}, ${at.siteId}, ${start}, ${end}, 'Europe/Paris', '[2020-01-01,2020-01-02)')`;
+        await tx`insert into visit (id, shop_id, site_id, customer_id, starts_local, ends_local, time_zone, during)
+          values (${id}, ${at.shopId}, ${at.siteId}, ${at.customerId}, ${start}, ${end}, 'Europe/Paris', '[2020-01-01,2020-01-02)')`;
         await tx`insert into visit_technician (shop_id, visit_id, member_id, during, live)
           values (${at.shopId}, ${id}, ${at.ines.memberId}, 'empty', false)`;
         const [row] = await tx<

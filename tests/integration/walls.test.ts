@@ -145,8 +145,10 @@ describe("every table of the catalogue is walled", () => {
     const crossed = await errorOf(
       inShop(
         mine.shopId,
-        (sql) => sql`insert into visit (shop_id, id, site_id, starts_local, ends_local, time_zone)
-          values (${mine.shopId}, ${crypto.randomUUID()}, ${theirs.siteId}, '2027-01-04 09:00', '2027-01-04 10:00', 'Europe/Dublin')`,
+        (
+          sql,
+        ) => sql`insert into visit (shop_id, id, site_id, customer_id, starts_local, ends_local, time_zone)
+          values (${mine.shopId}, ${crypto.randomUUID()}, ${theirs.siteId}, ${mine.customerId}, '2027-01-04 09:00', '2027-01-04 10:00', 'Europe/Dublin')`,
       ),
     );
     expect(crossed).toBe("23503");

@@ -109,9 +109,10 @@ export async function makeVisit(
   const visitId = newId();
   const jobId = newId();
   const starts = what.starts ?? "2026-03-02 09:00";
-  await owner()`insert into visit (shop_id, id, site_id, state, starts_local, ends_local, time_zone)
-    values (${shopId}, ${visitId}, ${what.siteId}, ${what.state ?? "confirmed"}, ${starts}::text::timestamp,
-      ${starts}::text::timestamp + interval '2 hours', 'Europe/Dublin')`;
+  await owner()`insert into visit (shop_id, id, site_id, customer_id, state, starts_local, ends_local, time_zone)
+    select s.shop_id, ${visitId}, s.id, s.customer_id, ${what.state ?? "confirmed"}, ${starts}::text::timestamp,
+      ${starts}::text::timestamp + interval '2 hours', 'Europe/Dublin'
+    from site s where s.shop_id = ${shopId} and s.id = ${what.siteId}`;
   await owner()`insert into visit_technician (shop_id, visit_id, member_id)
     values (${shopId}, ${visitId}, ${what.memberId})`;
   await owner()`insert into job (shop_id, id, visit_id, instrument_id) values (${shopId}, ${jobId}, ${visitId}, ${what.instrumentId})`;

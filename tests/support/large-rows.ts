@@ -113,8 +113,9 @@ export const rows = [
       lateral (select case when e.era = 1 then 1 + n % ${size.sites} else w.site end) h(site)
     order by n, s`,
 
-  `insert into visit (shop_id, id, site_id, state, starts_local, ends_local, time_zone, during)
+  `insert into visit (shop_id, id, site_id, customer_id, state, starts_local, ends_local, time_zone, during)
     select pg_temp.made_id('shop', t.s, 0), pg_temp.made_id('visit', t.s, t.n), pg_temp.made_id('site', t.s, w.site),
+      pg_temp.made_id('customer', t.s, 1 + (w.site - 1) % ${size.customers}),
       case when t.starts > localtimestamp then case when t.n % 7 = 0 then 'offered' else 'confirmed' end
         when t.n % 40 = 0 then 'cancelled' when t.n % 41 = 0 then 'done' else 'closed' end::visit_state,
       t.starts, t.starts + interval '90 minutes', ${zone},

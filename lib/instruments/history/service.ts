@@ -1,6 +1,11 @@
 import "server-only";
 import { type Tx, withShop } from "@/db/client";
-import { historySheets, type InstrumentVisit, visitsOfInstrument } from "@/db/queries/instrument-history";
+import {
+  historySheets,
+  type InstrumentVisit,
+  ownHistorySheets,
+  visitsOfInstrument,
+} from "@/db/queries/instrument-history";
 import { openHoldingOf } from "@/db/queries/instrument-holdings";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
@@ -21,7 +26,9 @@ export async function historyWithin(tx: Tx, actor: Actor, instrumentId: string):
   const open = await openHoldingOf(tx, actor.shopId, instrumentId);
   const timeZone = open?.siteTimeZone ?? (await clockWithin(tx, actor.shopId)).timeZone;
   return historyOf(
-    await historySheets(tx, actor.shopId, instrumentId),
+    actor.role === "customer"
+      ? await ownHistorySheets(tx, instrumentId)
+      : await historySheets(tx, actor.shopId, instrumentId),
     await visitsOfInstrument(tx, actor.shopId, instrumentId),
     timeZone,
   );

@@ -131,6 +131,7 @@ async function insertSuccessor(
   const inserted = await insertVisit(tx, actor.shopId, {
     id,
     siteId: before.site.id,
+    customerId: before.customer.id,
     state,
     notes: before.notes,
     ...time,
