@@ -34,8 +34,9 @@ it("goes from record to row and back without change", () => {
     speakingLengthMm: 1330,
     diameterMm: 1.2,
     outerDiameterMm: 4.6,
+    version: 3,
   };
-  const { midi: _, ...values } = record;
+  const { midi: _, version: __, ...values } = record;
   expect(parseRow(rowOf(record))).toEqual({ values });
   expect(isBlank(rowOf(record))).toBe(false);
   expect(isBlank(emptyRow(21))).toBe(true);

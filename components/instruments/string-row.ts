@@ -13,6 +13,8 @@ export type StringRow = {
   diameterMm: string;
   outerDiameterMm: string;
   errors: FieldErrors;
+  /** As somebody else saved this note meanwhile, null where they took it away; absent while nobody did. */
+  newer?: StringRecord | null;
   state: "saved" | "typed" | "saving" | "refused" | "empty";
 };
 
@@ -51,6 +53,27 @@ export function emptyRow(midi: number): StringRow {
     errors: {},
     state: "empty",
   };
+}
+
+/** What a row says, whatever its state; "402,5" and "402.5" are the same. */
+export function sameCells(one: StringRow, other: StringRow): boolean {
+  return (
+    one.wound === other.wound &&
+    stringColumns.every(({ field }) => readNumber(one[field]) === readNumber(other[field]))
+  );
+}
+
+/** "3 plain strings, 402 mm, 1 mm". */
+export function stringWords(record: StringRecord): string {
+  const { strings, wound, speakingLengthMm, diameterMm, outerDiameterMm } = record;
+  return [
+    `${strings} ${wound ? "wound" : "plain"} ${strings === 1 ? "string" : "strings"}`,
+    speakingLengthMm !== null && `${speakingLengthMm} mm long`,
+    diameterMm !== null && `${wound ? "core" : "wire"} ${diameterMm} mm`,
+    outerDiameterMm !== null && `outer ${outerDiameterMm} mm`,
+  ]
+    .filter(Boolean)
+    .join(", ");
 }
 
 export function isBlank(row: StringRow): boolean {

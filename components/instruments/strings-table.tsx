@@ -11,7 +11,7 @@ import { Disclosure } from "@/components/ui/disclosure";
 import { Sign } from "@/components/ui/sign";
 import { keyName } from "@/lib/acoustics/keys";
 import type { StringRecord } from "@/lib/instruments/schema";
-import { type StringRow, stringColumns } from "./string-row";
+import { type StringRow, stringColumns, stringWords } from "./string-row";
 import { type StringActions, useStrings } from "./use-strings";
 
 /** The scale by note. A row is saved when it is left; arrows and Enter go from note to note. */
@@ -26,7 +26,7 @@ export function StringsTable({
   actions: StringActions;
   canChange: boolean;
 }) {
-  const { rows, type, leave, paste } = useStrings(instrument, saved, actions);
+  const { rows, type, leave, settle, paste } = useStrings(instrument, saved, actions);
   const table = useRef<HTMLTableElement>(null);
 
   function onKey(event: KeyboardEvent<HTMLTableElement>) {
@@ -74,7 +74,7 @@ export function StringsTable({
           </thead>
           <tbody>
             {rows.map((row) => (
-              <NoteRow key={row.midi} row={row} type={type} canChange={canChange} />
+              <NoteRow key={row.midi} row={row} type={type} settle={settle} canChange={canChange} />
             ))}
           </tbody>
         </table>
@@ -86,10 +86,12 @@ export function StringsTable({
 function NoteRow({
   row,
   type,
+  settle,
   canChange,
 }: {
   row: StringRow;
   type: (midi: number, part: Partial<StringRow>) => void;
+  settle: (row: StringRow, take: "theirs" | "mine") => void;
   canChange: boolean;
 }) {
   const spoken = keyName(row.midi).replace("#", " sharp ");
@@ -123,7 +125,7 @@ function NoteRow({
             <input
               aria-label={`${spoken}: ${label}${unit ? `, ${unit}` : ""}`}
               aria-invalid={row.errors[field] ? true : undefined}
-              aria-describedby={errors.length > 0 ? errorId : undefined}
+              aria-describedby={errors.length > 0 || row.newer !== undefined ? errorId : undefined}
               data-midi={row.midi}
               data-field={field}
               inputMode={field === "strings" ? "numeric" : "decimal"}
@@ -161,6 +163,29 @@ function NoteRow({
           </td>
         </tr>
       ) : null}
+      {row.newer === undefined ? null : (
+        <tr className="border-b border-hairline bg-brass-wash">
+          <td colSpan={7} id={errorId} className="px-2 py-2" role="alert">
+            <p className="flex items-start gap-1.5">
+              <Sign name="half" className="mt-[3px] text-brass" />
+              <span>
+                {row.newer
+                  ? `Somebody saved this note meanwhile: ${stringWords(row.newer)}.`
+                  : "Somebody took this note away meanwhile."}{" "}
+                Yours is not saved yet.
+              </span>
+            </p>
+            <div className="mt-2 flex flex-wrap gap-2 pl-5">
+              <Button size="small" onClick={() => settle(row, "theirs")}>
+                Take theirs
+              </Button>
+              <Button size="small" onClick={() => settle(row, "mine")}>
+                Save mine over it
+              </Button>
+            </div>
+          </td>
+        </tr>
+      )}
     </>
   );
 }

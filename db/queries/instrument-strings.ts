@@ -1,6 +1,6 @@
 import { and, asc, eq, sql } from "drizzle-orm";
 import type { Handle } from "@/db/client";
-import { instrumentString } from "@/db/schema";
+import { instrument, instrumentString } from "@/db/schema";
 import type { StringInput } from "@/lib/instruments/schema";
 
 export async function stringsOf(db: Handle, shopId: string, instrumentId: string) {
@@ -12,13 +12,23 @@ export async function stringsOf(db: Handle, shopId: string, instrumentId: string
       speakingLengthMm: instrumentString.speakingLengthMm,
       diameterMm: instrumentString.diameterMm,
       outerDiameterMm: instrumentString.outerDiameterMm,
+      version: instrumentString.version,
     })
     .from(instrumentString)
     .where(and(eq(instrumentString.shopId, shopId), eq(instrumentString.instrumentId, instrumentId)))
     .orderBy(asc(instrumentString.midi));
 }
 
-/** A note has one row, so saving it again replaces it; what is left out is not known any more. */
+/** Two writers of one scale wait for each other here, so that each sees what the other wrote. */
+export async function lockScale(db: Handle, shopId: string, instrumentId: string): Promise<void> {
+  await db
+    .select({ id: instrument.id })
+    .from(instrument)
+    .where(and(eq(instrument.shopId, shopId), eq(instrument.id, instrumentId)))
+    .for("no key update");
+}
+
+/** A note has one row, so saving it again replaces it; what is left out is not known any more. The same again is no change. */
 export async function putStrings(
   db: Handle,
   shopId: string,
@@ -47,8 +57,12 @@ export async function putStrings(
         speakingLengthMm: sql`excluded.speaking_length_mm`,
         diameterMm: sql`excluded.diameter_mm`,
         outerDiameterMm: sql`excluded.outer_diameter_mm`,
+        version: sql`instrument_string.version + 1`,
         updatedAt: sql`now()`,
       },
+      setWhere: sql`(instrument_string.strings, instrument_string.wound, instrument_string.speaking_length_mm,
+        instrument_string.diameter_mm, instrument_string.outer_diameter_mm) is distinct from (excluded.strings,
+        excluded.wound, excluded.speaking_length_mm, excluded.diameter_mm, excluded.outer_diameter_mm)`,
     });
 }
 

@@ -159,15 +159,23 @@ const stringShape = z.object({
 });
 
 /** One note of the scale: what it is strung with. */
-export const stringInput = stringShape.superRefine((row, context) => {
-  for (const [path, message] of Object.entries(stringFaults(row))) {
-    context.addIssue({ code: "custom", path: [path], message });
-  }
-});
+export const stringInput = stringShape
+  .extend({
+    /** The version that was changed, 0 where there was none; left out, it is written whatever is there. */
+    version: z.int().nonnegative().optional(),
+  })
+  .superRefine((row, context) => {
+    for (const [path, message] of Object.entries(stringFaults(row))) {
+      context.addIssue({ code: "custom", path: [path], message });
+    }
+  });
 
-export const stringRecord = stringShape.required().extend({ midi: z.int() });
+export const stringRecord = stringShape.required().extend({ midi: z.int(), version: z.int() });
 export const stringList = z.object({ items: z.array(stringRecord), next: z.null() });
 export const stringParams = z.object({ id: z.uuid(), midi: z.coerce.number().int().min(9).max(120) });
+export const stringQuery = z.object({ version: z.coerce.number().int().positive().optional() });
+/** What a stale scale carries: the notes somebody else changed, as they are now; those taken away are not among them. */
+export const changedStrings = z.object({ midis: z.array(z.int()), items: z.array(stringRecord) });
 /** A pasted scale: all of it is saved or none. */
 export const stringsInput = z.object({
   rows: z
@@ -186,4 +194,5 @@ export type NewHolding = z.infer<typeof newHolding>;
 export type HoldingChange = z.infer<typeof holdingChange>;
 export type StringInput = z.infer<typeof stringInput>;
 export type StringRecord = z.infer<typeof stringRecord>;
+export type ChangedStrings = z.infer<typeof changedStrings>;
 export type StringsInput = z.infer<typeof stringsInput>;

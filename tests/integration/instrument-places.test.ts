@@ -152,7 +152,15 @@ describe("an instrument's strings", () => {
     await saveString(shop.office, id, 69, plain);
     await saveString(shop.office, id, 69, parseInput(stringInput, { strings: 2, wound: false }));
     expect((await findStrings(shop.office, id)).items).toEqual([
-      { midi: 69, strings: 2, wound: false, speakingLengthMm: null, diameterMm: null, outerDiameterMm: null },
+      {
+        midi: 69,
+        strings: 2,
+        wound: false,
+        speakingLengthMm: null,
+        diameterMm: null,
+        outerDiameterMm: null,
+        version: 2,
+      },
     ]);
     await removeString(shop.office, id, 69);
     expect((await findStrings(shop.office, id)).items).toEqual([]);
@@ -176,6 +184,47 @@ describe("an instrument's strings", () => {
       parseInput(stringsInput, { rows: [rows[0], { midi: 41, values: plain }] }),
     );
     expect(saved.items.map((row) => row.midi)).toEqual([40, 41]);
+  });
+
+  it("answers a note that somebody else changed meanwhile with the note as it is now", async () => {
+    const { shop, id } = await pianoAtHome();
+    const seen = await saveString(shop.office, id, 69, { ...plain, version: 0 });
+    await saveString(shop.owner, id, 69, { ...plain, strings: 2, version: seen.version });
+    const current = { midis: [69], items: [expect.objectContaining({ midi: 69, strings: 2, version: 2 })] };
+    for (const write of [
+      () => saveString(shop.office, id, 69, { ...plain, diameterMm: 0.95, version: seen.version }),
+      () => saveString(shop.office, id, 69, { ...plain, diameterMm: 0.95, version: 0 }),
+      () => removeString(shop.office, id, 69, seen.version),
+      () =>
+        saveStrings(shop.office, id, {
+          rows: [
+            { midi: 70, values: { ...plain, version: 0 } },
+            { midi: 69, values: { ...plain, version: seen.version } },
+          ],
+        }),
+    ]) {
+      await expect(write()).rejects.toMatchObject({ code: "stale", more: { current } });
+    }
+    // Nothing of the stale scale was written.
+    expect((await findStrings(shop.office, id)).items.map(({ midi }) => midi)).toEqual([69]);
+    // The same strings sent again, after an answer that was lost, are no conflict and no change.
+    expect(await saveString(shop.owner, id, 69, { ...plain, strings: 2, version: 1 })).toMatchObject({
+      version: 2,
+    });
+    await removeString(shop.office, id, 69, 2);
+    await expect(saveString(shop.owner, id, 69, { ...plain, version: 2 })).rejects.toMatchObject({
+      code: "stale",
+      more: { current: { midis: [69], items: [] } },
+    });
+  });
+
+  it("lets one of two writers of a new note win, and tells the other", async () => {
+    const { shop, id } = await pianoAtHome();
+    const written = await Promise.allSettled(
+      [2, 3, 1, 4].map((strings) => saveString(shop.office, id, 69, { ...plain, strings, version: 0 })),
+    );
+    expect(written.filter(({ status }) => status === "fulfilled")).toHaveLength(1);
+    expect((await findStrings(shop.office, id)).items[0]?.version).toBe(1);
   });
 
   it("names the field: a wrap needs a wound string, a core and more than the core's thickness", () => {

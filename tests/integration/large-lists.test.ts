@@ -167,7 +167,7 @@ describe("a shop of 5 000 instruments among twenty, for staff", () => {
       hold(`visits of ${words}`, () => lists.visits(office, query), index, buffers);
     await of("a day", { from: here.day, to: here.day }, "visit_by_start", 2_400);
     await of("a site", { siteId: here.site }, "visit_of_site", 500);
-    await of("a customer", { customerId: conservatory.customerId ?? "" }, "visit_of_site", 3_000);
+    await of("a customer", { customerId: conservatory.customerId ?? "" }, "visit_of_customer", 3_000);
     await of("an instrument", { instrumentId: here.instrument }, "job_of_instrument", 500);
     await of("a technician", { technicianId: technician.memberId }, "visit_by_start", 3_000);
     await hold("a day's work", () => workDay(office, here.day), "visit_by_start", 3_000);
@@ -225,7 +225,7 @@ describe("a customer's session in such a shop", () => {
     ["sites", { sort: "city" }, "site_of_customer", 80],
     ["instruments", { sort: "place" }, "instrument_holding_owner", 120],
     ["instruments", { q: "house" }, "instrument_holding_owner", 120],
-    ["visits", {}, "visit_of_site", 200],
+    ["visits", {}, "visit_of_customer", 200],
   ] as const)("of two instruments, reads %s %j and little else", async (name, query, index, buffers) => {
     const words = [name, ...Object.values(query), "a household's own"].join(", ");
     const page = await hold(words, () => lists[name](household, query), index, buffers);
@@ -238,7 +238,7 @@ describe("a customer's session in such a shop", () => {
     ["sites", {}, "site_of_customer", 5_000],
     ["instruments", {}, "instrument_holding_owner", 7_000],
     ["instruments", { sort: "place" }, "instrument_holding_owner", 7_000],
-    ["visits", {}, "visit_of_site", 4_000],
+    ["visits", {}, "visit_of_customer", 4_000],
   ] as const)("of 300 instruments, reads %s %j of its own", async (name, query, index, buffers) => {
     await hold(
       [name, ...Object.values(query), "a conservatory's own"].join(", "),

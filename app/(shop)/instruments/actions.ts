@@ -91,9 +91,9 @@ export const saveStringsAction = defineAction({
 export const removeStringAction = defineAction({
   name: "instruments.remove-string",
   permission: "instruments.change",
-  input: noteOf,
-  run: async (actor, { instrumentId, midi }) => {
-    await removeString(actor, instrumentId, midi);
+  input: noteOf.extend({ version: z.int().positive().optional() }),
+  run: async (actor, { instrumentId, midi, version }) => {
+    await removeString(actor, instrumentId, midi, version);
     return { midi };
   },
 });

@@ -19,5 +19,6 @@ export const PUT = defineRoute({
   params: idParams,
   body: stringsInput,
   response: stringList,
+  problems: ["stale"],
   handle: ({ actor, params, body }) => saveStrings(actor, params.id, body),
 });

@@ -1,5 +1,5 @@
 import { defineRoute } from "@/lib/doors/define-route";
-import { stringInput, stringParams, stringRecord } from "@/lib/instruments/schema";
+import { stringInput, stringParams, stringQuery, stringRecord } from "@/lib/instruments/schema";
 import { removeString, saveString } from "@/lib/instruments/strings/service";
 
 export const PUT = defineRoute({
@@ -9,6 +9,7 @@ export const PUT = defineRoute({
   params: stringParams,
   body: stringInput,
   response: stringRecord,
+  problems: ["stale"],
   handle: ({ actor, params, body }) => saveString(actor, params.id, params.midi, body),
 });
 
@@ -17,6 +18,8 @@ export const DELETE = defineRoute({
   permission: "instruments.change",
   summary: "Remove the strings of one note",
   params: stringParams,
+  query: stringQuery,
   status: 204,
-  handle: ({ actor, params }) => removeString(actor, params.id, params.midi),
+  problems: ["stale"],
+  handle: ({ actor, params, query }) => removeString(actor, params.id, params.midi, query.version),
 });
