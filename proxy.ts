@@ -7,6 +7,7 @@ import { type NextRequest, NextResponse } from "next/server";
 const open = [
   "/sign-in",
   "/sign-up",
+  "/confirm-address",
   "/second-step",
   "/forgot-password",
   "/reset-password",

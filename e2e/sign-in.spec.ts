@@ -2,7 +2,7 @@ import { type Browser, expect, type Page, test } from "@playwright/test";
 import { fromBase32, totp } from "../tests/support/totp";
 import { linkMailedTo } from "./support/mailbox";
 import { openNewShop, signIn } from "./support/new-shop";
-import { newPerson, newPersonByRequest } from "./support/people";
+import { newPerson } from "./support/people";
 
 const doNotGoTogether = "The address and the password do not go together.";
 
@@ -38,7 +38,7 @@ test("a forgotten password is set anew by a mailed link that works once and ends
   browser,
 }) => {
   const lost = await otherDevice(browser);
-  const person = await newPersonByRequest(lost.request, "Wilma Reddle");
+  const person = await openNewShop(lost, "Reddle Pianos", "Wilma Reddle");
   await page.goto("/sign-in");
   await page.getByRole("link", { name: "Forgotten?" }).click();
   const ask = page.getByRole("form", { name: "Forgotten password" });
@@ -57,17 +57,17 @@ test("a forgotten password is set anew by a mailed link that works once and ends
   await form.getByRole("button", { name: "Set the password" }).click();
   await expect(page.getByRole("status")).toContainText("The new password is set");
 
-  await lost.goto("/open-shop");
+  await lost.goto("/today");
   await expect(lost).toHaveURL(/\/sign-in/);
   await signIn(page, person);
   await expect(page.getByRole("form").getByRole("alert")).toContainText(doNotGoTogether);
   await signIn(page, { email: person.email, password });
-  await expect(page.getByRole("heading", { name: "Open your shop’s book" })).toBeVisible();
+  await expect(page).toHaveURL(/\/today$/);
 
   await page.goto(link);
-  await form.getByLabel("New password").fill("another estuary of slow geese");
-  await form.getByRole("button", { name: "Set the password" }).click();
-  await expect(form.getByRole("alert")).toContainText("has been used or has expired");
+  await expect(page.getByRole("alert").filter({ hasText: "has been used or has expired" })).toBeVisible();
+  await page.getByRole("link", { name: "Ask for a new link" }).click();
+  await expect(page.getByRole("form", { name: "Forgotten password" })).toBeVisible();
 });
 
 test("an address nobody signs in with gets the same answer, and no mail", async ({ page }) => {
@@ -76,6 +76,53 @@ test("an address nobody signs in with gets the same answer, and no mail", async 
   await page.getByLabel("Mail address").fill(email);
   await page.getByRole("button", { name: "Send the link" }).click();
   await expect(page.getByRole("status")).toContainText(`If ${email} has a sign-in here`);
+});
+
+test("a sign-up waits for its mailed link, which asks another browser for the password", async ({
+  page,
+  browser,
+}) => {
+  const owner = newPerson("Juno Marsh");
+  await page.goto("/sign-up");
+  const form = page.getByRole("form", { name: "Open your shop’s book" });
+  await form.getByLabel("Your name").fill(owner.name);
+  await form.getByLabel("Mail address").fill(owner.email);
+  await form.getByLabel("Password", { exact: true }).fill(owner.password);
+  await form.getByLabel("Shop’s name").fill("Marsh Pianos");
+  await form.getByRole("button", { name: "Open the book" }).click();
+  await expect(page.getByRole("status")).toContainText(`We have sent a mail to ${owner.email}`);
+  await expect(page.getByRole("link", { name: "Open the local mailbox" })).toBeVisible();
+
+  await page.goto("/sign-in");
+  await signIn(page, owner);
+  await expect(page.getByRole("form", { name: "Sign in" }).getByRole("alert")).toContainText(
+    "not confirmed yet",
+  );
+  await expect(page.getByRole("button", { name: "Send the mail again" })).toBeVisible();
+
+  const phone = await otherDevice(browser);
+  await phone.goto(await linkMailedTo(owner.email, /Confirm your address/));
+  const confirm = phone.getByRole("form", { name: "Confirm your address" });
+  await confirm.getByRole("button", { name: "Confirm and go on" }).click();
+  await expect(confirm.getByRole("alert")).toContainText("Type the password you chose");
+  await confirm.getByLabel("Password", { exact: true }).fill(owner.password);
+  await confirm.getByRole("button", { name: "Confirm and go on" }).click();
+  await expect(phone).toHaveURL(/\/today$/);
+  await phone.goto("/shop");
+  await expect(phone.getByText("Marsh Pianos").first()).toBeVisible();
+});
+
+test("an address that signs in already is told in a mail only", async ({ page, browser }) => {
+  const known = await openNewShop(await otherDevice(browser), "Well Known Pianos");
+  await page.goto("/sign-up");
+  const form = page.getByRole("form", { name: "Open your shop’s book" });
+  await form.getByLabel("Your name").fill("Somebody Else");
+  await form.getByLabel("Mail address").fill(known.email);
+  await form.getByLabel("Password", { exact: true }).fill("seven larches lean to the west");
+  await form.getByLabel("Shop’s name").fill("Nobody’s Pianos");
+  await form.getByRole("button", { name: "Open the book" }).click();
+  await expect(page.getByRole("status")).toContainText(`We have sent a mail to ${known.email}`);
+  expect(await linkMailedTo(known.email, /have a sign-in for Agraffe already/)).toMatch(/\/sign-in$/);
 });
 
 test("an invited technician joins by the mailed link, under the address invited and with that role", async ({

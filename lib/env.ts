@@ -17,7 +17,7 @@ const schema = z.object({
   MAILBOX_URL: z.url().optional(),
   LOG_LEVEL: z.enum(["fatal", "error", "warn", "info", "debug", "trace", "silent"]).default("info"),
   DATABASE_POOL: z.coerce.number().int().min(1).max(100).default(10),
-  /** Proxies in front of the server whose X-Forwarded-For entries are believed. */
+  /** Proxies of your own in front of the server, whose entries in X-Forwarded-For are believed. */
   TRUSTED_PROXIES: z.coerce.number().int().min(0).max(5).default(0),
 });
 

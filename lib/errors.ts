@@ -4,9 +4,11 @@ export const statusOfCode = {
   malformed: 400,
   "signed-out": 401,
   forbidden: 403,
+  unconfirmed: 403,
   "not-found": 404,
   stale: 409,
   conflict: 409,
+  "needs-confirming": 409,
   "id-in-use": 409,
   "visit-overlap": 409,
   "move-not-allowed": 409,
@@ -30,7 +32,7 @@ export class AppError extends Error {
     readonly more: {
       /** Path of the field, as "readings.3.hz", to what is wrong with it. */
       fields?: FieldErrors;
-      /** For `stale`: the record as it is now. */
+      /** For `stale`: the record as it is now. For `needs-confirming`: what there is to know before. */
       current?: unknown;
       retryAfterSeconds?: number;
     } = {},
@@ -51,6 +53,11 @@ export function notFound(what: string): AppError {
 
 export function invalid(fields: FieldErrors, message = "Some fields need another look."): AppError {
   return new AppError("invalid", message, { fields });
+}
+
+/** Done when it is sent once more with `confirm`: not wrong, but perhaps not what was meant. */
+export function needsConfirming(message: string, more: { fields?: FieldErrors; current?: unknown }): AppError {
+  return new AppError("needs-confirming", message, more);
 }
 
 export function stale(what: string, current: unknown): AppError {

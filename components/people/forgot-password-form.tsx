@@ -4,17 +4,17 @@ import { useState } from "react";
 import { ActionForm, SubmitButton } from "@/components/forms/action-form";
 import { TextInput } from "@/components/forms/text-input";
 import { useActionForm } from "@/components/forms/use-action-form";
-import { AppLink } from "@/components/ui/app-link";
 import { StateWord } from "@/components/ui/state-word";
-import type { ActionResult } from "@/lib/doors/action-result";
 import { resetRequest } from "@/lib/people/schema";
+import { MailboxLink } from "./mailbox-link";
+import type { MailingTo } from "./mailing-to";
 
 export function ForgotPasswordForm({
   action,
   mailboxHref,
   unavailable,
 }: {
-  action: (input: unknown) => Promise<ActionResult<{ email: string }>>;
+  action: MailingTo;
   mailboxHref: string | null;
   unavailable: string | null;
 }) {
@@ -32,13 +32,7 @@ export function ForgotPasswordForm({
           <span className="break-words">If {sentTo} has a sign-in here, a mail is on its way.</span>
         </StateWord>
         <p>The link in it works once, for one hour. Look among the unwanted mail if it does not come.</p>
-        {mailboxHref ? (
-          <p>
-            <AppLink href={mailboxHref} className="link link-alone">
-              Open the local mailbox
-            </AppLink>
-          </p>
-        ) : null}
+        <MailboxLink href={mailboxHref} />
       </div>
     );
   }

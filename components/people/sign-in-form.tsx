@@ -8,13 +8,20 @@ import { AppLink } from "@/components/ui/app-link";
 import { signInInput } from "@/lib/people/schema";
 import { type DemoPeople, DemoSignIns } from "./demo-sign-ins";
 import { type GoingOn, goTo } from "./go-to";
+import { MailboxLink } from "./mailbox-link";
+import type { MailingTo } from "./mailing-to";
+import { SendConfirmationAgain } from "./send-confirmation-again";
 
 export function SignInForm({
   action,
+  sendConfirmation,
+  mailboxHref,
   next,
   demo,
 }: {
   action: GoingOn;
+  sendConfirmation: MailingTo;
+  mailboxHref: string | null;
   next: string;
   demo: DemoPeople | null;
 }) {
@@ -57,6 +64,12 @@ export function SignInForm({
           Sign in
         </SubmitButton>
       </ActionForm>
+      {state.failure?.code === "unconfirmed" ? (
+        <div className="mt-4 grid gap-3">
+          <SendConfirmationAgain email={state.form.getValues("email")} action={sendConfirmation} />
+          <MailboxLink href={mailboxHref} />
+        </div>
+      ) : null}
       {demo ? (
         <DemoSignIns
           demo={demo}

@@ -15,6 +15,7 @@ const open = (address: string): Visited => ({ as: null, at: () => address });
 
 /** Every page of the product, opened by somebody whom it serves. A page without a line here fails the test. */
 export const allPages: Record<string, Visited> = {
+  "/(auth)/confirm-address/page": open("/confirm-address?token=none"),
   "/(auth)/forgot-password/page": open("/forgot-password"),
   "/(auth)/invitation/[token]/page": open("/invitation/no-such-token"),
   "/(auth)/open-shop/page": staff("owner", () => "/open-shop"),

@@ -9,12 +9,13 @@ async function mailsTo(address: string): Promise<Mail[]> {
   return (await answer.json()) as Mail[];
 }
 
-/** The link in the only mail to this address; mails sent in the background arrive a little later. */
+/** The link in the only such mail to this address; mails sent in the background arrive a little later. */
 export async function linkMailedTo(address: string, subject: RegExp): Promise<string> {
-  await expect.poll(async () => (await mailsTo(address)).length, { message: `a mail to ${address}` }).toBe(1);
-  const [mail] = await mailsTo(address);
-  expect(mail?.subject).toMatch(subject);
-  const link = /https?:\/\/\S+/.exec(mail?.text ?? "")?.[0];
+  const found = async () => (await mailsTo(address)).filter((mail) => subject.test(mail.subject));
+  await expect.poll(async () => (await found()).length, { message: `a mail to ${address}` }).toBe(1);
+  const [mail] = await found();
+  // The button's own link stands on a line by itself.
+  const link = /^https?:\/\/\S+$/m.exec(mail?.text ?? "")?.[0];
   if (!link) throw new Error(`There is no link in: ${mail?.text}`);
   return link;
 }

@@ -1,4 +1,5 @@
 import { expect, type Page } from "@playwright/test";
+import { linkMailedTo } from "./mailbox";
 import { newPerson } from "./people";
 
 /** A shop of the test's own, opened on the page as anybody would; what it does cannot meet another test. */
@@ -12,6 +13,9 @@ export async function openNewShop(page: Page, shopName: string, ownerName = "Ida
   await form.getByLabel("Shop’s name").fill(shopName);
   await form.getByLabel("Country").selectOption("IE");
   await form.getByRole("button", { name: "Open the book" }).click();
+  await expect(page.getByRole("status")).toContainText(`We have sent a mail to ${owner.email}`);
+  await page.goto(await linkMailedTo(owner.email, /Confirm your address/));
+  await page.getByRole("button", { name: "Confirm and go on" }).click();
   await expect(page).toHaveURL(/\/today$/);
   return owner;
 }

@@ -28,17 +28,6 @@ export async function signInByRequest(request: APIRequestContext, email: string,
   expect(answer.status(), `signing in as ${email}`).toBe(200);
 }
 
-/** A person of the test's own, signed in by the request, who belongs to no shop yet. */
-export async function newPersonByRequest(request: APIRequestContext, name: string) {
-  const person = newPerson(name);
-  const answer = await request.post("/api/auth/sign-up/email", {
-    data: person,
-    headers: { origin: ownOrigin() },
-  });
-  expect(answer.status(), `signing up ${person.email}`).toBe(200);
-  return person;
-}
-
 export function newPerson(name: string) {
   return {
     name,

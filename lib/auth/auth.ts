@@ -1,20 +1,21 @@
 import "server-only";
 import { betterAuth } from "better-auth";
 import { drizzleAdapter } from "better-auth/adapters/drizzle";
-import { APIError } from "better-auth/api";
 import { hashPassword, verifyPassword } from "better-auth/crypto";
 import { nextCookies } from "better-auth/next-js";
 import { twoFactor } from "better-auth/plugins";
-import { eq } from "drizzle-orm";
+import { and, eq } from "drizzle-orm";
 import { authDb } from "@/db/client";
 import { account, person, rateLimit, twoFactor as secondStep, session, verification } from "@/db/schema";
+import { clientAddressHeader } from "@/lib/doors/client-address";
 import { env } from "@/lib/env";
 import { newId } from "@/lib/ids";
 import { log } from "@/lib/log";
-import { mailInBackground } from "@/lib/mail/send";
-import { passwordResetMail } from "@/lib/mail/templates/password-reset";
 import { afterAccountWrite, beforeAccountWrite } from "./guards";
 import { longest, normalisePassword, shortestWithSecondStep } from "./passwords";
+import { mailConfirmationLink, mailResetLink, mailThatAddressIsKnown } from "./person-mails";
+import { plainName } from "./plain-name";
+import { isProvenAddress } from "./proven-address";
 
 function localOrigins(appUrl: string): string[] {
   const { port, protocol } = new URL(appUrl);
@@ -68,10 +69,24 @@ function build() {
         hash: (password) => hashPassword(normalisePassword(password)),
         verify: ({ hash, password }) => verifyPassword({ hash, password: normalisePassword(password) }),
       },
-      sendResetPassword: async ({ user, token }) => {
-        const link = `${settings.APP_URL}/reset-password?token=${encodeURIComponent(token)}`;
-        // Not awaited: how long the answer takes must not tell whether the address is known.
-        mailInBackground(passwordResetMail({ to: user.email, name: user.name, link }));
+      // Signing up answers the same whether the address is known or not; the mail tells its owner which.
+      requireEmailVerification: true,
+      customSyntheticUser: ({ coreFields, id }) => ({
+        ...coreFields,
+        name: plainName(coreFields.name),
+        image: null,
+        twoFactorEnabled: false,
+        id,
+      }),
+      onExistingUserSignUp: async ({ user }) => mailThatAddressIsKnown(user.email),
+      sendResetPassword: async ({ user, token }) => mailResetLink(user, token),
+      onPasswordReset: async ({ user }) => noteProvenAddress(user.id),
+    },
+    emailVerification: {
+      expiresIn: 24 * 60 * 60,
+      autoSignInAfterVerification: true,
+      sendVerificationEmail: async ({ user, token }) => {
+        if (!user.emailVerified) mailConfirmationLink(user.email, token);
       },
     },
     session: {
@@ -97,28 +112,27 @@ function build() {
       disableOriginCheck: false,
       disableCSRFCheck: false,
       cookiePrefix: "agraffe",
+      ipAddress: { ipAddressHeaders: [clientAddressHeader] },
       database: { generateId: () => newId() },
       defaultCookieAttributes: { sameSite: "lax", httpOnly: true },
     },
     hooks: { before: beforeAccountWrite, after: afterAccountWrite },
     databaseHooks: {
       user: {
-        create: { before: async (user) => ({ data: { ...user, name: plainName(user.name), image: null } }) },
+        create: {
+          before: async (user) => ({
+            data: {
+              ...user,
+              name: plainName(user.name),
+              image: null,
+              emailVerified: isProvenAddress(user.email),
+            },
+          }),
+        },
       },
     },
     plugins: [twoFactor({ issuer: "Agraffe" }), nextCookies()],
   });
-}
-
-/** A name goes into mails and headings: one line, of a length that fits. */
-function plainName(name: string): string {
-  const plain = name
-    .replace(/[\p{Cc}\p{Cf}\s]+/gu, " ")
-    .trim()
-    .slice(0, 120);
-  if (!plain)
-    throw new APIError("UNPROCESSABLE_ENTITY", { code: "NAME_MISSING", message: "Give your name." });
-  return plain;
 }
 
 export type Auth = ReturnType<typeof build>;
@@ -140,8 +154,19 @@ export async function rememberShop(
   await authDb().update(session).set({ shopId }).where(where);
 }
 
-/** Asked only for the holder of a link that was mailed to this address. */
+/** The link that set the password was mailed to the person's address. */
+async function noteProvenAddress(personId: string): Promise<void> {
+  await authDb().update(person).set({ emailVerified: true }).where(eq(person.id, personId));
+}
+
+/**
+ * Asked only for the holder of a link that was mailed to this address. A sign-up that was never confirmed
+ * does not count: anybody may have begun it.
+ */
 export async function addressIsKnown(email: string): Promise<boolean> {
-  const rows = await authDb().select({ id: person.id }).from(person).where(eq(person.email, email));
+  const rows = await authDb()
+    .select({ id: person.id })
+    .from(person)
+    .where(and(eq(person.email, email), eq(person.emailVerified, true)));
   return rows.length > 0;
 }

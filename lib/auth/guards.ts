@@ -1,11 +1,14 @@
 import "server-only";
 import { APIError, createAuthMiddleware, getSessionFromCtx } from "better-auth/api";
 import { countRequest, forgetRequests } from "@/lib/doors/rate-limit";
+import { mailConfigured } from "@/lib/mail/send";
+import { knownDevice, rememberDevice } from "./device-cookie";
 import { passwordFault, shortestAlone } from "./passwords";
+import { plainName } from "./plain-name";
+import { isProvenAddress } from "./proven-address";
 
 /** Paths that set a password, and the field it comes in. */
 const passwordFields: Record<string, string> = {
-  "/sign-up/email": "password",
   "/reset-password": "newPassword",
   "/change-password": "newPassword",
 };
@@ -16,7 +19,7 @@ type Context = Parameters<Parameters<typeof createAuthMiddleware>[0]>[0];
 export const beforeAccountWrite = createAuthMiddleware(async (context) => {
   switch (context.path) {
     case "/sign-in/email":
-      return slowDownGuessing(String(context.body?.email ?? ""));
+      return slowDownGuessing(context);
     case "/two-factor/verify-totp":
     case "/two-factor/verify-backup-code":
       refuseTrustedDevice(context);
@@ -24,29 +27,65 @@ export const beforeAccountWrite = createAuthMiddleware(async (context) => {
       return;
     case "/two-factor/disable":
       return refuseShortPasswordAlone(String(context.body?.password ?? ""));
+    case "/sign-up/email":
+      return prepareSignUp(context);
   }
   const field = passwordFields[context.path];
   if (field) await refuseWeakPassword(context, String(context.body?.[field] ?? ""));
 });
 
 export const afterAccountWrite = createAuthMiddleware(async (context) => {
-  if (context.path !== "/sign-in/email" || context.context.returned instanceof APIError) return;
-  await forgetRequests(signInKey(String(context.body?.email ?? "")));
+  if (context.context.returned instanceof APIError) return;
+  if (context.path === "/sign-in/email") await forgetRequests(await guessKey(context));
+  const signedIn = context.context.newSession?.user;
+  if (!signedIn) return;
+  // With a second step the password alone is not a sign-in yet: this comes again after the code.
+  if (context.path === "/sign-in/email" && "twoFactorEnabled" in signedIn && signedIn.twoFactorEnabled)
+    return;
+  await rememberDevice(context, signedIn.email.toLowerCase());
 });
 
-function signInKey(email: string): string {
-  return `sign-in:${email.trim().toLowerCase()}`;
+async function guessKey(context: Context): Promise<string> {
+  const email = String(context.body?.email ?? "")
+    .trim()
+    .toLowerCase();
+  const device = await knownDevice(context, email);
+  return device ? `sign-in:${email}:${device}` : `sign-in:${email}`;
 }
 
-/** Besides the limit per address: an address can be forged in a header, an account cannot. */
-async function slowDownGuessing(email: string): Promise<void> {
-  const { allowed } = await countRequest(signInKey(email), { most: 20, seconds: 15 * 60 });
+/** Besides the limit per address: whoever guesses has many addresses, an account is one. */
+async function slowDownGuessing(context: Context): Promise<void> {
+  const { allowed } = await countRequest(await guessKey(context), { most: 20, seconds: 15 * 60 });
   if (!allowed) {
     throw new APIError("TOO_MANY_REQUESTS", {
       code: "TOO_MANY_SIGN_INS",
       message: "Too many sign-ins to this account failed. Wait a quarter of an hour, or reset the password.",
     });
   }
+}
+
+/**
+ * What is refused here is refused whether the address is known or not. A sign-up that was never confirmed
+ * makes way for the next one with its address: its link dies with it, so nobody confirms another's password.
+ */
+async function prepareSignUp(context: Context): Promise<void> {
+  const email = String(context.body?.email ?? "").toLowerCase();
+  if (!plainName(String(context.body?.name ?? "")))
+    throw new APIError("UNPROCESSABLE_ENTITY", { code: "NAME_MISSING", message: "Give your name." });
+  await refuseWeakPassword(context, String(context.body?.password ?? ""));
+  if (!isProvenAddress(email) && !mailConfigured()) {
+    throw new APIError("SERVICE_UNAVAILABLE", {
+      code: "NO_MAIL",
+      message: "Mail is not set up on this server, so an address cannot be confirmed. Set SMTP_URL.",
+    });
+  }
+  await context.context.adapter.deleteMany({
+    model: "user",
+    where: [
+      { field: "email", value: email },
+      { field: "emailVerified", value: false },
+    ],
+  });
 }
 
 /** A device that skips the second step would make a stolen laptop enough. */

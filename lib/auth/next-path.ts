@@ -6,6 +6,6 @@ export function ownPath(next: unknown, fallback = "/"): string {
   const url = new URL(next, base);
   // "//elsewhere" and its like resolve to another origin, or leave a path that would.
   if (url.origin !== base || url.pathname.startsWith("//")) return fallback;
-  if (/^\/(api|sign-in|sign-up|second-step)(\/|$)/.test(url.pathname)) return fallback;
+  if (/^\/(api|sign-in|sign-up|confirm-address|second-step)(\/|$)/.test(url.pathname)) return fallback;
   return url.pathname + url.search + url.hash;
 }

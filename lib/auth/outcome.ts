@@ -16,9 +16,13 @@ export function asRefusal(error: unknown, names: Names = {}): unknown {
         "invalid",
         "The address and the password do not go together. Check both, or set a new password.",
       );
-    case "USER_ALREADY_EXISTS":
-    case "USER_ALREADY_EXISTS_USE_ANOTHER_EMAIL":
-      return invalid({ email: "There is a sign-in for this address already. Sign in with it instead." });
+    case "EMAIL_NOT_VERIFIED":
+      return new AppError(
+        "unconfirmed",
+        "Your address is not confirmed yet. Look for our mail, also among the unwanted, and open its link.",
+      );
+    case "NO_MAIL":
+      return new AppError("unavailable", message);
     case "NAME_MISSING":
       return invalid({ name: message });
     case "WEAK_PASSWORD":

@@ -8,6 +8,7 @@ import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import { log, withRequest } from "@/lib/log";
 import type { ActionResult } from "./action-result";
+import { clientAddress } from "./client-address";
 import { parseInput } from "./fields";
 import { asAppError } from "./problem";
 import { countRequest, type Limit } from "./rate-limit";
@@ -35,7 +36,7 @@ export function defineAction<Access extends ActionDoor["permission"], Input exte
 
   async function answer(requestHeaders: Headers, input: unknown): Promise<Output> {
     let actor: Actor | null = null;
-    let limitKey = requestHeaders.get("x-forwarded-for")?.split(",").at(-1)?.trim() ?? "unknown";
+    let limitKey = clientAddress(requestHeaders);
     if (permission !== "anyone" && permission !== "signed-in") {
       actor = await requireActor(requestHeaders);
       limitKey = actor.memberId;

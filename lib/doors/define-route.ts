@@ -7,6 +7,7 @@ import { AppError, type ErrorCode } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import { log, withRequest } from "@/lib/log";
 import { readJson } from "./body";
+import { clientAddress } from "./client-address";
 import { parseInput } from "./fields";
 import { asAppError, problemResponse } from "./problem";
 import { countRequest, type Limit } from "./rate-limit";
@@ -106,8 +107,10 @@ export function defineRoute<
     const { permission } = definition;
     let actor: Actor | null = null;
     if (permission === "anyone") {
-      const address = request.headers.get("x-forwarded-for")?.split(",").at(-1)?.trim() ?? "unknown";
-      await limitTo(`route:${address}`, definition.limit ?? { most: 120, seconds: 60 });
+      await limitTo(
+        `route:${clientAddress(request.headers)}`,
+        definition.limit ?? { most: 120, seconds: 60 },
+      );
     } else {
       actor = await requireActor(request.headers);
       if (!may(actor.role, permission)) {

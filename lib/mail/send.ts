@@ -51,7 +51,3 @@ export async function sendMail(mail: Mail): Promise<void> {
   });
   log().info({ messageId: sent.messageId, subject: headerLine(mail.subject) }, "mail sent");
 }
-
-export function mailInBackground(mail: Mail): void {
-  sendMail(mail).catch((error: unknown) => log().error({ err: error }, "mail was not sent"));
-}

@@ -1,13 +1,12 @@
 import { z } from "zod";
 import { passwordFault } from "@/lib/auth/passwords";
+import { requiredText } from "@/lib/clean-text";
 import { country, locale, shopName, timeZone } from "@/lib/shop/schema";
 
-export const personName = z
-  .string()
-  .trim()
-  .min(1, "Give your name.")
-  .max(120, "At most 120 characters.")
-  .regex(/^[^\p{Cc}\p{Cf}]*$/u, "Write your name on one line.");
+export const personName = requiredText(120, "Give your name.").regex(
+  /^[^\p{Cc}\p{Cf}]*$/u,
+  "Write your name on one line.",
+);
 export const address = z
   .string()
   .trim()
@@ -50,6 +49,13 @@ export const signUpInput = openShopInput.extend({
   password: passwordAlone,
 });
 export const signUpForm = signUpInput.extend({ next });
+
+/** What the link in the mail needs. The password only in a browser other than the one that signed up. */
+export const confirmInput = z.object({
+  token: z.string().min(1).max(2000),
+  password: z.string().max(1000).optional(),
+});
+export const confirmationRequest = z.object({ email: address });
 
 export const resetRequest = z.object({ email: address });
 export const resetInput = z.object({ token: z.string().min(1).max(200), password: newPassword });
@@ -130,4 +136,4 @@ export type InvitationRecord = z.infer<typeof invitationRecord>;
 export type InvitationInput = z.infer<typeof invitationInput>;
 export type MemberChange = z.infer<typeof memberChange>;
 export type OpenShopInput = z.infer<typeof openShopInput>;
-export type SignUpInput = z.infer<typeof signUpInput>;
+export type SignUpForm = z.infer<typeof signUpForm>;

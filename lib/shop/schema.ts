@@ -1,13 +1,12 @@
 import { z } from "zod";
+import { requiredText } from "@/lib/clean-text";
 import { isTimeZone } from "@/lib/dates";
 import { countryCodes, currencyCodes, locales } from "./places";
 
-export const shopName = z
-  .string()
-  .trim()
-  .min(1, "Give the shop a name.")
-  .max(120, "At most 120 characters.")
-  .regex(/^[^\p{Cc}]*$/u, "Write the name on one line.");
+export const shopName = requiredText(120, "Give the shop a name.").regex(
+  /^[^\p{Cc}]*$/u,
+  "Write the name on one line.",
+);
 export const timeZone = z.string().max(60).refine(isTimeZone, "Choose a time zone from the list.");
 export const country = z.string().refine((code) => countryCodes.includes(code), "Choose a country.");
 const currency = z.string().refine((code) => currencyCodes.includes(code), "Choose a currency.");

@@ -42,7 +42,7 @@ export type Mailbox = Awaited<ReturnType<typeof startMailbox>>;
 
 /** The token at the end of the link in a mail. */
 export function linkToken(mail: Email): string {
-  const found = /(?:token=|invitation\/)([\w%-]+)/.exec(mail.text ?? "")?.[1];
+  const found = /(?:token=|invitation\/)([\w%.-]+)/.exec(mail.text ?? "")?.[1];
   if (!found) throw new Error(`No link in: ${mail.text}`);
   return decodeURIComponent(found);
 }

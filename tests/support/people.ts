@@ -2,10 +2,11 @@ import { randomInt, randomUUID } from "node:crypto";
 import postgres from "postgres";
 import { type Actor, personFrom } from "@/lib/auth/actor";
 import { auth } from "@/lib/auth/auth";
+import { clientAddressHeader } from "@/lib/doors/client-address";
 import { env } from "@/lib/env";
 import { newId } from "@/lib/ids";
 import { openShop } from "@/lib/people/opening/service";
-import { signUpPerson } from "@/lib/people/sign-in/service";
+import { signUpInvited } from "@/lib/people/sign-up/service";
 
 export const goodPassword = "seven larches lean west";
 
@@ -25,7 +26,7 @@ export function newBrowser(options: { address?: string; origin?: string } = {}) 
     const made = new Headers({
       origin: options.origin ?? env().APP_URL,
       "user-agent": "Test browser",
-      "x-forwarded-for": address,
+      [clientAddressHeader]: address,
     });
     if (cookies.size > 0)
       made.set("cookie", [...cookies].map(([name, value]) => `${name}=${value}`).join("; "));
@@ -56,9 +57,13 @@ export function newBrowser(options: { address?: string; origin?: string } = {}) 
     return { status: response.status, body: isJson ? await response.json() : null, set };
   }
 
+  const get = (path: string) =>
+    auth().handler(new Request(`${env().APP_URL}/api/auth${path}`, { headers: headers() }));
+
   return {
     headers,
     post,
+    get,
     cookies,
     signIn: (email: string, password = goodPassword) => post("/sign-in/email", { email, password }),
     async actor(): Promise<Actor> {
@@ -75,8 +80,9 @@ export function newAddress(): string {
   return `p${randomUUID().slice(0, 12)}@example.org`;
 }
 
+/** Signed in once already, with a confirmed address, as whoever follows an invitation is. */
 export async function newPerson(email = newAddress(), name = "Ida Farrow", password = goodPassword) {
-  return signUpPerson(new Headers({ "x-forwarded-for": "10.0.0.1" }), { name, email, password });
+  return signUpInvited(new Headers({ [clientAddressHeader]: "10.0.0.1" }), { name, email, password });
 }
 
 /** A shop of its own with its owner signed in. */

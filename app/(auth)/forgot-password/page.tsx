@@ -2,14 +2,13 @@ import type { Metadata } from "next";
 import { ForgotPasswordForm } from "@/components/people/forgot-password-form";
 import { AuthPage } from "@/components/shell/auth-page";
 import { AppLink } from "@/components/ui/app-link";
-import { env } from "@/lib/env";
+import { hasLocalMailbox } from "@/lib/mail/mailbox";
 import { mailConfigured } from "@/lib/mail/send";
 import { requestResetAction } from "./actions";
 
 export const metadata: Metadata = { title: "Forgotten password" };
 
 export default function ForgotPasswordPage() {
-  const localMailbox = Boolean(env().LOCAL_SERVICES && env().MAILBOX_URL);
   return (
     <AuthPage
       title="Forgotten password"
@@ -22,7 +21,7 @@ export default function ForgotPasswordPage() {
     >
       <ForgotPasswordForm
         action={requestResetAction}
-        mailboxHref={localMailbox ? "/mailbox" : null}
+        mailboxHref={hasLocalMailbox() ? "/mailbox" : null}
         unavailable={
           mailConfigured() ? null : "This server sends no mail. Ask whoever runs it to set SMTP_URL."
         }

@@ -7,7 +7,9 @@ import { StateWord } from "@/components/ui/state-word";
 import { currentPerson } from "@/lib/auth/actor";
 import { ownPath } from "@/lib/auth/next-path";
 import { env } from "@/lib/env";
+import { hasLocalMailbox } from "@/lib/mail/mailbox";
 import { demoSignIns } from "@/lib/people/demo-sign-ins";
+import { sendConfirmationAction } from "../confirm-address/actions";
 import { signInAction } from "./actions";
 
 export const metadata: Metadata = { title: "Sign in" };
@@ -41,7 +43,13 @@ export default async function SignInPage({
           </StateWord>
         </p>
       ) : null}
-      <SignInForm action={signInAction} next={goTo} demo={env().LOCAL_SERVICES ? demoSignIns : null} />
+      <SignInForm
+        action={signInAction}
+        sendConfirmation={sendConfirmationAction}
+        mailboxHref={hasLocalMailbox() ? "/mailbox" : null}
+        next={goTo}
+        demo={env().LOCAL_SERVICES ? demoSignIns : null}
+      />
     </AuthPage>
   );
 }

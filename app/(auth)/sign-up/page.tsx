@@ -7,7 +7,10 @@ import { AppLink } from "@/components/ui/app-link";
 import { currentPerson } from "@/lib/auth/actor";
 import { ownPath } from "@/lib/auth/next-path";
 import { newId } from "@/lib/ids";
+import { hasLocalMailbox } from "@/lib/mail/mailbox";
+import { mailConfigured } from "@/lib/mail/send";
 import { shopChoices } from "@/lib/shop/choices";
+import { sendConfirmationAction } from "../confirm-address/actions";
 import { signUpAction } from "./actions";
 
 export const metadata: Metadata = { title: "Open a book" };
@@ -35,6 +38,13 @@ export default async function SignUpPage({
     >
       <SignUpForm
         action={signUpAction}
+        sendAgain={sendConfirmationAction}
+        mailboxHref={hasLocalMailbox() ? "/mailbox" : null}
+        unavailable={
+          mailConfigured()
+            ? null
+            : "This server sends no mail, so your address cannot be confirmed. Ask whoever runs it to set SMTP_URL."
+        }
         next={next}
         shopId={newId()}
         choices={shopChoices((await headers()).get("accept-language"))}

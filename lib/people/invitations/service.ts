@@ -23,7 +23,7 @@ import { requireMail, sendMail } from "@/lib/mail/send";
 import { invitationMail } from "@/lib/mail/templates/invitation";
 import { constraintOf } from "@/lib/people/constraint";
 import type { InvitationInput, InvitationRecord } from "@/lib/people/schema";
-import { signUpPerson } from "@/lib/people/sign-in/service";
+import { signUpInvited } from "@/lib/people/sign-up/service";
 
 const daysOpen = 7;
 
@@ -213,7 +213,7 @@ export async function acceptAsNewPerson(
       `${behind.email} has a sign-in already. Sign in with it, then accept the invitation.`,
     );
   }
-  const person = await signUpPerson(
+  const person = await signUpInvited(
     requestHeaders,
     { name: input.name, email: behind.email, password: input.password },
     [behind.shopName],
