@@ -78,11 +78,17 @@ test("rows pasted from a spreadsheet are entered and saved at once, and can be t
   const { cell, row } = await openNewSheet(page);
   await addNote(page, "A3");
   const rows = ["A3", "E4", "A4"].map((note) => [note, ...run(note, [1, 2, 3, 4, 5])].join("\t"));
+  const saves: string[] = [];
+  page.on("request", (request) => {
+    if (request.method() === "PUT") saves.push(request.url());
+  });
   await paste(page, ["Note\t1\t2\t3\t4\t5", ...rows].join("\n"));
   await expect(page.getByText("3 notes entered.")).toBeVisible();
   await expect(cell("E4", 5)).toHaveValue(shownCents(partialCents("E4", 5)));
   for (const note of ["A3", "E4", "A4"]) await expect(row(note)).toContainText(/\d ± \d/);
   await expect(kept(page)).toContainText(/saved \d/);
+  // Each row goes once: those that were left together, the one in hand after its pause.
+  expect(saves.map((url) => url.replace(/^.*\/(?=notes)/, ""))).toEqual(["notes", "notes/57"]);
 
   await cell("A3", 1).focus();
   await page.keyboard.press("Control+z");
@@ -242,6 +248,30 @@ test("without network what is typed stays, through a reload too, and is saved wh
   await expect(kept(page)).toContainText(/saved \d/);
   await page.reload();
   await expect(cell("E5", 3)).toHaveValue(shownCents(partialCents("E5", 3)));
+});
+
+test("a reload while a save is on its way, and a change right after it, is no clash with oneself", async ({
+  page,
+}) => {
+  const { id, table, cell, row } = await openNewSheet(page);
+  await addNote(page, "A4");
+  // The server takes what it is sent, but its answer never reaches the page.
+  const silent = "**/api/v1/sheets/*/notes/**";
+  await page.route(silent, async (route) => {
+    await route.fetch();
+  });
+  await typeRun(page, run("A4", [1, 2, 3]));
+  const stored = async () => (await (await page.request.get(`/api/v1/sheets/${id}`)).json()).notes;
+  await expect.poll(async () => (await stored())[0]?.readings.length).toBe(3);
+  await typeRun(page, run("A4", [4]));
+  await page.unrouteAll({ behavior: "ignoreErrors" });
+  await page.reload();
+  await comesAlive(page);
+  await cell("A4", 5).focus();
+  await typeRun(page, run("A4", [5]));
+  await expect.poll(async () => (await stored())[0]?.readings.length).toBe(5);
+  await expect(table.getByText("somebody else")).toHaveCount(0);
+  await expect(row("A4")).toContainText(/usable|good/);
 });
 
 test("a note somebody else changed meanwhile shows both versions, and neither is lost before one is chosen", async ({

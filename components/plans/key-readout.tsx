@@ -30,7 +30,8 @@ export function KeyReadout({
           key: "b",
           label: (
             <>
-              <TimesTenTo exponent={exponent} />, all notes
+              <TimesTenTo exponent={exponent} />
+              <span className="hidden @xl:inline">, all notes</span>
             </>
           ),
           value: inharmonicity(key.b, halfBand(key), exponent),

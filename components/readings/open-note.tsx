@@ -1,5 +1,6 @@
 "use client";
 
+import { useEffect, useRef } from "react";
 import { fixed, hertz, inharmonicity } from "@/components/charts/format";
 import { OpenResidualLane } from "@/components/charts/residual-lane";
 import { Button } from "@/components/ui/button";
@@ -44,10 +45,12 @@ export function OpenNote(props: Props) {
   const key = rowKey(row.place);
   const points = residualPoints(fit);
   const shownPoints = points.some(({ partial }) => columns.includes(partial));
+  const box = useInSight([shownPoints, fit?.rejected.length, live.questions.length, row.trouble?.kind]);
   return (
     <div
-      className={cx(measures.wide && "grid", "pb-3")}
-      style={measures.wide ? frame(measures, columns) : undefined}
+      ref={box}
+      className={cx(measures.beside && "grid", "pb-3")}
+      style={measures.beside ? frame(measures, columns) : undefined}
     >
       <div className="min-w-0 overflow-hidden">
         {fit && shownPoints ? (
@@ -67,10 +70,15 @@ export function OpenNote(props: Props) {
       </div>
       <FitFacts
         fit={fit}
-        className={cx("text-12", measures.wide ? "px-3 pt-3" : "mx-3 max-w-80 pt-1", !fit && "hidden")}
+        style={measures.beside ? undefined : { marginLeft: measures.note }}
+        className={cx(
+          "text-12",
+          measures.beside ? "px-3 pt-3" : "mx-3 mt-1 max-w-120 gap-x-6! sm:grid-cols-[auto_auto_auto_auto]!",
+          !fit && "hidden",
+        )}
       />
       <div
-        className={cx("mt-1 grid gap-2 pr-3", measures.wide && "col-span-2")}
+        className={cx("mt-1 grid gap-2 pr-3", measures.beside && "col-span-2")}
         style={{ paddingLeft: measures.note }}
       >
         <NoteMatters
@@ -111,6 +119,21 @@ export function OpenNote(props: Props) {
   );
 }
 
+/** What is said of the note in hand is not left behind the bottom bar when the note is opened or the words grow. */
+function useInSight(grows: readonly unknown[]) {
+  const box = useRef<HTMLDivElement>(null);
+  useEffect(() => {
+    // A note that was chosen gets the cursor only after it is drawn.
+    const frame = requestAnimationFrame(() => {
+      if (!box.current?.closest("table")?.contains(document.activeElement)) return;
+      box.current.scrollIntoView({ block: "nearest" });
+      document.activeElement?.scrollIntoView({ block: "nearest" });
+    });
+    return () => cancelAnimationFrame(frame);
+  }, [...grows]);
+  return box;
+}
+
 function frame({ note, cell }: TableMeasures, columns: readonly number[]) {
   return { gridTemplateColumns: `${note + cell * columns.length + 12}px minmax(0, 1fr)` };
 }
@@ -122,7 +145,15 @@ function emptyWords(live: Live, row: Row): string {
     : "No fit yet.";
 }
 
-export function FitFacts({ fit, className }: { fit: FitResult | null; className?: string }) {
+export function FitFacts({
+  fit,
+  className,
+  style,
+}: {
+  fit: FitResult | null;
+  className?: string;
+  style?: React.CSSProperties | undefined;
+}) {
   if (!fit) return null;
   const f1Half = 1.96 * fit.f1SigmaCents * fit.f1Hz * (Math.LN2 / 1200);
   const facts = [
@@ -132,7 +163,10 @@ export function FitFacts({ fit, className }: { fit: FitResult | null; className?
     { name: "Partials used", value: `${fit.used.length} of ${fit.residuals.length}` },
   ];
   return (
-    <dl className={cx("grid grid-cols-[1fr_auto] content-start gap-x-3 gap-y-1.5 text-ink-soft", className)}>
+    <dl
+      className={cx("grid grid-cols-[1fr_auto] content-start gap-x-3 gap-y-1.5 text-ink-soft", className)}
+      style={style}
+    >
       {facts.map(({ name, value }) => (
         <div key={name} className="contents">
           <dt className="whitespace-nowrap">

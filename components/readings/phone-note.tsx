@@ -13,7 +13,7 @@ import { StateWord } from "@/components/ui/state-word";
 import type { ReadingUnit } from "@/lib/readings/typed-number";
 import { cellLook, cellText, halfB, residualPoints } from "./cell-look";
 import { expectedHalfCents } from "./expected-scatter";
-import { placeWords, warningWords } from "./fit-words";
+import { ownErrorWords, placeWords, warningWords } from "./fit-words";
 import type { Live } from "./live-fit";
 import { NoteMatters, PartialMatter } from "./note-matters";
 import type { OpenNoteActions } from "./open-note";
@@ -177,6 +177,7 @@ export function PhoneNote(props: Props) {
             {warningWords[warning]}
           </p>
         ))}
+        {live.fit?.b == null ? null : <p className="lab">{ownErrorWords}</p>}
         {canChange ? (
           <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
             <OtherTakes place={row.place} onChoose={actions.choose} />

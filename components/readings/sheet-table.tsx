@@ -1,19 +1,21 @@
 "use client";
 
-import { useRef } from "react";
-import { useWidth } from "@/components/charts/use-width";
 import { PowerOfTen } from "@/components/ui/glyphs";
 import type { ReadingUnit } from "@/lib/readings/typed-number";
 import { NoteRow } from "./note-row";
 import type { OpenNoteActions } from "./open-note";
 import type { Figures } from "./partial-cell";
+import { ROW_HOLDS_FIT, ROW_HOLDS_TEN } from "./partial-columns";
 import { emptyRow, type Row, rowKey } from "./sheet-row";
 import { shownRows } from "./sheet-state";
 import type { useCells } from "./use-cells";
 import type { ReadingSheetState } from "./use-reading-sheet";
 
 export type TableMeasures = {
+  /** B and the quality stand in the row. */
   wide: boolean;
+  /** The open note's figures stand beside its residuals. */
+  beside: boolean;
   note: number;
   cell: number;
   figures: Figures;
@@ -23,24 +25,44 @@ export type TableMeasures = {
 
 /** Six tabular figures with their point are 45.6, 53.2 and 60.8 px wide at 12, 14 and 16 px. */
 const ROOM: ReadonlyArray<{ figures: Figures; cell: number }> = [
-  { figures: 16, cell: 66 },
+  { figures: 16, cell: 65 },
   { figures: 14, cell: 58 },
   { figures: 12, cell: 50 },
 ];
 
+/** Room for "predicted 23.1", and for a sign with "not saved". */
+const B_WIDTH = 104;
+const FIT_WIDTH = 95;
+
 /**
- * From 840 pixels up B and the quality stand in the row, below on a line under the partials. A column is
+ * Where there is room B and the quality stand in the row, else on a line under the partials. A column is
  * never narrower than its figures: where the page is, the table is moved sideways.
  */
 export function tableMeasures(width: number, columns: number): TableMeasures {
-  if (width >= 840) {
-    const [note, cell, b] = [60, 58, 104];
-    return { wide: true, note, cell, figures: 14, b, fit: width - note - cell * columns - b };
+  if (width >= ROW_HOLDS_TEN) {
+    const [note, cell, b] = [60, 58, B_WIDTH];
+    return { wide: true, beside: true, note, cell, figures: 14, b, fit: width - note - cell * columns - b };
+  }
+  if (width >= ROW_HOLDS_FIT) {
+    const [note, b] = [52, B_WIDTH];
+    const cell = Math.min(66, Math.floor((width - note - b - FIT_WIDTH) / columns));
+    return {
+      wide: true,
+      beside: false,
+      note,
+      cell,
+      figures: figuresIn(cell),
+      b,
+      fit: width - note - cell * columns - b,
+    };
   }
   const note = width < 560 ? 44 : 56;
   const cell = Math.max(50, Math.min(72, Math.floor((width - note) / columns)));
-  const figures = ROOM.find((room) => cell >= room.cell)?.figures ?? 12;
-  return { wide: false, note, cell, figures, b: 0, fit: 0 };
+  return { wide: false, beside: false, note, cell, figures: figuresIn(cell), b: 0, fit: 0 };
+}
+
+function figuresIn(cell: number): Figures {
+  return ROOM.find((room) => cell >= room.cell)?.figures ?? 12;
 }
 
 export type Suggestion = { midi: number; b: number | null };
@@ -48,6 +70,8 @@ export type Suggestion = { midi: number; b: number | null };
 type Props = {
   prefix: string;
   sheet: ReadingSheetState;
+  /** Of the page it stands in, pixels. */
+  width: number;
   cells: ReturnType<typeof useCells>;
   columns: readonly number[];
   unit: ReadingUnit;
@@ -60,9 +84,7 @@ type Props = {
 };
 
 export function SheetTable(props: Props) {
-  const { prefix, sheet, cells, columns, unit, canChange, suggestion, flags, actions } = props;
-  const box = useRef<HTMLDivElement>(null);
-  const width = useWidth(box, 856);
+  const { prefix, sheet, width, cells, columns, unit, canChange, suggestion, flags, actions } = props;
   const measures = tableMeasures(width, columns.length);
   const { state, liveOf } = sheet;
   const rows = shownRows(state).map((row) => ({ row, predictedB: undefined }));
@@ -76,7 +98,7 @@ export function SheetTable(props: Props) {
   const tabPartial = cells.inHand?.partial ?? columns[0] ?? 1;
 
   return (
-    <div ref={box} className="overflow-x-auto">
+    <div className="overflow-x-auto">
       <table
         className="w-full table-fixed border-collapse"
         onFocus={cells.onFocus}

@@ -62,7 +62,7 @@ export function StylePreview({ style, before, instruments }: Props) {
       <div className="flex flex-wrap items-end gap-x-6 gap-y-2">
         <Select
           label="Tried on"
-          className="w-full sm:w-80"
+          className="w-full sm:w-96"
           value={chosen ? chosenId : TYPICAL}
           onChange={(event) => setChosenId(event.target.value)}
           options={[
