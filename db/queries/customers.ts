@@ -81,7 +81,7 @@ export async function updateCustomer(
   db: Handle,
   shopId: string,
   id: string,
-  { version, archived, ...fields }: CustomerChange,
+  { version, archived, confirm: _, ...fields }: CustomerChange,
 ) {
   const [row] = await db
     .update(customer)

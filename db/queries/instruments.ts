@@ -147,7 +147,7 @@ export async function updateInstrument(
   db: Handle,
   shopId: string,
   id: string,
-  { version, archived, ...fields }: InstrumentChange,
+  { version, archived, confirm: _, ...fields }: InstrumentChange,
 ): Promise<boolean> {
   const rows = await db
     .update(instrument)

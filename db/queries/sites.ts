@@ -97,7 +97,7 @@ export async function updateSite(
   db: Handle,
   shopId: string,
   id: string,
-  { version, archived, ...fields }: SiteChange,
+  { version, archived, confirm: _, ...fields }: SiteChange,
 ): Promise<boolean> {
   const rows = await db
     .update(site)

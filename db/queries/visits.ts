@@ -163,6 +163,14 @@ export async function visitsBetween(
   });
 }
 
+export async function countVisits(db: Handle, shopId: string, filter: Filter): Promise<number> {
+  const [row] = await db
+    .select({ count: sql<number>`count(*)::int` })
+    .from(visit)
+    .where(chosen(shopId, filter));
+  return row?.count ?? 0;
+}
+
 /** The first of these days that has visits, and how many. */
 export async function firstDayWithVisits(db: Handle, shopId: string, filter: Filter) {
   const [row] = await db

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { optionalText } from "@/lib/optional-text";
-import { listOf, listQuery } from "@/lib/pages/list-query";
+import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
 
 export const customerFields = z.object({
   kind: z.enum(["person", "organisation"]).optional(),
@@ -24,9 +24,7 @@ export const customerFields = z.object({
 export const newCustomer = customerFields.extend({ id: z.uuid().optional() });
 
 /** `archived` archives and restores: the same record, out of the lists or back in them. */
-export const customerChange = customerFields
-  .partial()
-  .extend({ version: z.int().positive(), archived: z.boolean().optional() });
+export const customerChange = customerFields.partial().extend(recordChange);
 
 /** What the form holds: a new record has no version yet. */
 export const customerForm = customerFields.extend({ id: z.uuid(), version: z.int().positive().optional() });

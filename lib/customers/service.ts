@@ -3,34 +3,24 @@ import { withShop } from "@/db/client";
 import { customerById, insertCustomer, listCustomers, updateCustomer } from "@/db/queries/customers";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
+import type { ArchiveQuery } from "@/lib/doors/params";
 import { AppError, notFound, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import type { ListPage } from "@/lib/pages/list-query";
+import { written, writtenPage } from "@/lib/pages/record-dates";
+import { askAboutOpenVisits } from "@/lib/visits/open/service";
 import type { CustomerChange, CustomerListQuery, CustomerRecord, CustomerRow, NewCustomer } from "./schema";
 
 type Row = NonNullable<Awaited<ReturnType<typeof customerById>>>;
 
 /** A customer's own sign-in sees the record, but not what the shop notes about it. */
 function record(actor: Actor, row: Row): CustomerRecord {
-  return {
-    ...row,
-    notes: actor.role === "customer" ? null : row.notes,
-    archivedAt: row.archivedAt?.toISOString() ?? null,
-    updatedAt: row.updatedAt.toISOString(),
-  };
+  return { ...written(row), notes: actor.role === "customer" ? null : row.notes };
 }
 
 export async function findCustomers(actor: Actor, query: CustomerListQuery): Promise<ListPage<CustomerRow>> {
   const reach = authorise(actor, "customers.read");
-  const page = await withShop(actor, (tx) => listCustomers(tx, actor.shopId, query, reach));
-  return {
-    next: page.next,
-    items: page.items.map((row) => ({
-      ...row,
-      archivedAt: row.archivedAt?.toISOString() ?? null,
-      updatedAt: row.updatedAt.toISOString(),
-    })),
-  };
+  return writtenPage(await withShop(actor, (tx) => listCustomers(tx, actor.shopId, query, reach)));
 }
 
 export async function getCustomer(actor: Actor, id: string): Promise<CustomerRecord> {
@@ -59,12 +49,15 @@ export async function changeCustomer(
   authorise(actor, "customers.change");
   return withShop(actor, async (tx) => {
     const row = await updateCustomer(tx, actor.shopId, id, change);
-    if (row) return record(actor, row);
+    if (row) {
+      if (change.archived && !change.confirm) await askAboutOpenVisits(tx, actor, "customer", id);
+      return record(actor, row);
+    }
     const current = await customerById(tx, actor.shopId, id);
     throw current ? stale("customer", record(actor, current)) : notFound("customer");
   });
 }
 
-export function archiveCustomer(actor: Actor, id: string, version: number): Promise<CustomerRecord> {
-  return changeCustomer(actor, id, { version, archived: true });
+export function archiveCustomer(actor: Actor, id: string, asked: ArchiveQuery): Promise<CustomerRecord> {
+  return changeCustomer(actor, id, { ...asked, archived: true });
 }

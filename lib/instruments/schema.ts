@@ -2,7 +2,7 @@ import { z } from "zod";
 import { TEMPERAMENT_NAMES } from "@/lib/acoustics/temperament";
 import { isDay } from "@/lib/dates";
 import { optionalText, plainText } from "@/lib/optional-text";
-import { listOf, listQuery } from "@/lib/pages/list-query";
+import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
 import { kinds, stringFaults } from "./rules";
 
 const key = (message: string) => z.int(message).min(9, message).max(120, message);
@@ -57,9 +57,7 @@ const holdingFields = z.object({
 
 export const newInstrument = instrumentFields.extend({ ...holdingFields.shape, id: z.uuid().optional() });
 
-export const instrumentChange = instrumentFields
-  .partial()
-  .extend({ version: z.int().positive(), archived: z.boolean().optional() });
+export const instrumentChange = instrumentFields.partial().extend(recordChange);
 
 /** What the form of an old record holds. */
 export const instrumentForm = instrumentFields.extend({ id: z.uuid(), version: z.int().positive() });

@@ -13,10 +13,13 @@ import { siteById } from "@/db/queries/sites";
 import type { Permission } from "@/lib/auth/access";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
+import type { ArchiveQuery } from "@/lib/doors/params";
 import { AppError, type FieldErrors, invalid, notFound, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import type { ListPage } from "@/lib/pages/list-query";
+import { written, writtenPage } from "@/lib/pages/record-dates";
 import { clockWithin, type ShopClock } from "@/lib/shop-clock/service";
+import { askAboutOpenVisits } from "@/lib/visits/open/service";
 import { rangeFaults } from "./rules";
 import type {
   InstrumentChange,
@@ -31,15 +34,7 @@ export async function findInstruments(
   query: InstrumentListQuery,
 ): Promise<ListPage<InstrumentRow>> {
   const reach = authorise(actor, "instruments.read");
-  const page = await withShop(actor, (tx) => listInstruments(tx, actor.shopId, query, reach));
-  return {
-    next: page.next,
-    items: page.items.map((row) => ({
-      ...row,
-      archivedAt: row.archivedAt?.toISOString() ?? null,
-      updatedAt: row.updatedAt.toISOString(),
-    })),
-  };
+  return writtenPage(await withShop(actor, (tx) => listInstruments(tx, actor.shopId, query, reach)));
 }
 
 export async function getInstrument(actor: Actor, id: string): Promise<InstrumentRecord> {
@@ -87,12 +82,13 @@ export async function changeInstrument(
       }),
     );
     await writeVersion(tx, actor, id, change);
+    if (change.archived && !change.confirm) await askAboutOpenVisits(tx, actor, "instrument", id);
     return readInstrument(tx, actor, id);
   });
 }
 
-export function archiveInstrument(actor: Actor, id: string, version: number): Promise<InstrumentRecord> {
-  return changeInstrument(actor, id, { version, archived: true });
+export function archiveInstrument(actor: Actor, id: string, asked: ArchiveQuery): Promise<InstrumentRecord> {
+  return changeInstrument(actor, id, { ...asked, archived: true });
 }
 
 /** Within a transaction that is already open: the record, or a 404. */
@@ -180,11 +176,9 @@ async function findRecord(tx: Tx, actor: Actor, id: string): Promise<InstrumentR
       (await technicianIsOn(tx, actor.shopId, actor.memberId, { instrumentId: id, jobId: null })));
   const { siteTimeZone: _, ...place } = open ?? { siteTimeZone: null, id: "" };
   return {
-    ...row,
+    ...written(row),
     temperament: typeof row.temperament === "string" ? row.temperament : [...row.temperament],
     place: open && "siteId" in place ? place : null,
     canChange,
-    archivedAt: row.archivedAt?.toISOString() ?? null,
-    updatedAt: row.updatedAt.toISOString(),
   };
 }

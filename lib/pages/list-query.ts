@@ -16,4 +16,12 @@ export function listOf<Item extends z.ZodType>(item: Item) {
   return z.object({ items: z.array(item), next: z.string().nullable() });
 }
 
+/** What a change of a customer, a site or an instrument says beside its fields. */
+export const recordChange = {
+  version: z.int().positive(),
+  archived: z.boolean().optional(),
+  /** Archives although visits are not over yet. */
+  confirm: z.boolean().optional(),
+};
+
 export type ListPage<Item> = { items: Item[]; next: string | null };

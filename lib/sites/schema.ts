@@ -1,7 +1,7 @@
 import { z } from "zod";
 import { isTimeZone } from "@/lib/dates";
 import { optionalText, plainText } from "@/lib/optional-text";
-import { listOf, listQuery } from "@/lib/pages/list-query";
+import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
 
 const degrees = (most: number) =>
   z
@@ -33,9 +33,7 @@ export const siteFields = z.object({
 
 export const newSite = siteFields.extend({ id: z.uuid().optional() });
 
-export const siteChange = siteFields
-  .partial()
-  .extend({ version: z.int().positive(), archived: z.boolean().optional() });
+export const siteChange = siteFields.partial().extend(recordChange);
 
 /** What the form holds: a new record has no version yet. */
 export const siteForm = siteFields.extend({ id: z.uuid(), version: z.int().positive().optional() });

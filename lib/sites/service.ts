@@ -4,10 +4,13 @@ import { customerById } from "@/db/queries/customers";
 import { insertSite, listSites, siteById, updateSite } from "@/db/queries/sites";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
+import type { ArchiveQuery } from "@/lib/doors/params";
 import { AppError, invalid, notFound, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import type { ListPage } from "@/lib/pages/list-query";
+import { written, writtenPage } from "@/lib/pages/record-dates";
 import { clockWithin } from "@/lib/shop-clock/service";
+import { askAboutOpenVisits } from "@/lib/visits/open/service";
 import { positionFaults } from "./rules";
 import type { NewSite, SiteChange, SiteListQuery, SiteRecord, SiteRow } from "./schema";
 
@@ -15,25 +18,12 @@ type Row = NonNullable<Awaited<ReturnType<typeof siteById>>>;
 
 /** A customer's own sign-in sees the address, but not what the shop notes about getting in. */
 function record(actor: Actor, row: Row): SiteRecord {
-  return {
-    ...row,
-    accessNotes: actor.role === "customer" ? null : row.accessNotes,
-    archivedAt: row.archivedAt?.toISOString() ?? null,
-    updatedAt: row.updatedAt.toISOString(),
-  };
+  return { ...written(row), accessNotes: actor.role === "customer" ? null : row.accessNotes };
 }
 
 export async function findSites(actor: Actor, query: SiteListQuery): Promise<ListPage<SiteRow>> {
   const reach = authorise(actor, "sites.read");
-  const page = await withShop(actor, (tx) => listSites(tx, actor.shopId, query, reach));
-  return {
-    next: page.next,
-    items: page.items.map((row) => ({
-      ...row,
-      archivedAt: row.archivedAt?.toISOString() ?? null,
-      updatedAt: row.updatedAt.toISOString(),
-    })),
-  };
+  return writtenPage(await withShop(actor, (tx) => listSites(tx, actor.shopId, query, reach)));
 }
 
 export async function getSite(actor: Actor, id: string): Promise<SiteRecord> {
@@ -72,15 +62,16 @@ export async function changeSite(actor: Actor, id: string, change: SiteChange): 
     if (change.customerId && change.customerId !== before.customerId) {
       await checkCustomer(tx, actor, change.customerId);
     }
-    const written = await updateSite(tx, actor.shopId, id, change);
+    const done = await updateSite(tx, actor.shopId, id, change);
     const now = await read(tx, actor, id);
-    if (!written) throw stale("site", now);
+    if (!done) throw stale("site", now);
+    if (change.archived && !change.confirm) await askAboutOpenVisits(tx, actor, "site", id);
     return now;
   });
 }
 
-export function archiveSite(actor: Actor, id: string, version: number): Promise<SiteRecord> {
-  return changeSite(actor, id, { version, archived: true });
+export function archiveSite(actor: Actor, id: string, asked: ArchiveQuery): Promise<SiteRecord> {
+  return changeSite(actor, id, { ...asked, archived: true });
 }
 
 async function read(tx: Tx, actor: Actor, id: string): Promise<SiteRecord> {

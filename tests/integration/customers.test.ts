@@ -72,7 +72,7 @@ describe("customers", () => {
   it("takes an archived record out of the list and puts it back", async () => {
     const shop = await makeShop();
     const made = await createCustomer(shop.office, given({ name: "Sandmark" }));
-    const archived = await archiveCustomer(shop.office, made.id, made.version);
+    const archived = await archiveCustomer(shop.office, made.id, { version: made.version });
     expect(archived.archivedAt).not.toBeNull();
     expect((await findCustomers(shop.office, asked())).items).toEqual([]);
     expect((await findCustomers(shop.office, asked({ archived: "only", q: "sandm" }))).items).toMatchObject([
@@ -106,7 +106,9 @@ describe("customers", () => {
     await expect(changeCustomer(here.owner, id, { version: 1, name: "Mine" })).rejects.toMatchObject({
       code: "not-found",
     });
-    await expect(archiveCustomer(here.owner, id, 1)).rejects.toMatchObject({ code: "not-found" });
+    await expect(archiveCustomer(here.owner, id, { version: 1 })).rejects.toMatchObject({
+      code: "not-found",
+    });
   });
 
   it("shows a customer's sign-in its own record, without the shop's notes, and nobody else's", async () => {

@@ -147,8 +147,10 @@ describe("instruments", () => {
     const { shop, customerId, siteId } = await shopWithHall();
     const id = await makeInstrument(shop.shopId, { siteId, ownerId: customerId });
     await makeVisit(shop.shopId, { siteId, instrumentId: id, memberId: shop.technician.memberId });
-    await expect(archiveInstrument(shop.technician, id, 1)).rejects.toMatchObject({ code: "forbidden" });
-    const archived = await archiveInstrument(shop.office, id, 1);
+    await expect(archiveInstrument(shop.technician, id, { version: 1 })).rejects.toMatchObject({
+      code: "forbidden",
+    });
+    const archived = await archiveInstrument(shop.office, id, { version: 1, confirm: true });
     expect((await findInstruments(shop.office, asked())).items).toEqual([]);
     expect(
       (await findInstruments(shop.office, asked({ archived: "only", q: "castellan" }))).items,
@@ -187,7 +189,9 @@ describe("instruments", () => {
     await expect(
       changeInstrument(here.shop.owner, id, changed({ version: 1, room: "x" })),
     ).rejects.toMatchObject({ code: "not-found" });
-    await expect(archiveInstrument(here.shop.owner, id, 1)).rejects.toMatchObject({ code: "not-found" });
+    await expect(archiveInstrument(here.shop.owner, id, { version: 1 })).rejects.toMatchObject({
+      code: "not-found",
+    });
     await expect(getHistory(here.shop.owner, id)).rejects.toMatchObject({ code: "not-found" });
     await expect(
       createInstrument(here.shop.owner, given({ siteId: there.siteId, maker: "Castellan", kind: "grand" })),

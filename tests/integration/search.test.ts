@@ -97,7 +97,7 @@ describe("search", () => {
 
   it("leaves archived records to the archived list", async () => {
     const { shop, grand, found } = await portAveril();
-    await archiveInstrument(shop.office, grand, 1);
+    await archiveInstrument(shop.office, grand, { version: 1 });
     expect(await found("48213")).toEqual([]);
     const list = await findInstruments(
       shop.office,

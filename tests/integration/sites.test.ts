@@ -87,7 +87,7 @@ describe("sites", () => {
   it("archives, and restores", async () => {
     const shop = await makeShop();
     const id = await makeSite(shop.shopId, await makeCustomer(shop.shopId), "Old chapel");
-    const archived = await archiveSite(shop.office, id, 1);
+    const archived = await archiveSite(shop.office, id, { version: 1 });
     expect((await findSites(shop.office, asked())).items).toEqual([]);
     expect((await findSites(shop.office, asked({ archived: "only" }))).items).toMatchObject([{ id }]);
     await changeSite(shop.office, id, changed({ version: archived.version, archived: false }));

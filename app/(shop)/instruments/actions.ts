@@ -31,7 +31,7 @@ export const createInstrumentAction = defineAction({
 export const changeInstrumentAction = defineAction({
   name: "instruments.change",
   permission: "instruments.change",
-  input: instrumentChange.omit({ archived: true }).extend({ id: z.uuid() }),
+  input: instrumentChange.omit({ archived: true, confirm: true }).extend({ id: z.uuid() }),
   run: async (actor, { id, ...change }) => {
     const record = await changeInstrument(actor, id, change);
     showInstruments();
@@ -42,7 +42,9 @@ export const changeInstrumentAction = defineAction({
 export const archiveInstrumentAction = defineAction({
   name: "instruments.archive",
   permission: "instruments.place",
-  input: z.object({ id: z.uuid(), version: z.int().positive(), archived: z.boolean() }),
+  input: instrumentChange
+    .pick({ version: true, confirm: true })
+    .extend({ id: z.uuid(), archived: z.boolean() }),
   run: async (actor, { id, ...change }) => {
     const record = await changeInstrument(actor, id, change);
     showInstruments();

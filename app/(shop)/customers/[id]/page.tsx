@@ -44,11 +44,12 @@ export default async function CustomerPage({ params }: Props) {
               mayChange ? (
                 <>
                   <ArchiveButton
-                    name={customer.name}
                     record={customer}
                     action={changeCustomerAction}
                     listKey={customerKeys.all}
                     listHref="/customers"
+                    words={["customer", "customers"]}
+                    locale={clock.locale}
                   />
                   <LinkButton href={`/customers/${customer.id}/edit`}>Change</LinkButton>
                   <LinkButton kind="primary" href={`/sites/new?customer=${customer.id}`}>

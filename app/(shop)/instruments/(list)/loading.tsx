@@ -1,15 +1,5 @@
-import { LeftPage, RightPage, Spread } from "@/components/shell/spread";
-import { LoadingLines } from "@/components/ui/states";
+import { RecordsLoading } from "@/components/records/records-page";
 
 export default function Loading() {
-  return (
-    <Spread
-      left={<LeftPage title="Instruments" fold={null} />}
-      right={
-        <RightPage>
-          <LoadingLines label="Loading: instruments" lines={12} row="h-9 phone:h-16" className="mt-24" />
-        </RightPage>
-      }
-    />
-  );
+  return <RecordsLoading title="Instruments" />;
 }

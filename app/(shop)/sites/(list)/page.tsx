@@ -1,13 +1,10 @@
 import type { Metadata } from "next";
 import { listTabs } from "@/components/customers/list-tabs";
-import { KeptViews } from "@/components/shell/kept-views";
-import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
+import { RecordsPage } from "@/components/records/records-page";
 import { Tabs } from "@/components/shell/tabs";
 import { SitesLedger } from "@/components/sites/sites-ledger";
-import { LinkButton } from "@/components/ui/button";
-import { DemoBadge } from "@/components/ui/demo-badge";
 import { may } from "@/lib/auth/access";
-import { addressQuery } from "@/lib/pages/ledger-request";
+import { askedIn } from "@/lib/pages/first-page";
 import { staffActor } from "@/lib/pages/page-actor";
 import { shopClock } from "@/lib/shop-clock/service";
 import { siteListQuery } from "@/lib/sites/schema";
@@ -25,44 +22,25 @@ export const metadata: Metadata = { title: "Sites" };
 
 export default async function SitesPage({ searchParams }: PageProps<"/sites">) {
   const actor = await staffActor();
-  const asked = siteListQuery.safeParse(addressQuery(await searchParams, ["archived"]));
-  const first = await findSites(actor, asked.success ? asked.data : siteListQuery.parse({}));
-  const { locale, timeZone, demo } = await shopClock(actor);
+  const first = await findSites(actor, askedIn(siteListQuery, await searchParams, ["archived"]));
+  const { demo, locale, timeZone } = await shopClock(actor);
   const mayChange = may(actor.role, "sites.change");
   return (
-    <Spread
-      left={
-        <LeftPage
-          title="Sites"
-          subtitle="Addresses with instruments: homes, schools, halls, churches."
-          aside={demo ? <DemoBadge /> : null}
-          fold="Views"
-        >
-          <KeptViews views={views} />
-        </LeftPage>
-      }
-      right={
-        <RightPage>
-          <Tabs label="Customers and sites" items={listTabs} />
-          <WorkHead
-            title="Sites"
-            unseen
-            actions={
-              mayChange ? (
-                <LinkButton kind="primary" href="/sites/new">
-                  New site
-                </LinkButton>
-              ) : null
-            }
-          />
-          <SitesLedger
-            first={first}
-            locale={locale}
-            timeZone={timeZone}
-            archive={mayChange ? changeSiteAction : undefined}
-          />
-        </RightPage>
-      }
-    />
+    <RecordsPage
+      title="Sites"
+      subtitle="Addresses with instruments: homes, schools, halls, churches."
+      views={views}
+      demo={demo}
+      tabs={<Tabs label="Customers and sites" items={listTabs} />}
+      add={mayChange ? { href: "/sites/new", label: "New site" } : null}
+    >
+      <SitesLedger
+        first={first}
+        clock={{ locale, timeZone }}
+        // What an empty list leads to, the customers, is everybody's to see.
+        mayAdd
+        archive={mayChange ? changeSiteAction : undefined}
+      />
+    </RecordsPage>
   );
 }

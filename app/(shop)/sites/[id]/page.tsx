@@ -42,11 +42,12 @@ export default async function SitePage({ params }: Props) {
                 {may(actor.role, "sites.change") ? (
                   <>
                     <ArchiveButton
-                      name={site.name}
                       record={site}
                       action={changeSiteAction}
                       listKey={siteKeys.all}
                       listHref="/sites"
+                      words={["site", "sites"]}
+                      locale={clock.locale}
                     />
                     <LinkButton href={`/sites/${site.id}/edit`}>Change</LinkButton>
                   </>

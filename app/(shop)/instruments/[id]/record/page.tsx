@@ -48,11 +48,12 @@ export default async function InstrumentRecordPage({ params }: PageProps<"/instr
         actions={
           mayPlace ? (
             <ArchiveButton
-              name={instrument.name}
               record={instrument}
               action={archiveInstrumentAction}
               listKey={instrumentKeys.all}
               listHref="/instruments"
+              words={["instrument", "instruments"]}
+              locale={clock.locale}
             />
           ) : null
         }

@@ -1,7 +1,7 @@
 import { customerChange, customerRecord } from "@/lib/customers/schema";
 import { archiveCustomer, changeCustomer, getCustomer } from "@/lib/customers/service";
 import { defineRoute } from "@/lib/doors/define-route";
-import { idParams, versionQuery } from "@/lib/doors/params";
+import { archiveQuery, idParams } from "@/lib/doors/params";
 
 export const GET = defineRoute({
   method: "GET",
@@ -19,17 +19,17 @@ export const PATCH = defineRoute({
   params: idParams,
   body: customerChange,
   response: customerRecord,
-  problems: ["stale"],
+  problems: ["stale", "needs-confirming"],
   handle: ({ actor, params, body }) => changeCustomer(actor, params.id, body),
 });
 
 export const DELETE = defineRoute({
   method: "DELETE",
   permission: "customers.change",
-  summary: "Archive a customer",
+  summary: "Archive a customer; asks first while visits are not over",
   params: idParams,
-  query: versionQuery,
+  query: archiveQuery,
   response: customerRecord,
-  problems: ["stale"],
-  handle: ({ actor, params, query }) => archiveCustomer(actor, params.id, query.version),
+  problems: ["stale", "needs-confirming"],
+  handle: ({ actor, params, query }) => archiveCustomer(actor, params.id, query),
 });

@@ -1,5 +1,5 @@
 import { defineRoute } from "@/lib/doors/define-route";
-import { idParams, versionQuery } from "@/lib/doors/params";
+import { archiveQuery, idParams } from "@/lib/doors/params";
 import { instrumentChange, instrumentRecord } from "@/lib/instruments/schema";
 import { archiveInstrument, changeInstrument, getInstrument } from "@/lib/instruments/service";
 
@@ -19,17 +19,17 @@ export const PATCH = defineRoute({
   params: idParams,
   body: instrumentChange,
   response: instrumentRecord,
-  problems: ["stale"],
+  problems: ["stale", "needs-confirming"],
   handle: ({ actor, params, body }) => changeInstrument(actor, params.id, body),
 });
 
 export const DELETE = defineRoute({
   method: "DELETE",
   permission: "instruments.place",
-  summary: "Archive an instrument",
+  summary: "Archive an instrument; asks first while visits are not over",
   params: idParams,
-  query: versionQuery,
+  query: archiveQuery,
   response: instrumentRecord,
-  problems: ["stale"],
-  handle: ({ actor, params, query }) => archiveInstrument(actor, params.id, query.version),
+  problems: ["stale", "needs-confirming"],
+  handle: ({ actor, params, query }) => archiveInstrument(actor, params.id, query),
 });

@@ -1,5 +1,5 @@
 import { defineRoute } from "@/lib/doors/define-route";
-import { idParams, versionQuery } from "@/lib/doors/params";
+import { archiveQuery, idParams } from "@/lib/doors/params";
 import { siteChange, siteRecord } from "@/lib/sites/schema";
 import { archiveSite, changeSite, getSite } from "@/lib/sites/service";
 
@@ -19,17 +19,17 @@ export const PATCH = defineRoute({
   params: idParams,
   body: siteChange,
   response: siteRecord,
-  problems: ["stale"],
+  problems: ["stale", "needs-confirming"],
   handle: ({ actor, params, body }) => changeSite(actor, params.id, body),
 });
 
 export const DELETE = defineRoute({
   method: "DELETE",
   permission: "sites.change",
-  summary: "Archive a site",
+  summary: "Archive a site; asks first while visits are not over",
   params: idParams,
-  query: versionQuery,
+  query: archiveQuery,
   response: siteRecord,
-  problems: ["stale"],
-  handle: ({ actor, params, query }) => archiveSite(actor, params.id, query.version),
+  problems: ["stale", "needs-confirming"],
+  handle: ({ actor, params, query }) => archiveSite(actor, params.id, query),
 });
