@@ -16,9 +16,38 @@ const open = [
   "/problems",
 ];
 
+/**
+ * A page is only ever written to by a server action. The framework refuses one from a foreign origin as well,
+ * but as a fault of the server; by the same rule it is refused here in words. Routes have their own check.
+ */
+function isForeignWrite(request: NextRequest): boolean {
+  if (request.method === "GET" || request.method === "HEAD") return false;
+  if (request.nextUrl.pathname.startsWith("/api/")) return false;
+  const origin = request.headers.get("origin");
+  if (origin === null) return request.headers.get("sec-fetch-site") === "cross-site";
+  const host = request.headers.get("x-forwarded-host") ?? request.headers.get("host");
+  return !URL.canParse(origin) || new URL(origin).host !== host;
+}
+
+function refuseForeignWrite(requestId: string): NextResponse {
+  const problem = {
+    type: "/problems/forbidden",
+    title: "Not allowed",
+    status: 403,
+    detail: "This came from another site and was refused.",
+    code: "forbidden",
+    requestId,
+  };
+  return NextResponse.json(problem, {
+    status: 403,
+    headers: { "content-type": "application/problem+json", "cache-control": "no-store" },
+  });
+}
+
 export function proxy(request: NextRequest): NextResponse {
   const nonce = Buffer.from(crypto.getRandomValues(new Uint8Array(16))).toString("base64");
   const requestId = crypto.randomUUID();
+  if (isForeignWrite(request)) return refuseForeignWrite(requestId);
   const development = process.env.NODE_ENV === "development";
   const policy = [
     "default-src 'self'",

@@ -27,6 +27,8 @@ export type RouteDoor = {
   response?: z.ZodType;
   status: number;
   problems: readonly ErrorCode[];
+  /** Whether the description of the API speaks of it. */
+  described: boolean;
 };
 
 type Definition<Access extends Permission | "anyone", Params, Query, Body> = {
@@ -42,6 +44,7 @@ type Definition<Access extends Permission | "anyone", Params, Query, Body> = {
   problems?: readonly ErrorCode[];
   bodyBytes?: number;
   limit?: Limit;
+  described?: boolean;
   /** A plain value becomes JSON; a Response (a file, say) goes out as it is. */
   handle: (input: {
     actor: Access extends "anyone" ? null : Actor;
@@ -100,6 +103,7 @@ export function defineRoute<
     response: definition.response,
     status: definition.status ?? 200,
     problems: definition.problems ?? [],
+    described: definition.described ?? true,
   };
 
   async function answer(request: Request, context: RouteContext): Promise<Response> {

@@ -112,8 +112,10 @@ const problemSchema = {
 export function openApi(routes: RouteMap, serverUrl: string) {
   const paths: Record<string, Record<string, ReturnType<typeof operation>>> = {};
   for (const [path, module] of Object.entries(routes)) {
+    const described = doorsOf(module).filter((door) => door.described);
+    if (described.length === 0) continue;
     paths[path] = Object.fromEntries(
-      doorsOf(module).map((door) => [door.method.toLowerCase(), operation(path, door)]),
+      described.map((door) => [door.method.toLowerCase(), operation(path, door)]),
     );
   }
   return {

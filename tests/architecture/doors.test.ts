@@ -74,6 +74,11 @@ describe("every door is wrapped", () => {
     }
   });
 
+  it("keeps what answers nothing out of the description, and all else in it", () => {
+    const paths = Object.keys(openApi(routes, "https://agraffe.example/api/v1").paths);
+    expect(Object.keys(routes).filter((path) => !paths.includes(path))).toEqual(["/[[...nothing]]"]);
+  });
+
   it("gives every operation its own id, a summary and its problems", () => {
     const document = openApi(routes, "https://agraffe.example/api/v1");
     const operations = Object.values(document.paths).flatMap((path) => Object.values(path));

@@ -19,7 +19,12 @@ const desk: Role[] = ["owner", "office"];
 const workshop: Role[] = ["owner", "technician"];
 const ownerOnly: Role[] = ["owner"];
 
-const routeRows: Record<string, readonly Role[]> = {
+const routeRows: Record<string, readonly Role[] | "anyone"> = {
+  "GET /[[...nothing]]": "anyone",
+  "POST /[[...nothing]]": "anyone",
+  "PUT /[[...nothing]]": "anyone",
+  "PATCH /[[...nothing]]": "anyone",
+  "DELETE /[[...nothing]]": "anyone",
   "GET /customers": everybody,
   "POST /customers": desk,
   "GET /customers/{id}": everybody,
@@ -174,14 +179,28 @@ describe("routes", () => {
   });
 
   it.each(routes)("$key answers the roles it is for and refuses the others", async (route) => {
-    const allowed = routeRows[route.key] ?? [];
+    const row = routeRows[route.key] ?? [];
+    const allowed = row === "anyone" ? everybody : row;
     for (const role of everybody) {
       const { status } = await knock(route, browsers[role]);
       if (allowed.includes(role))
         expect([200, 201, 204, 404, 409, 422], `${role}: ${status}`).toContain(status);
       else expect(status, role).toBe(403);
     }
-    expect((await knock(route, null)).status, "signed out").toBe(401);
+    expect((await knock(route, null)).status, "signed out").toBe(row === "anyone" ? 404 : 401);
+  });
+
+  it("answer an address that is none with a problem, signed in or not", async () => {
+    const nowhere = routes.filter(({ path }) => path === "/[[...nothing]]");
+    expect(nowhere.map(({ method }) => method).sort()).toEqual(["DELETE", "GET", "PATCH", "POST", "PUT"]);
+    for (const route of nowhere) {
+      for (const browser of [browsers.technician, null]) {
+        const answer = await knock(route, browser);
+        expect(answer.status).toBe(404);
+        expect(answer.headers.get("content-type")).toBe("application/problem+json");
+        expect(await answer.json()).toMatchObject({ code: "not-found", status: 404 });
+      }
+    }
   });
 
   it("refuse a write from another site's page", async () => {

@@ -1,4 +1,5 @@
 import type { RouteMap } from "@/lib/doors/openapi";
+import * as nothing from "./[[...nothing]]/route";
 import * as customer from "./customers/[id]/route";
 import * as customers from "./customers/route";
 import * as instrumentAdvice from "./instruments/[id]/advice/route";
@@ -31,6 +32,7 @@ import * as visits from "./visits/route";
 
 /** Every route of the API, for its description. The architecture test holds this against the folder. */
 export const routes: RouteMap = {
+  "/[[...nothing]]": nothing,
   "/customers": customers,
   "/customers/{id}": customer,
   "/instruments": instruments,
