@@ -1,10 +1,11 @@
 import { z } from "zod";
+import { requiredText } from "@/lib/clean-text";
 import { optionalText } from "@/lib/optional-text";
 import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
 
 export const customerFields = z.object({
   kind: z.enum(["person", "organisation"]).optional(),
-  name: z.string().trim().min(1, "Give the customer a name.").max(200, "At most 200 characters."),
+  name: requiredText(200, "Give the customer a name."),
   contactName: optionalText(200),
   email: z
     .string()

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { TEMPERAMENT_NAMES } from "@/lib/acoustics/temperament";
+import { requiredText } from "@/lib/clean-text";
 import { isDay } from "@/lib/dates";
 import { optionalText, plainText } from "@/lib/optional-text";
 import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
@@ -21,7 +22,7 @@ export const temperament = z.union(
 );
 
 export const instrumentFields = z.object({
-  maker: z.string().trim().min(1, "Give the maker's name.").max(120, "At most 120 characters."),
+  maker: requiredText(120, "Give the maker's name."),
   model: plainText(120),
   serial: plainText(60),
   year: z

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { TEMPERAMENT_NAMES } from "@/lib/acoustics";
 import type { Observation } from "@/lib/acoustics/types";
+import { requiredText } from "@/lib/clean-text";
 
 export const temperament = z.union([
   z.enum(TEMPERAMENT_NAMES),
@@ -39,7 +40,7 @@ export const registerStyle = z.object({
 });
 
 export const styleFields = registerStyle.extend({
-  name: z.string().trim().min(1, "Give the style a name.").max(60, "At most 60 characters."),
+  name: requiredText(60, "Give the style a name."),
 });
 export const newStyle = styleFields.extend({ id: z.uuid().optional() });
 export const styleChange = styleFields.partial().extend({

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { requiredText } from "@/lib/clean-text";
 import { isTimeZone } from "@/lib/dates";
 import { optionalText, plainText } from "@/lib/optional-text";
 import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
@@ -13,7 +14,7 @@ const degrees = (most: number) =>
 
 export const siteFields = z.object({
   customerId: z.uuid("Choose the customer this site belongs to."),
-  name: z.string().trim().min(1, "Give the site a name.").max(200, "At most 200 characters."),
+  name: requiredText(200, "Give the site a name."),
   street: plainText(200),
   postalCode: plainText(20),
   city: plainText(120),

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { requiredText } from "@/lib/clean-text";
 import { isDay } from "@/lib/dates";
 import { optionalText } from "@/lib/optional-text";
 import { listOf } from "@/lib/pages/list-query";
@@ -14,7 +15,7 @@ const offsetTime = z
   .string()
   .refine((text) => parseOffsetTime(text) !== null, "Write a time like 2026-05-14T09:00:00+02:00.");
 
-const work = z.string().trim().min(1, "Say what is to be done.").max(200, "At most 200 characters.");
+const work = requiredText(200, "Say what is to be done.");
 
 const jobFields = z.object({
   id: z.uuid().optional(),
@@ -89,7 +90,7 @@ export const visitTransition = z.object({
 /** The form that moves a visit: a new wall time of the same length. */
 export const visitMovePlan = z.object({
   version: z.int().positive(),
-  reason: z.string().trim().min(1, "Say why the visit moves.").max(500, "At most 500 characters."),
+  reason: requiredText(500, "Say why the visit moves."),
   date: day,
   time: z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, "Write a time like 09:30."),
   confirmed: z.boolean().default(false),
