@@ -19,7 +19,7 @@ export function PlanChoiceFields({
   instrumentTemperament: Temperament;
   chosen: Required<PlanChoices>;
   /** `again` while one number is still being typed: the same step for Back. */
-  onChange: (choices: Required<PlanChoices>, again: boolean) => void;
+  onChange: (change: PlanChoices, again: boolean) => void;
 }) {
   const [typedHz, setTypedHz] = useState<string | null>(null);
   const stepped = useRef(false);
@@ -34,7 +34,7 @@ export function PlanChoiceFields({
     setTypedHz(text);
     const hz = readPitch(text);
     if (hz === null || hz === chosen.referenceHz) return;
-    onChange({ ...chosen, referenceHz: hz }, stepped.current);
+    onChange({ referenceHz: hz }, stepped.current);
     stepped.current = true;
   }
 
@@ -44,13 +44,13 @@ export function PlanChoiceFields({
       <Select
         label="Style"
         value={chosen.style}
-        onChange={(event) => onChange({ ...chosen, style: event.target.value }, false)}
+        onChange={(event) => onChange({ style: event.target.value }, false)}
         options={[...styles.house.map(({ id, name }) => ({ value: id, label: name })), ...builtInChoices]}
       />
       <Select
         label="Temperament"
         value={chosen.temperament}
-        onChange={(event) => onChange({ ...chosen, temperament: event.target.value }, false)}
+        onChange={(event) => onChange({ temperament: event.target.value }, false)}
         options={[
           ...Object.entries(temperamentWords).map(([value, label]) => ({ value, label })),
           ...own.map((offsets) => ({ value: temperamentValue(offsets), label: temperamentName(offsets) })),

@@ -141,16 +141,20 @@ export function StretchView(props: Props) {
 /** What is chosen stands in the address; what is not there is the instrument's and the shop's habit. */
 function useChoicesInAddress(instrument: Props["instrument"], styles: StyleList) {
   const search = useSearchParams();
-  const { choices: asked, faults } = planInAddress(search, { styles: styleRefs(styles) });
+  const known = { styles: styleRefs(styles) };
   const habit: Required<PlanChoices> = {
     style: styles.defaultStyle,
     temperament: temperamentValue(instrument.temperament),
     referenceHz: instrument.referenceHz,
   };
+  const { choices: asked, faults } = planInAddress(search, known);
   const choices: Required<PlanChoices> = { ...habit, ...asked };
-  // The browser's own history: the page need not be asked for anew, only the plan.
-  const choose = (next: Required<PlanChoices>, again: boolean) => {
-    const address = `${window.location.pathname}${addressOf(window.location.search, next, habit)}`;
+  const choose = (change: PlanChoices, again: boolean) => {
+    // From the address as it is by now: the page is drawn after it, and two changes may come quickly.
+    const now = new URLSearchParams(window.location.search);
+    const next = { ...habit, ...planInAddress(now, known).choices, ...change };
+    const address = `${window.location.pathname}${addressOf(now, next, habit)}`;
+    // The browser's own history: the page need not be asked for anew, only the plan.
     if (again) window.history.replaceState(null, "", address);
     else window.history.pushState(null, "", address);
   };
