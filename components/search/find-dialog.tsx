@@ -1,6 +1,7 @@
 "use client";
 
 import { useEffect, useState } from "react";
+import { isPagesKey, letterKeysOn } from "@/components/shell/letter-keys";
 import { Dialog } from "@/components/ui/dialog";
 import { Finder } from "./finder";
 
@@ -13,15 +14,7 @@ export function FindDialog({ href }: { href: string }) {
 
   useEffect(() => {
     function onKey(event: KeyboardEvent) {
-      if (event.key !== "/" || event.ctrlKey || event.metaKey || event.altKey || event.defaultPrevented)
-        return;
-      const { target } = event;
-      if (
-        target instanceof HTMLElement &&
-        target.closest("input, textarea, select, [contenteditable], dialog")
-      ) {
-        return;
-      }
+      if (event.key !== "/" || !letterKeysOn() || !isPagesKey(event)) return;
       event.preventDefault();
       setOpen(true);
     }
@@ -33,7 +26,7 @@ export function FindDialog({ href }: { href: string }) {
       event.preventDefault();
       setOpen(true);
     }
-    // In the capture phase, before the shell's own slash key and the link itself act.
+    // In the capture phase, before the link itself acts.
     document.addEventListener("keydown", onKey, true);
     document.addEventListener("click", onPress, true);
     return () => {

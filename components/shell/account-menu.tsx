@@ -1,6 +1,7 @@
 import type { ReactNode } from "react";
 import { AppLink } from "../ui/app-link";
 import type { Place } from "./current-item";
+import { LetterKeysSwitch } from "./letter-keys-switch";
 import { ThemeSwitch } from "./theme-switch";
 
 export type Account = {
@@ -39,6 +40,7 @@ export function AccountMenu({ account, onFollow }: { account: Account; onFollow?
         </ul>
       ) : null}
       <ThemeSwitch />
+      <LetterKeysSwitch />
       {account.signOut ? <div className="border-t border-hairline pt-3">{account.signOut}</div> : null}
     </div>
   );

@@ -7,14 +7,14 @@ import { cx } from "../ui/class-names";
 import { Kbd } from "../ui/kbd";
 import { type Account, AccountMenu } from "./account-menu";
 import { currentHref, type Place } from "./current-item";
+import { useLetterKeys } from "./letter-keys";
 import { Mark } from "./mark";
-import { useFindKey } from "./use-find-key";
 import { useSlidingStud } from "./use-sliding-stud";
 
 export type SpineProps = {
   items: readonly Place[];
   current?: string;
-  /** The page that finds anything; the slash key leads there from anywhere. */
+  /** The page that finds anything; the slash key opens the same over any page. */
   find?: { href: string };
   account: Account;
 };
@@ -25,7 +25,7 @@ export function Spine({ items, current, find, account }: SpineProps) {
   const chosen = current ?? currentHref(items, pathname);
   const list = useSlidingStud<HTMLUListElement>(chosen);
   const menuId = useId();
-  useFindKey(find?.href);
+  const slash = useLetterKeys();
 
   return (
     <nav
@@ -45,10 +45,10 @@ export function Spine({ items, current, find, account }: SpineProps) {
           <AppLink
             href={find.href}
             aria-current={pathname === find.href ? "page" : undefined}
-            aria-keyshortcuts="/"
+            aria-keyshortcuts={slash ? "/" : undefined}
             className="flex h-10 items-center gap-1.5 pl-5 font-text text-ink-soft -outline-offset-2 hover:text-ink aria-[current]:font-semibold aria-[current]:text-ink"
           >
-            Find <Kbd>/</Kbd>
+            Find {slash ? <Kbd>/</Kbd> : null}
           </AppLink>
         ) : null}
         <ul ref={list}>

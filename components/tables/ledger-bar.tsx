@@ -110,7 +110,6 @@ function SearchBox({
       <Sign name="find" className="text-ink-soft" />
       <input
         type="search"
-        data-find=""
         aria-label={label}
         placeholder={label}
         value={typed}

@@ -1,10 +1,12 @@
 "use client";
 
 import { type ReactNode, useState } from "react";
+import { useLetterKeys } from "../shell/letter-keys";
 import { Button } from "../ui/button";
 import { cx } from "../ui/class-names";
 import { Kbd } from "../ui/kbd";
 import { showMessage } from "../ui/message-queue";
+import { Sign } from "../ui/sign";
 import { StateWord } from "../ui/state-word";
 import type { LedgerBulkAction, LedgerRow } from "./ledger-types";
 
@@ -98,16 +100,43 @@ export function LedgerFoot<Row extends LedgerRow>({
         aria-live="polite"
       >
         {waiting ? "Loading" : extent(shown, total)}
-        <span className="flex items-center gap-1 touch:hidden" aria-hidden="true">
-          <Kbd>J</Kbd> <Kbd>K</Kbd> move
-        </span>
-        {bulkActions.length > 0 ? (
-          <span className="flex items-center gap-1 touch:hidden" aria-hidden="true">
-            <Kbd>X</Kbd> choose
-          </span>
-        ) : null}
+        <LedgerKeys choose={bulkActions.length > 0} />
       </span>
     </div>
+  );
+}
+
+/** What the keys do; without those of one letter, what does the same. */
+function LedgerKeys({ choose }: { choose: boolean }) {
+  const letters = useLetterKeys();
+  return (
+    <span className="flex items-center gap-3 touch:hidden" aria-hidden="true">
+      <span className="flex items-center gap-1">
+        {letters ? (
+          <>
+            <Kbd>J</Kbd> <Kbd>K</Kbd>
+          </>
+        ) : (
+          <>
+            <Kbd>
+              <Sign name="arrow-down" size={10} />
+            </Kbd>{" "}
+            <Kbd>
+              <Sign name="arrow-up" size={10} />
+            </Kbd>
+          </>
+        )}{" "}
+        move
+      </span>
+      <span className="flex items-center gap-1">
+        <Kbd>Enter</Kbd> open
+      </span>
+      {choose ? (
+        <span className="flex items-center gap-1">
+          <Kbd>{letters ? "X" : "Space"}</Kbd> choose
+        </span>
+      ) : null}
+    </span>
   );
 }
 

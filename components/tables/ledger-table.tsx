@@ -10,7 +10,7 @@ import {
 } from "@tanstack/react-table";
 import type { Route } from "next";
 import { useRouter } from "next/navigation";
-import { type MouseEvent, memo, type ReactNode, useId, useMemo } from "react";
+import { type MouseEvent, memo, type ReactNode, useId, useMemo, useRef } from "react";
 import { CheckMark } from "../forms/checkbox";
 import { AppLink } from "../ui/app-link";
 import { cx } from "../ui/class-names";
@@ -59,7 +59,8 @@ export function LedgerTable<Row extends LedgerRow>({
   const rows = table.getRowModel().rows;
   const ids = useMemo(() => rows.map((row) => row.id), [rows]);
   const byId = useMemo(() => new Map(columns.map((column) => [column.id, column])), [columns]);
-  const keys = useRowKeys({ ids, onChoose: selectable ? onChoose : null });
+  const list = useRef<HTMLTableSectionElement>(null);
+  const keys = useRowKeys({ list, ids, onChoose: selectable ? onChoose : null });
   const visible = table.getVisibleLeafColumns();
   const titleId = (columns.find((column) => column.phone === "title") ?? columns[0])?.id;
   const chosenCount = ids.filter((id) => selection[id]).length;
@@ -133,7 +134,7 @@ export function LedgerTable<Row extends LedgerRow>({
           })}
         </tr>
       </thead>
-      <tbody role="rowgroup" className="phone:block" onKeyDown={keys.onKeyDown}>
+      <tbody ref={list} role="rowgroup" className="phone:block" onKeyDown={keys.onKeyDown}>
         {rows.map((row) => (
           <LedgerLine
             key={row.id}

@@ -5,6 +5,7 @@ import { createRoot, type Root } from "react-dom/client";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { NetworkError } from "@/lib/client/fetch-json";
 import { makeQueryClient } from "../providers";
+import { setLetterKeys } from "../shell/letter-keys";
 import { Ledger, type LedgerProps } from "./ledger";
 import type { LedgerColumn } from "./ledger-types";
 
@@ -129,6 +130,93 @@ describe("moving through a ledger by keyboard", () => {
     await show({});
     act(() => place("1")?.focus());
     expect((await press(" ")).defaultPrevented).toBe(false);
+  });
+});
+
+describe("a ledger's keys from the page around it", () => {
+  const onPage = async (key: string, target: Element = document.body, more: KeyboardEventInit = {}) => {
+    const event = new KeyboardEvent("keydown", { key, bubbles: true, cancelable: true, ...more });
+    await act(async () => void target.dispatchEvent(event));
+    return event;
+  };
+  const inHand = () => document.activeElement?.closest("[data-row]")?.getAttribute("data-row") ?? null;
+  /** Something beside the list that has the focus. */
+  async function beside(html: string) {
+    const box = document.createElement("div");
+    box.innerHTML = html;
+    host.append(box);
+    const element = box.querySelector<HTMLElement>("[data-here]");
+    if (!element) throw new Error("nothing to focus");
+    act(() => element.focus());
+    return element;
+  }
+
+  afterEach(() => act(() => setLetterKeys(true)));
+
+  it.each(["j", "k", "ArrowDown", "ArrowUp"])(
+    "%s goes to the row in hand without a click first",
+    async (key) => {
+      await show({});
+      expect((await onPage(key)).defaultPrevented).toBe(true);
+      expect(inHand()).toBe("1");
+      await press("j");
+      expect(inHand()).toBe("2");
+    },
+  );
+
+  it("goes there from the link that led to the page, by letter; arrows go on scrolling", async () => {
+    await show({});
+    const link = await beside('<a href="/customers" data-here>Customers</a>');
+    expect((await onPage("ArrowDown", link)).defaultPrevented).toBe(false);
+    await onPage("j", link);
+    expect(inHand()).toBe("1");
+  });
+
+  it.each([
+    "<input data-here>",
+    "<textarea data-here></textarea>",
+    "<select data-here></select>",
+    "<button data-here>Sort</button>",
+    '<div contenteditable tabindex="0" data-here></div>',
+    '<div popover><a href="/x" data-here>X</a></div>',
+    '<dialog open><a href="/x" data-here>X</a></dialog>',
+  ])("leaves the keys to %s", async (html) => {
+    await show({});
+    const element = await beside(html);
+    for (const key of ["j", "k", "ArrowDown", "ArrowUp"]) {
+      expect((await onPage(key, element)).defaultPrevented, key).toBe(false);
+    }
+    expect(inHand()).toBeNull();
+  });
+
+  it("leaves keys with Ctrl, Alt or the command key, and everything while a dialog is open", async () => {
+    await show({});
+    for (const more of [{ ctrlKey: true }, { altKey: true }, { metaKey: true }]) {
+      expect((await onPage("j", document.body, more)).defaultPrevented).toBe(false);
+    }
+    await beside('<dialog open><a href="/x" data-here>X</a></dialog>');
+    expect((await onPage("j")).defaultPrevented).toBe(false);
+  });
+
+  it("acts on no letter once these are turned off, in the list or out of it, and the foot says so", async () => {
+    await show({ bulkActions: [{ label: "Archive", run: async () => {} }] });
+    expect(host.textContent).toContain("J K move");
+    act(() => setLetterKeys(false));
+    expect((await onPage("j")).defaultPrevented).toBe(false);
+    expect(host.textContent).not.toContain("J K");
+    expect(host.textContent).toContain("Space choose");
+    await onPage("ArrowDown");
+    await press("j");
+    await press("x");
+    expect(inHand()).toBe("1");
+    expect(host.querySelector("[data-chosen]")).toBeNull();
+    await press("ArrowDown");
+    expect(inHand()).toBe("2");
+  });
+
+  it("does nothing where the list is empty", async () => {
+    await show({ fetchPage: async () => ({ rows: [], nextCursor: null }) });
+    expect((await onPage("j")).defaultPrevented).toBe(false);
   });
 });
 

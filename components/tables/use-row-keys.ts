@@ -1,6 +1,7 @@
 "use client";
 
-import { type KeyboardEvent, useCallback, useState } from "react";
+import { type KeyboardEvent, type RefObject, useCallback, useEffect, useState } from "react";
+import { isPagesKey, letterKeysOn } from "../shell/letter-keys";
 
 /** Where a key leads from row `at` of `count`; null when the key means nothing here. */
 export function rowAfterKey(key: string, at: number, count: number): number | null {
@@ -27,12 +28,15 @@ export function rowAfterKey(key: string, at: number, count: number): number | nu
 
 /**
  * One tab stop for the whole ledger: keys move the row in hand, Enter follows its link (the browser does),
- * Space or X chooses it. The focus sits on the row's own link, so plain table semantics remain.
+ * Space or X chooses it. The focus sits on the row's own link, so plain table semantics remain. From the page
+ * around it, where nothing else wants the key, the first J, K or arrow goes to the row in hand.
  */
 export function useRowKeys({
+  list,
   ids,
   onChoose,
 }: {
+  list: RefObject<HTMLElement | null>;
   ids: readonly string[];
   onChoose: ((id: string) => void) | null;
 }) {
@@ -43,6 +47,7 @@ export function useRowKeys({
   const onKeyDown = useCallback(
     (event: KeyboardEvent<HTMLElement>) => {
       if (event.altKey || event.ctrlKey || event.metaKey || event.defaultPrevented) return;
+      if (isLetter(event.key) && !letterKeysOn()) return;
       const target = event.target;
       if (!(target instanceof HTMLElement)) return;
       const row = target.closest<HTMLElement>("[data-row]");
@@ -60,14 +65,35 @@ export function useRowKeys({
       if (nextId === undefined) return;
       event.preventDefault();
       setInHand(nextId);
-      const place = event.currentTarget.querySelector<HTMLElement>(
-        `[data-row="${CSS.escape(nextId)}"] [data-row-focus]`,
-      );
-      place?.focus();
-      place?.scrollIntoView({ block: "nearest" });
+      goTo(event.currentTarget, nextId);
     },
     [ids, onChoose],
   );
 
+  useEffect(() => {
+    function onPage(event: globalThis.KeyboardEvent) {
+      if (current === null || !list.current || !isPagesKey(event)) return;
+      const { target } = event;
+      if (!(target instanceof HTMLElement) || list.current.contains(target)) return;
+      // On a link the arrows scroll, as everywhere; a letter means nothing there.
+      const reaches = isLetter(event.key) ? letterKeysOn() : !target.closest("a");
+      if (!reaches || !["j", "k", "ArrowDown", "ArrowUp"].includes(event.key)) return;
+      event.preventDefault();
+      goTo(list.current, current);
+    }
+    document.addEventListener("keydown", onPage);
+    return () => document.removeEventListener("keydown", onPage);
+  }, [list, current]);
+
   return { current, onKeyDown, onFocusRow: setInHand };
+}
+
+function goTo(list: HTMLElement, id: string): void {
+  const place = list.querySelector<HTMLElement>(`[data-row="${CSS.escape(id)}"] [data-row-focus]`);
+  place?.focus();
+  place?.scrollIntoView({ block: "nearest" });
+}
+
+function isLetter(key: string): boolean {
+  return key.length === 1 && key !== " ";
 }
