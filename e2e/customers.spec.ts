@@ -35,7 +35,7 @@ test("a fault in a field is said at the field, and what was typed is still there
   await form.getByRole("button", { name: "Add customer" }).click();
   const alert = form.getByRole("alert");
   await expect(alert).toContainText("2 fields need another look.");
-  await expect(alert).toBeFocused();
+  await expect(form.getByLabel("Name")).toBeFocused();
   await expect(form.getByLabel("Name")).toHaveAccessibleDescription("Give the customer a name.");
   await expect(form.getByLabel("E-mail")).toHaveAccessibleDescription(
     "Write an address like anna@example.org.",

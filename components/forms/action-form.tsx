@@ -35,8 +35,8 @@ export function ActionForm({
 }
 
 /**
- * Says why nothing was saved and takes the focus after every failed attempt. Each field error is a link
- * to its field; a network failure offers to send the same thing again.
+ * Says why nothing was saved. After every failed attempt the focus goes to the first field that is wrong, or here
+ * where no field is. Each field error is a link to its field; a network failure offers to send the same again.
  */
 export function FormError({ state }: { state: State }) {
   const box = useRef<HTMLDivElement>(null);
@@ -50,7 +50,8 @@ export function FormError({ state }: { state: State }) {
   useEffect(() => {
     if (!shown || focusedFor.current === attempts) return;
     focusedFor.current = attempts;
-    box.current?.focus();
+    const wrong = box.current?.closest("form")?.querySelector<HTMLElement>('[aria-invalid="true"]');
+    (wrong ?? box.current)?.focus();
   }, [shown, attempts]);
 
   if (!shown) return null;
@@ -72,7 +73,7 @@ export function FormError({ state }: { state: State }) {
               <button
                 type="button"
                 className="link rounded-sm text-left text-ink!"
-                onClick={() => form.setFocus(path)}
+                onClick={() => fieldAt(box.current, path)?.focus()}
               >
                 {message}
               </button>
@@ -111,6 +112,17 @@ export function SubmitButton({
 
 function summary(count: number): string {
   return count === 1 ? "One field needs another look." : `${count} fields need another look.`;
+}
+
+/** By its name; what is wrong with an entry of a list may be said at the list alone. */
+function fieldAt(within: HTMLElement | null, path: string): HTMLElement | null {
+  const form = within?.closest("form");
+  const [list = path] = path.split(".");
+  return (
+    [path, list]
+      .map((name) => form?.querySelector<HTMLElement>(`[name="${CSS.escape(name)}"]`))
+      .find((field) => field) ?? null
+  );
 }
 
 type ListedError = { path: string; message: string };

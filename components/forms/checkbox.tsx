@@ -63,8 +63,8 @@ export function Checkbox({
         <CheckMark
           {...input}
           id={id}
-          aria-invalid={error ? true : undefined}
-          aria-describedby={help || error ? describedBy : undefined}
+          aria-invalid={error ? true : input["aria-invalid"]}
+          aria-describedby={help || error ? describedBy : input["aria-describedby"]}
         />
         <span>{label}</span>
       </label>

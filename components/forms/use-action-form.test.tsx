@@ -77,7 +77,7 @@ describe("a form tied to a server action", () => {
     expect(input("name").getAttribute("aria-invalid")).toBe("true");
     const described = input("name").getAttribute("aria-describedby") ?? "";
     expect(document.getElementById(described)?.textContent).toBe("Write a name.");
-    expect(document.activeElement?.getAttribute("role")).toBe("alert");
+    expect(document.activeElement).toBe(input("name"));
   });
 
   it("sends a decimal comma as a number and leaves an empty optional field out", async () => {
@@ -113,7 +113,33 @@ describe("a form tied to a server action", () => {
     const alert = host.querySelector("[role=alert]");
     expect(alert?.textContent).toContain("This name is taken.");
     expect(alert?.textContent).toContain("Another instrument has it.");
-    expect(document.activeElement).toBe(alert);
+    expect(document.activeElement).toBe(input("name"));
+  });
+
+  it("gives the focus to the reason itself where it belongs to no field", async () => {
+    const action = async (): Promise<Answer> => ({
+      ok: false,
+      error: { code: "stale", message: "Somebody changed this meanwhile." },
+    });
+    await act(async () => root.render(<TestForm action={action} />));
+    await type("name", "Castellan 186");
+    await submit();
+    expect(document.activeElement?.getAttribute("role")).toBe("alert");
+  });
+
+  it("goes to the first field that is wrong, in the order of the page, and from the summary to each", async () => {
+    const action = vi.fn<(given: unknown) => Promise<Answer>>();
+    await act(async () => root.render(<TestForm action={action} />));
+    await type("name", "Castellan 186");
+    await type("humidity", "140");
+    await submit();
+    expect(document.activeElement).toBe(input("humidity"));
+    act(() => input("name").focus());
+    const link = [...host.querySelectorAll("button")].find(
+      ({ textContent }) => textContent === "At most 100 %.",
+    );
+    act(() => link?.click());
+    expect(document.activeElement).toBe(input("humidity"));
   });
 
   it("offers to send again when the server does not answer, with nothing lost", async () => {

@@ -55,6 +55,7 @@ export function KeysFields({
     <>
       <Select
         label="Keys"
+        name={isFree ? undefined : "firstMidi"}
         options={ranges}
         value={isFree || !usual ? free : String(usual.keys)}
         onChange={(event) => choose(event.target.value)}
@@ -62,6 +63,7 @@ export function KeysFields({
       />
       <Select
         label="Break"
+        name="breakMidi"
         optional
         help="The first note of the treble bridge."
         placeholder="Not looked for yet"
@@ -74,6 +76,7 @@ export function KeysFields({
         <>
           <Select
             label="Lowest key"
+            name="firstMidi"
             options={firstKeys}
             value={String(value.firstMidi)}
             onChange={(event) => onChange({ firstMidi: Number(event.target.value) })}
@@ -81,6 +84,7 @@ export function KeysFields({
           />
           <Select
             label="Highest key"
+            name="lastMidi"
             options={lastKeys}
             value={String(value.lastMidi)}
             onChange={(event) => onChange({ lastMidi: Number(event.target.value) })}

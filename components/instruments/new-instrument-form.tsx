@@ -69,6 +69,7 @@ export function NewInstrumentForm({
       <div className="grid gap-x-6 gap-y-4 sm:grid-cols-2">
         <RecordPicker
           of="sites"
+          name="siteId"
           label="Site"
           help="Where it stands."
           value={picked.site}
@@ -80,6 +81,7 @@ export function NewInstrumentForm({
         />
         <RecordPicker
           of="customers"
+          name="ownerId"
           label="Owner"
           optional
           help="The site’s customer, if left empty."

@@ -134,6 +134,7 @@ export function PlaceDialog({
         <TextInput label={moving ? "On" : "There since"} type="date" max={today} {...state.field("since")} />
         <RecordPicker
           of="sites"
+          name="siteId"
           label="Site"
           value={parties.site}
           error={errors.siteId?.message}
@@ -141,6 +142,7 @@ export function PlaceDialog({
         />
         <RecordPicker
           of="customers"
+          name="ownerId"
           label="Owner"
           optional
           help="The site’s customer, if left empty."
@@ -151,6 +153,7 @@ export function PlaceDialog({
         <div className="grid gap-4 sm:grid-cols-2">
           <RecordPicker
             of="customers"
+            name="payerId"
             label="Who pays"
             optional
             help="The owner, if left empty."
@@ -160,6 +163,7 @@ export function PlaceDialog({
           />
           <RecordPicker
             of="customers"
+            name="bookingContactId"
             label="Who books"
             optional
             help="The owner, if left empty."

@@ -52,6 +52,7 @@ export function TemperamentField({
     <div>
       <Select
         label="Temperament"
+        name={isOwn ? undefined : "temperament"}
         options={options}
         value={isOwn ? own : String(value ?? "equal")}
         onChange={(event) => choose(event.target.value)}
@@ -69,6 +70,7 @@ export function TemperamentField({
                 <span className="field-box px-2!" data-invalid={errors[index] ? "" : undefined}>
                   <input
                     id={`${id}-${note}`}
+                    name={`temperament.${index}`}
                     inputMode="decimal"
                     autoComplete="off"
                     value={typed[index] ?? ""}

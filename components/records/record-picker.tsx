@@ -22,6 +22,7 @@ type Answer = {
 /** Customers or sites of the shop, found by typing. Empty again by deleting the words, where that is allowed. */
 export function RecordPicker({
   of,
+  name,
   label,
   help,
   error,
@@ -30,6 +31,8 @@ export function RecordPicker({
   onChange,
 }: {
   of: "customers" | "sites";
+  /** Of the form's field. */
+  name: string;
   label: ReactNode;
   help?: ReactNode;
   error?: string;
@@ -93,6 +96,7 @@ export function RecordPicker({
           <span className="field-box" data-invalid={error ? "" : undefined}>
             <input
               {...control}
+              name={name}
               role="combobox"
               aria-expanded={open}
               aria-controls={listId}

@@ -103,6 +103,7 @@ export function SiteForm({
       <div className="grid gap-x-6 gap-y-4 sm:grid-cols-2">
         <RecordPicker
           of="customers"
+          name="customerId"
           label="Customer"
           value={customer}
           error={state.form.formState.errors.customerId?.message}

@@ -1,5 +1,6 @@
 "use client";
 
+import { useId } from "react";
 import { Checkbox } from "@/components/forms/checkbox";
 import { FieldError } from "@/components/forms/field";
 
@@ -18,6 +19,7 @@ export function PeopleChoice({
   onChange: (ids: string[]) => void;
   error?: string | undefined;
 }) {
+  const errorId = useId();
   return (
     <fieldset className="min-w-0">
       <legend className="font-medium">Comes</legend>
@@ -25,9 +27,13 @@ export function PeopleChoice({
         <p className="mt-1 text-ink-soft">Nobody can be booked yet. The owner says who can, under Shop.</p>
       ) : null}
       <div className="flex flex-wrap gap-x-6">
-        {people.map(({ id, name }) => (
+        {people.map(({ id, name }, index) => (
           <Checkbox
             key={id}
+            name="technicianIds"
+            // The first carries what is wrong with the choice, and takes the focus for it.
+            aria-invalid={error && index === 0 ? true : undefined}
+            aria-describedby={error ? errorId : undefined}
             label={name}
             checked={chosen.includes(id)}
             disabled={id === fixedId}
@@ -38,7 +44,7 @@ export function PeopleChoice({
         ))}
       </div>
       {fixedId ? <p className="lab">You book your own visits; the office books those of others.</p> : null}
-      {error ? <FieldError>{error}</FieldError> : null}
+      {error ? <FieldError id={errorId}>{error}</FieldError> : null}
     </fieldset>
   );
 }

@@ -1,5 +1,6 @@
 "use client";
 
+import { useId } from "react";
 import { Checkbox } from "@/components/forms/checkbox";
 import { FieldError } from "@/components/forms/field";
 import { TextInput } from "@/components/forms/text-input";
@@ -20,6 +21,7 @@ export function WorkChoice({
   onChange: (jobs: ChosenJob[]) => void;
   error?: string | undefined;
 }) {
+  const errorId = useId();
   const chosen = new Map(jobs.map((job) => [job.instrumentId, job]));
   // In the order of the list, whatever the order of ticking: it is the order of the work.
   const inOrder = (next: ReadonlyMap<string, ChosenJob>) =>
@@ -59,7 +61,7 @@ export function WorkChoice({
         </Button>
       ) : null}
       <ul className="mt-1 border-t border-hairline">
-        {instruments.map(({ id, name, room, serial }) => {
+        {instruments.map(({ id, name, room, serial }, index) => {
           const job = chosen.get(id);
           const more = [room, serial && `no. ${serial}`].filter(Boolean).join(", ");
           return (
@@ -73,6 +75,10 @@ export function WorkChoice({
                     {name} {more ? <span className="text-ink-soft">{more}</span> : null}
                   </>
                 }
+                name="jobs"
+                // The first carries what is wrong with the choice, and takes the focus for it.
+                aria-invalid={error && index === 0 ? true : undefined}
+                aria-describedby={error ? errorId : undefined}
                 checked={job !== undefined}
                 onChange={(event) => tick(id, event.target.checked)}
               />
@@ -93,7 +99,7 @@ export function WorkChoice({
           );
         })}
       </ul>
-      {error ? <FieldError>{error}</FieldError> : null}
+      {error ? <FieldError id={errorId}>{error}</FieldError> : null}
     </fieldset>
   );
 }

@@ -1,0 +1,85 @@
+// @vitest-environment happy-dom
+import { QueryClientProvider } from "@tanstack/react-query";
+import { act, type ReactNode } from "react";
+import { createRoot, type Root } from "react-dom/client";
+import { afterEach, beforeEach, expect, it, vi } from "vitest";
+import { NewInstrumentForm } from "@/components/instruments/new-instrument-form";
+import { makeQueryClient } from "@/components/providers";
+import { SiteForm } from "@/components/sites/site-form";
+import { NewVisitForm } from "@/components/visits/new-visit-form";
+import { newId } from "@/lib/ids";
+
+vi.mock("next/navigation", () => ({ useRouter: () => ({ push: vi.fn(), refresh: vi.fn() }) }));
+vi.mock("next/link", () => ({
+  default: ({ href, ...rest }: { href: string }) => <a href={href} {...rest} />,
+}));
+
+let root: Root;
+let host: HTMLElement;
+beforeEach(() => {
+  Reflect.set(globalThis, "IS_REACT_ACT_ENVIRONMENT", true);
+  host = document.createElement("div");
+  document.body.append(host);
+  root = createRoot(host);
+});
+afterEach(() => {
+  act(() => root.unmount());
+  host.remove();
+});
+
+async function submit(form: ReactNode) {
+  await act(async () =>
+    root.render(<QueryClientProvider client={makeQueryClient()}>{form}</QueryClientProvider>),
+  );
+  await act(async () => {
+    host.querySelector("form")?.dispatchEvent(new Event("submit", { bubbles: true, cancelable: true }));
+    await new Promise((done) => setTimeout(done, 20));
+  });
+}
+
+const focused = () => document.activeElement?.getAttribute("name");
+const never = vi.fn();
+
+it("puts the focus where a new instrument lacks something: first the site, then what else is empty", async () => {
+  const form = (site: { id: string; label: string } | null) => (
+    <NewInstrumentForm
+      key={site?.id}
+      action={never}
+      newId={newId()}
+      today="2026-05-14"
+      referenceHz={440}
+      site={site}
+      owner={null}
+      back="/instruments"
+    />
+  );
+  await submit(form(null));
+  expect(focused()).toBe("siteId");
+  await submit(form({ id: newId(), label: "Home" }));
+  expect(focused()).toBe("maker");
+  expect(never).not.toHaveBeenCalled();
+});
+
+it("does the same for a site without a customer", async () => {
+  const beginning = { id: newId(), customer: null, country: "IE", timeZone: "Europe/Dublin" };
+  await submit(<SiteForm action={never} beginning={beginning} countries={[]} timeZones={[]} />);
+  expect(focused()).toBe("customerId");
+});
+
+it("does the same for a visit nobody comes to", async () => {
+  await submit(
+    <NewVisitForm
+      visitId={newId()}
+      site={{ id: newId(), name: "Home", timeZone: "Europe/Dublin" }}
+      instruments={[]}
+      technicians={[
+        { id: newId(), name: "Ines" },
+        { id: newId(), name: "Jonas" },
+      ]}
+      chosen={{ date: "2030-05-14", instrumentIds: [] }}
+      locale="en-GB"
+      action={never}
+    />,
+  );
+  expect(focused()).toBe("technicianIds");
+});
