@@ -227,6 +227,13 @@ describe("two people at one note", () => {
     expect(run(withG3, { type: "received", notes: [note(69, [1, 2, 3])] }).order).toEqual([a4]);
   });
 
+  it("counts cents still unsaved from the sheet's reference as it is by now", () => {
+    const typed = run(empty, type(1, "0.0", A4), settle);
+    expect(inputOf(row(typed, a4), typed.referenceHz).readings[0]?.hz).toBeCloseTo(440, 9);
+    const moved = run(typed, { type: "received", notes: [], referenceHz: 442 });
+    expect(inputOf(row(moved, a4), moved.referenceHz).readings[0]?.hz).toBeCloseTo(442, 9);
+  });
+
   it("does not let an older reading of the sheet undo a newer save", () => {
     const saved = run(withG3, type(5, "8.8"), settle, { type: "saved", key: g3, record: theirs });
     expect(text(run(saved, { type: "received", notes: [note(55, [2.8, 3.9], 2)] }), 5)).toBe("+8.8");
