@@ -1,7 +1,8 @@
 import { describe, expect, it } from "vitest";
-import type { Standing } from "@/lib/visits/progress/rules";
+import type { Standing, Step } from "@/lib/visits/progress/rules";
 import type { JobProgress } from "@/lib/visits/progress/service";
-import { continuing, jobLine, planWords, readingsWords, standingWords, takenWords } from "./progress-words";
+import type { VisitState } from "@/lib/visits/rules";
+import { goesOn, jobLine, planWords, readingsWords, standingWords, takenWords } from "./progress-words";
 
 const standing = (facts: Partial<Standing> = {}): Standing => ({
   sheetId: "sheet",
@@ -79,19 +80,45 @@ describe("the words of a job", () => {
   });
 });
 
-describe("where a job goes on", () => {
+describe("where the work goes on", () => {
+  const at = (
+    jobs: JobProgress[],
+    next: Step | null,
+    more: { state?: VisitState; canRecord?: boolean } = {},
+  ) =>
+    goesOn(
+      {
+        visit: { state: more.state ?? "in-progress" },
+        canRecord: more.canRecord ?? true,
+        jobs,
+        opened: { jobId: "job", next, strangers: [], history: [], standingNote: null },
+      },
+      "/visits/7",
+    );
+
   it("leads to a new sheet of the right stage, and to the one begun where there is one", () => {
-    const opened = { strangers: [] };
-    expect(continuing(job({}), { next: "found", ...opened })).toEqual({
+    expect(at([job({})], "found")).toEqual({
       label: "Continue: read as found",
       href: "/instruments/piano/sheets/new?job=job&stage=as-found",
     });
-    expect(continuing(job({ found: standing({ notes: 0 }) }), { next: "found", ...opened })?.href).toBe(
+    expect(at([job({ found: standing({ notes: 0 }) })], "found")?.href).toBe(
       "/instruments/piano/sheets/sheet",
     );
-    expect(continuing(job({ found: standing() }), { next: "left", ...opened })?.href).toContain(
-      "stage=as-left",
-    );
-    expect(continuing(job({}), { next: null, ...opened })).toBeNull();
+    expect(at([job({ found: standing() })], "left")?.href).toContain("stage=as-left");
+  });
+
+  it("leads to the next instrument when this one is read as left, and nowhere after the last", () => {
+    const left = job({ left: standing() });
+    const other = { ...job({}), id: "other", instrument: "Castellan 118" };
+    expect(at([left, other], null)).toEqual({
+      label: "Continue: Castellan 118",
+      href: "/visits/7?job=other",
+    });
+    expect(at([left, { ...other, progress: left.progress }], null)).toBeNull();
+  });
+
+  it("leads nowhere before the work has begun, and for a person who may not record", () => {
+    expect(at([job({})], null, { state: "confirmed" })).toBeNull();
+    expect(at([job({})], null, { canRecord: false })).toBeNull();
   });
 });

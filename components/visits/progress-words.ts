@@ -10,7 +10,7 @@ import {
   type Standing,
   type Step,
 } from "@/lib/visits/progress/rules";
-import type { JobProgress, OpenedJob } from "@/lib/visits/progress/service";
+import type { JobProgress, OpenedJob, VisitWork } from "@/lib/visits/progress/service";
 import { wallTimeOf } from "@/lib/wall-time";
 
 /** The words of a job's rows. Sharps in them are still to be drawn. */
@@ -121,8 +121,29 @@ export function stepHref(step: Step, job: JobProgress): string {
 }
 
 /** "Continue: look at E6", and where it leads. */
-export function continuing(job: JobProgress, { next, strangers }: Opened) {
+function continuing(job: JobProgress, { next, strangers }: Opened): GoOn | null {
   return next ? { label: `Continue: ${stepWords(next, strangers)}`, href: stepHref(next, job) } : null;
+}
+
+export type GoOn = { label: string; href: string };
+
+/** Where the work under way goes on: the opened job's next step, else the first other job not read as left. */
+export function goesOn(
+  {
+    visit,
+    jobs,
+    opened,
+    canRecord,
+  }: Pick<VisitWork, "jobs" | "opened" | "canRecord"> & {
+    visit: Pick<VisitWork["visit"], "state">;
+  },
+  href: string,
+): GoOn | null {
+  const job = jobs.find(({ id }) => id === opened?.jobId);
+  const step = job && opened ? continuing(job, opened) : null;
+  if (step || visit.state !== "in-progress" || !canRecord) return step;
+  const other = jobs.find(({ progress }) => !isRead(progress.left));
+  return other ? { label: `Continue: ${other.instrument}`, href: `${href}?job=${other.id}` } : null;
 }
 
 type At = Pick<JobProgress, "id" | "instrumentId">;

@@ -10,6 +10,7 @@ import type { ActionResult } from "@/lib/doors/action-result";
 import type { Move, VisitState } from "@/lib/visits/rules";
 import { MoveDialog, type MovedVisit } from "./move-dialog";
 import { moveDone, moveLabel, nextMove } from "./move-words";
+import type { GoOn } from "./progress-words";
 import { ReasonDialog } from "./reason-dialog";
 
 type Stepped = MovedVisit & { version: number; moves: Move[] };
@@ -72,7 +73,8 @@ export function VisitMoves({
   step,
   move: moveAction,
   changeHref,
-}: MovesProps & { changeHref: string | undefined }) {
+  goOn,
+}: MovesProps & { changeHref: string | undefined; goOn: GoOn | null }) {
   const { busy, refused, take } = useVisitMoves({ visit, step });
   const [asking, setAsking] = useState<VisitState | null>(null);
   const next = nextMove(visit.moves);
@@ -83,6 +85,10 @@ export function VisitMoves({
     if (move.asksReason) setAsking(move.to);
     else take(move);
   }
+
+  const taking = { busy: busy !== null && busy === next?.to, onTake: press };
+  const lead = goOn || next ? <Lead goOn={goOn} next={next} {...taking} /> : null;
+  const second = next ? <MoveButton move={next} {...taking} /> : null;
 
   return (
     <>
@@ -120,22 +126,15 @@ export function VisitMoves({
             </ul>
           </Popover>
         ) : null}
-        {next ? (
-          <Button
-            kind="primary"
-            className="max-lg:hidden"
-            busy={busy === next.to}
-            onClick={() => press(next)}
-          >
-            {moveLabel(next)}
-          </Button>
-        ) : null}
+        <span className="flex gap-2 max-lg:hidden">
+          {goOn ? second : null}
+          {lead}
+        </span>
       </div>
-      {next ? (
+      {lead ? (
         <ActionStrip>
-          <Button kind="primary" busy={busy === next.to} onClick={() => press(next)}>
-            {moveLabel(next)}
-          </Button>
+          {goOn ? second : null}
+          {lead}
         </ActionStrip>
       ) : null}
       <ReasonDialog
@@ -160,10 +159,48 @@ export function VisitMoves({
   );
 }
 
+type Taking = { busy: boolean; onTake: (move: Move) => void };
+
+function MoveButton({
+  move,
+  kind,
+  at,
+  busy,
+  onTake,
+}: Taking & { move: Move; kind?: "primary"; at?: string }) {
+  return (
+    <Button kind={kind} className="min-w-0" busy={busy} onClick={() => onTake(move)}>
+      <span className="truncate">
+        {moveLabel(move)}
+        {at ? `: ${at}` : null}
+      </span>
+    </Button>
+  );
+}
+
 /**
- * On the day's page: what comes next on the visit in hand. Work under way goes on where it stands, with the
- * visit's own next step beside it; else that step leads, or the visit itself where no step is this person's.
- * `strip` draws it under the thumb instead of at the head.
+ * What really comes next, in the same words at the head of the page, under the thumb and on the day's page: the
+ * work, where it is under way and goes on; else the visit's own next step.
+ */
+function Lead({
+  goOn,
+  next,
+  at,
+  ...taking
+}: Taking & { goOn: GoOn | null; next: Move | undefined; at?: string }) {
+  if (!goOn) return next ? <MoveButton kind="primary" move={next} at={at} {...taking} /> : null;
+  return (
+    <LinkButton kind="primary" href={goOn.href} className="min-w-0">
+      <span className="truncate">
+        <SharpText text={goOn.label} />
+      </span>
+    </LinkButton>
+  );
+}
+
+/**
+ * On the day's page: what comes next on the visit in hand, with the visit's own next step beside work that goes on;
+ * the visit itself where no step is this person's. `strip` draws it under the thumb instead of at the head.
  */
 export function NextStep({
   visit,
@@ -171,49 +208,32 @@ export function NextStep({
   siteName,
   goOn,
   strip,
-}: Omit<MovesProps, "move" | "locale"> & {
-  siteName: string;
-  goOn: { label: string; href: string } | null;
-  strip: boolean;
-}) {
+}: Omit<MovesProps, "move" | "locale"> & { siteName: string; goOn: GoOn | null; strip: boolean }) {
   const { busy, take } = useVisitMoves({ visit, step });
   const next = nextMove(visit.moves);
   const href = `/visits/${visit.id}`;
-  const lead = goOn ? (
-    <LinkButton kind="primary" href={goOn.href} className="min-w-0">
-      <span className="truncate">
-        <SharpText text={goOn.label} />
-      </span>
-    </LinkButton>
-  ) : null;
+  const taking = { busy: busy !== null, onTake: take };
   if (!strip) {
     return (
       <>
         <LinkButton href={href}>Open visit</LinkButton>
-        {next ? (
-          <Button kind={lead ? "secondary" : "primary"} busy={busy !== null} onClick={() => take(next)}>
-            {moveLabel(next)}
-          </Button>
-        ) : null}
-        {lead}
+        {goOn && next ? <MoveButton move={next} {...taking} /> : null}
+        <Lead goOn={goOn} next={next} {...taking} />
       </>
     );
   }
   return (
     <ActionStrip>
-      {next ? <LinkButton href={href}>Open</LinkButton> : null}
-      {lead ??
-        (next ? (
-          <Button kind="primary" className="min-w-0" busy={busy !== null} onClick={() => take(next)}>
-            <span className="truncate">
-              {moveLabel(next)}: {siteName}
-            </span>
-          </Button>
-        ) : (
-          <LinkButton kind="primary" href={href} className="min-w-0">
-            <span className="truncate">Open {siteName}</span>
-          </LinkButton>
-        ))}
+      {goOn || next ? (
+        <>
+          {next ? <LinkButton href={href}>Open</LinkButton> : null}
+          <Lead goOn={goOn} next={next} at={siteName} {...taking} />
+        </>
+      ) : (
+        <LinkButton kind="primary" href={href} className="min-w-0">
+          <span className="truncate">Open {siteName}</span>
+        </LinkButton>
+      )}
     </ActionStrip>
   );
 }

@@ -7,7 +7,7 @@ import { DemoBadge } from "@/components/ui/demo-badge";
 import { Sign } from "@/components/ui/sign";
 import { EmptyState } from "@/components/ui/states";
 import { DayString } from "@/components/visits/day-string";
-import { continuing } from "@/components/visits/progress-words";
+import { goesOn } from "@/components/visits/progress-words";
 import { hoursOf } from "@/components/visits/time-words";
 import { VisitJobs } from "@/components/visits/visit-jobs";
 import { NextStep } from "@/components/visits/visit-moves";
@@ -131,14 +131,13 @@ function groups({ reach, visits }: WorkDay) {
 }
 
 function InHand({ work, locale }: { work: VisitWork; locale: string }) {
-  const { visit, jobs, opened } = work;
-  const job = jobs.find(({ id }) => id === opened?.jobId);
-  const only = jobs.length === 1 ? job : undefined;
+  const { visit, jobs } = work;
+  const only = jobs.length === 1 ? jobs[0] : undefined;
   const next = {
     visit,
     siteName: visit.site.name,
     step: stepVisitAction,
-    goOn: job && opened ? continuing(job, opened) : null,
+    goOn: goesOn(work, "/today"),
   };
   return (
     <>

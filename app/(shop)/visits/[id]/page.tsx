@@ -6,6 +6,7 @@ import { AppLink } from "@/components/ui/app-link";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { Facts } from "@/components/ui/facts";
 import { Note } from "@/components/ui/note";
+import { goesOn } from "@/components/visits/progress-words";
 import { dayWithYear, durationWords, hoursOf, minutesBetween } from "@/components/visits/time-words";
 import { VisitHistory } from "@/components/visits/visit-history";
 import { VisitJobs } from "@/components/visits/visit-jobs";
@@ -65,6 +66,7 @@ export default async function VisitPage(props: Props) {
                   locale={locale}
                   step={stepVisitAction}
                   move={moveVisitAction}
+                  goOn={goesOn(work, `/visits/${visit.id}`)}
                   changeHref={
                     visit.canChange && !isOver(visit.state) ? `/visits/${visit.id}/change` : undefined
                   }
