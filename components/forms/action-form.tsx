@@ -42,7 +42,9 @@ export function FormError({ state }: { state: State }) {
   const box = useRef<HTMLDivElement>(null);
   const { failure, attempts, form, busy } = state;
   const errors = listErrors(form.formState.errors);
-  const shown = attempts > 0 && (failure !== null || errors.length > 0);
+  // What only needs confirming is asked beside its fields, see AskAgain.
+  const refused = failure !== null && failure.code !== "needs-confirming";
+  const shown = attempts > 0 && (refused || errors.length > 0);
 
   // The errors may be drawn after the attempt was counted; and an attempt takes the focus once, not again
   // when an error comes and goes while somebody types.

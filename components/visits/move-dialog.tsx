@@ -2,6 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { ActionForm, SubmitButton } from "@/components/forms/action-form";
+import { AskAgain } from "@/components/forms/ask-again";
 import { Checkbox } from "@/components/forms/checkbox";
 import { TextArea, TextInput } from "@/components/forms/text-input";
 import { useActionForm } from "@/components/forms/use-action-form";
@@ -66,6 +67,17 @@ function MoveForm({ visit, locale, action, onClose }: Props) {
         />
         <TextInput label="Starts" type="time" {...state.field("time")} />
       </div>
+      <AskAgain
+        state={state}
+        about={state.form.watch(["date", "time"]).join(" ")}
+        question="Move it all the same"
+        onYes={async () => {
+          state.form.setValue("confirm", true);
+          await state.submit();
+          // Another time is another question.
+          state.form.setValue("confirm", false);
+        }}
+      />
       {clash ? (
         <Clash clash={clash} locale={locale} onTake={(time) => state.form.setValue("time", time)} />
       ) : null}

@@ -4,6 +4,7 @@ import type { Route } from "next";
 import { useRouter } from "next/navigation";
 import type { z } from "zod";
 import { ActionForm, listErrors, SubmitButton } from "@/components/forms/action-form";
+import { AskAgain } from "@/components/forms/ask-again";
 import { Select } from "@/components/forms/select";
 import { TextArea, TextInput } from "@/components/forms/text-input";
 import { useActionForm } from "@/components/forms/use-action-form";
@@ -95,6 +96,17 @@ export function NewVisitForm({
         <TextInput label="Starts" type="time" {...state.field("time")} />
         <Select label="Length" options={lengths} {...state.numberField("minutes")} />
       </div>
+      <AskAgain
+        state={state}
+        about={form.watch(["date", "time"]).join(" ")}
+        question="Book it all the same"
+        onYes={async () => {
+          form.setValue("confirm", true);
+          await state.submit();
+          // Another time is another question.
+          form.setValue("confirm", false);
+        }}
+      />
       {clash ? <Clash clash={clash} locale={locale} onTake={(time) => form.setValue("time", time)} /> : null}
       <WorkChoice
         instruments={instruments}

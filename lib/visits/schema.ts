@@ -49,6 +49,9 @@ export const newVisit = z.object({
   notes: optionalText(5000),
 });
 
+/** A form is asked once about a start in the past. A program says what it means and is not asked. */
+const confirmable = { confirm: z.boolean().optional() };
+
 /** What the booking form knows: the site's wall time and how long. */
 export const visitPlan = newVisit
   .omit({ start: true, end: true, jobs: true })
@@ -60,6 +63,7 @@ export const visitPlan = newVisit
       .min(5, "At least 5 minutes.")
       .max(24 * 60, "At most 24 hours: a longer job is several visits."),
     jobs: jobs.default([]),
+    ...confirmable,
   })
   .refine(({ date, time }) => isWallTime(`${date}T${time}`), {
     path: ["date"],
@@ -94,6 +98,7 @@ export const visitMovePlan = z.object({
   date: day,
   time: z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, "Write a time like 09:30."),
   confirmed: z.boolean().default(false),
+  ...confirmable,
 });
 
 /** The same as a form sends it, with the visit it is about. */

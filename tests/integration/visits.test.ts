@@ -336,6 +336,7 @@ describe("the life of a visit", () => {
     );
     const error = await refusal(
       moveVisit(at.office, visit.id, {
+        confirm: true,
         version: visit.version,
         reason: "Caretaker late",
         date: "2026-05-15",

@@ -1,10 +1,12 @@
 import { afterAll, describe, expect, it } from "vitest";
 import { closeDatabases } from "@/db/client";
 import { addDays } from "@/lib/dates";
+import { newId } from "@/lib/ids";
 import { correctionChoices, planVisit } from "@/lib/visits/booking/service";
 import { workDay } from "@/lib/visits/day/service";
 import { cancelVisit, moveVisit } from "@/lib/visits/moves/service";
-import { visitPlan } from "@/lib/visits/schema";
+import { visitMovePlan, visitPlan } from "@/lib/visits/schema";
+import { createVisit, getVisit } from "@/lib/visits/service";
 import { closeFactories, makeCustomer, makeInstrument, makeShop, makeSite } from "../support/factories";
 
 afterAll(async () => {
@@ -29,6 +31,7 @@ async function scene() {
         minutes: 60,
         state,
         jobs: [{ instrumentId }],
+        confirm: true,
       }),
     );
   return { ...shop, siteId, instrumentId, today, book };
@@ -89,6 +92,43 @@ describe("booking by the site's clock", () => {
       code: "invalid",
       more: { fields: { time: expect.stringContaining("jump over") } },
     });
+  });
+
+  it("asks once about a start in the past, and takes it when it is confirmed", async () => {
+    const at = await scene();
+    const plan = {
+      id: newId(),
+      siteId: at.siteId,
+      technicianIds: [at.technician.memberId],
+      date: addDays(at.today, -3),
+      time: "09:00",
+      minutes: 60,
+    };
+    await expect(planVisit(at.office, visitPlan.parse(plan))).rejects.toMatchObject({
+      code: "needs-confirming",
+      status: 409,
+      message: "This is 3 days ago.",
+    });
+    await expect(getVisit(at.office, plan.id)).rejects.toMatchObject({ code: "not-found" });
+    const booked = await planVisit(at.office, visitPlan.parse({ ...plan, confirm: true }));
+    expect(booked.start.slice(0, 10)).toBe(plan.date);
+
+    const move = { version: 1, reason: "Was earlier", date: addDays(at.today, -5), time: "09:00" };
+    await expect(moveVisit(at.office, plan.id, visitMovePlan.parse(move))).rejects.toMatchObject({
+      code: "needs-confirming",
+    });
+    const moved = await moveVisit(at.office, plan.id, visitMovePlan.parse({ ...move, confirm: true }));
+    expect(moved.state).toBe("moved");
+    // A program that names the instant means it.
+    const { id } = await createVisit(at.office, {
+      siteId: at.siteId,
+      technicianIds: [at.otherTechnician.memberId],
+      start: "2026-05-14T09:00:00+01:00",
+      end: "2026-05-14T10:00:00+01:00",
+      jobs: [],
+      state: "confirmed",
+    });
+    expect(id).toBeTruthy();
   });
 
   it("offers for correction what is on the visit and what stands at the site", async () => {

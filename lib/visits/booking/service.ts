@@ -4,8 +4,9 @@ import { bookableMembers, instrumentsAt } from "@/db/queries/visits";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import { type Day, dayOf } from "@/lib/dates";
-import { invalid } from "@/lib/errors";
+import { invalid, needsConfirming } from "@/lib/errors";
 import { addMinutes, withOffset } from "@/lib/wall-time";
+import { pastWords } from "../past";
 import { instrumentName } from "../record";
 import type { VisitPlan, VisitRecord } from "../schema";
 import { bookableSite, createVisit, readVisit } from "../service";
@@ -70,10 +71,16 @@ export async function bookableTechnicians(actor: Actor): Promise<{ id: string; n
   return withShop(actor, (tx) => bookableMembers(tx, actor.shopId));
 }
 
+/** Books are sometimes brought up to date, so a start in the past is asked about once and then taken. */
+export function askAboutPast(start: string, timeZone: string, confirm: boolean | undefined): void {
+  const words = confirm ? null : pastWords(start, { now: new Date().toISOString(), timeZone });
+  if (words) throw needsConfirming(words, {});
+}
+
 /** Books by the site's wall clock. Where a time occurs twice, the first is meant; the API can say the second. */
 export async function planVisit(actor: Actor, plan: VisitPlan): Promise<VisitRecord> {
   authorise(actor, "visits.change");
-  const { date, time, minutes, ...fields } = plan;
+  const { date, time, minutes, confirm, ...fields } = plan;
   const { timeZone } = await withShop(actor, (tx) => bookableSite(tx, actor, plan.siteId));
   const wall = `${date}T${time}`;
   const start = withOffset(wall, timeZone, 0);
@@ -85,5 +92,6 @@ export async function planVisit(actor: Actor, plan: VisitPlan): Promise<VisitRec
       ...(read.faults.end ? { minutes: read.faults.end } : {}),
     });
   }
+  askAboutPast(start, timeZone, confirm);
   return createVisit(actor, { ...fields, start, end });
 }

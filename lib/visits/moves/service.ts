@@ -14,6 +14,7 @@ import { authorise } from "@/lib/auth/authorise";
 import { AppError, invalid, stale } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import { addMinutes, withOffset } from "@/lib/wall-time";
+import { askAboutPast } from "../booking/service";
 import { type Booking, guardOverlap, requireBookable } from "../overlap/service";
 import type { Move } from "../rules";
 import type { VisitMovePlan, VisitRecord, VisitTransition } from "../schema";
@@ -56,7 +57,11 @@ export async function transitionVisit(actor: Actor, id: string, step: VisitTrans
 }
 
 /** Moves a visit to another wall time at its site, keeping its length. */
-export async function moveVisit(actor: Actor, id: string, plan: VisitMovePlan): Promise<VisitRecord> {
+export async function moveVisit(
+  actor: Actor,
+  id: string,
+  { confirm, ...plan }: VisitMovePlan,
+): Promise<VisitRecord> {
   const before = await getVisit(actor, id);
   const length = (Date.parse(before.end) - Date.parse(before.start)) / 60_000;
   const wall = `${plan.date}T${plan.time}`;
@@ -65,6 +70,7 @@ export async function moveVisit(actor: Actor, id: string, plan: VisitMovePlan): 
   const read = siteTime({ start, end }, before.timeZone);
   if ("faults" in read)
     throw invalid({ time: read.faults.start ?? read.faults.end ?? "Choose another time." });
+  askAboutPast(start, before.timeZone, confirm);
   return transitionVisit(actor, id, { ...plan, to: "moved", start, end });
 }
 
