@@ -12,6 +12,7 @@ import { env } from "@/lib/env";
 import { newId } from "@/lib/ids";
 import { log } from "@/lib/log";
 import { afterAccountWrite, beforeAccountWrite } from "./guards";
+import { nobodyAs } from "./nobody";
 import { longest, normalisePassword, shortestWithSecondStep } from "./passwords";
 import { mailConfirmationLink, mailResetLink, mailThatAddressIsKnown } from "./person-mails";
 import { plainName } from "./plain-name";
@@ -71,13 +72,7 @@ function build() {
       },
       // Signing up answers the same whether the address is known or not; the mail tells its owner which.
       requireEmailVerification: true,
-      customSyntheticUser: ({ coreFields, id }) => ({
-        ...coreFields,
-        name: plainName(coreFields.name),
-        image: null,
-        twoFactorEnabled: false,
-        id,
-      }),
+      customSyntheticUser: ({ coreFields, id }) => nobodyAs(coreFields, id),
       onExistingUserSignUp: async ({ user }) => mailThatAddressIsKnown(user.email),
       sendResetPassword: async ({ user, token }) => mailResetLink(user, token),
       onPasswordReset: async ({ user }) => noteProvenAddress(user.id),

@@ -3,6 +3,7 @@ import { APIError, createAuthMiddleware, getSessionFromCtx } from "better-auth/a
 import { countRequest, forgetRequests } from "@/lib/doors/rate-limit";
 import { mailConfigured } from "@/lib/mail/send";
 import { knownDevice, rememberDevice } from "./device-cookie";
+import { nobody } from "./nobody";
 import { passwordFault, shortestAlone } from "./passwords";
 import { plainName } from "./plain-name";
 import { isProvenAddress } from "./proven-address";
@@ -68,16 +69,26 @@ async function slowDownGuessing(context: Context): Promise<void> {
  * What is refused here is refused whether the address is known or not. A sign-up that was never confirmed
  * makes way for the next one with its address: its link dies with it, so nobody confirms another's password.
  */
-async function prepareSignUp(context: Context): Promise<void> {
+async function prepareSignUp(context: Context) {
   const email = String(context.body?.email ?? "").toLowerCase();
-  if (!plainName(String(context.body?.name ?? "")))
+  const password = String(context.body?.password ?? "");
+  const name = String(context.body?.name ?? "");
+  if (!plainName(name))
     throw new APIError("UNPROCESSABLE_ENTITY", { code: "NAME_MISSING", message: "Give your name." });
-  await refuseWeakPassword(context, String(context.body?.password ?? ""));
+  await refuseWeakPassword(context, password);
   if (!isProvenAddress(email) && !mailConfigured()) {
     throw new APIError("SERVICE_UNAVAILABLE", {
       code: "NO_MAIL",
       message: "Mail is not set up on this server, so an address cannot be confirmed. Set SMTP_URL.",
     });
+  }
+  if (!isProvenAddress(email)) {
+    // Of two at once the second would fail where the address is free, and only there. It gets the usual answer.
+    const { allowed } = await countRequest(`sign-up:${email}`, { most: 1, seconds: 10 });
+    if (!allowed) {
+      await context.context.password.hash(password);
+      return context.json({ token: null, user: nobody(name, email) });
+    }
   }
   await context.context.adapter.deleteMany({
     model: "user",

@@ -6,7 +6,7 @@ import { addressOf, clientAddress, clientAddressHeader, noteClientAddresses } fr
 describe("the client's address", () => {
   it("is the socket's where no proxy is trusted, whatever the client says", () => {
     expect(addressOf("192.0.2.7", undefined, 0)).toBe("192.0.2.7");
-    expect(addressOf("192.0.2.7", "203.0.113.1", 0)).toBe("192.0.2.7");
+    expect(addressOf("::ffff:192.0.2.7", "203.0.113.1", 0)).toBe("192.0.2.7");
     expect(addressOf("192.0.2.7", ["203.0.113.1", "203.0.113.2"], 0)).toBe("192.0.2.7");
   });
 

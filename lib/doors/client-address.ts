@@ -25,7 +25,8 @@ export function addressOf(
     .split(",")
     .map((entry) => entry.trim())
     .filter(Boolean);
-  const hops = [...forwarded, socketAddress ?? "unknown"];
+  // A socket that takes both kinds of address writes the older kind in the newer one's form.
+  const hops = [...forwarded, socketAddress?.replace(/^::ffff:(?=[\d.]+$)/i, "") ?? "unknown"];
   return hops.at(-1 - trustedProxies) ?? hops[0] ?? "unknown";
 }
 
