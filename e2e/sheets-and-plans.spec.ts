@@ -112,19 +112,28 @@ test("the numbers of a plan are copied by a thumb", async ({ page }) => {
   expect(box?.width).toBeGreaterThanOrEqual(44);
 });
 
-test("what is said of the open note stands above the tablet's bar", async ({ page }) => {
-  await page.setViewportSize({ width: 820, height: 1180 });
-  const { instrumentId, sheetId } = await demoRecords(page.request);
-  await page.goto(`/instruments/${instrumentId}/sheets/${sheetId}?note=88`);
-  const words = page.getByRole("button", { name: "Remove note" });
-  await expect(words).toBeVisible();
-  await expect(async () => {
-    const [panel, bar] = [
-      await words.boundingBox(),
-      await page.locator("[data-bottom-bar]").first().boundingBox(),
-    ];
-    expect((panel?.y ?? 0) + (panel?.height ?? 0)).toBeLessThanOrEqual(bar?.y ?? 0);
-  }).toPass();
-  const row = page.getByRole("row").filter({ has: page.getByRole("rowheader", { name: "E6", exact: true }) });
-  await expect(row).toContainText(/\d ± \d.*good/);
-});
+for (const [width, height] of [
+  [820, 1180],
+  [700, 900],
+] as const) {
+  test(`what is said of the open note stands above the bar at ${width} pixels`, async ({ page }) => {
+    await page.setViewportSize({ width, height });
+    const { instrumentId, sheetId } = await demoRecords(page.request);
+    await page.goto(`/instruments/${instrumentId}/sheets/${sheetId}?note=88`);
+    const words = page.getByRole("button", { name: "Remove note" });
+    await expect(words).toBeVisible();
+    await expect(async () => {
+      const [panel, bar] = [
+        await words.boundingBox(),
+        await page.locator("[data-bottom-bar]").first().boundingBox(),
+      ];
+      expect(panel?.y ?? 0).toBeGreaterThan(0);
+      expect((panel?.y ?? 0) + (panel?.height ?? 0)).toBeLessThanOrEqual(bar?.y ?? 0);
+    }).toPass();
+    const row = page
+      .getByRole("row")
+      .filter({ has: page.getByRole("rowheader", { name: "E6", exact: true }) });
+    // Where the row has no room they stand on a line of their own.
+    if (width === 820) await expect(row).toContainText(/\d ± \d.*good/);
+  });
+}

@@ -45,7 +45,13 @@ export function OpenNote(props: Props) {
   const key = rowKey(row.place);
   const points = residualPoints(fit);
   const shownPoints = points.some(({ partial }) => columns.includes(partial));
-  const box = useInSight([shownPoints, fit?.rejected.length, live.questions.length, row.trouble?.kind]);
+  const box = useInSight([
+    shownPoints,
+    fit?.rejected.length,
+    live.questions.length,
+    row.trouble?.kind,
+    measures.wide,
+  ]);
   return (
     <div
       ref={box}
@@ -119,7 +125,7 @@ export function OpenNote(props: Props) {
   );
 }
 
-/** What is said of the note in hand is not left behind the bottom bar when the note is opened or the words grow. */
+/** What is said of the note in hand is not left behind the bottom bar when the note is opened, the words grow or the page is measured. */
 function useInSight(grows: readonly unknown[]) {
   const box = useRef<HTMLDivElement>(null);
   useEffect(() => {
