@@ -16,11 +16,10 @@ test("a new shop gets from its first sign-up to a kept stretch plan", async ({ p
   test.slow();
   await openNewShop(page, "Averil Strings", "Noor Vance");
 
-  await page
-    .getByRole("navigation", { name: "Main", exact: true })
-    .getByRole("link", { name: "Customers" })
-    .click();
-  await page.getByRole("link", { name: "New customer" }).click();
+  const main = page.getByRole("navigation", { name: "Main", exact: true });
+  await main.getByRole("link", { name: "Today" }).click();
+  await expect(page.getByRole("link", { name: "Book a visit" })).toHaveCount(0);
+  await page.getByRole("link", { name: "Add your first customer" }).click();
   const customer = page.getByRole("form", { name: "New customer" });
   await customer.getByLabel("Name").fill("Chapel on the Dunes");
   await customer.getByLabel("Telephone").fill("+353 20 910 4471");
@@ -35,6 +34,7 @@ test("a new shop gets from its first sign-up to a kept stretch plan", async ({ p
   await site.getByLabel("Town").fill("Port Averil");
   await site.getByRole("button", { name: "Add site" }).click();
   await expect(page.getByRole("heading", { level: 1, name: "Chapel" })).toBeVisible();
+  await expect(main.getByRole("link", { name: "Customers" })).toHaveAttribute("aria-current", "page");
 
   await page.getByRole("link", { name: "Add an instrument" }).click();
   const instrument = page.getByRole("form", { name: "New instrument" });

@@ -139,6 +139,19 @@ export function nearestFree(
   return chosen;
 }
 
+export type FirstRecords = { customerId: string | null; siteId: string | null; instruments: boolean };
+
+/** What a book still lacks before a visit can be booked in it: a step that works, one after the other. */
+export function firstStep({
+  customerId,
+  siteId,
+  instruments,
+}: FirstRecords): "customer" | "site" | "instrument" | null {
+  if (!customerId) return "customer";
+  if (!siteId) return "site";
+  return instruments ? null : "instrument";
+}
+
 type Timed = { state: VisitState; start: string; end: string };
 
 /** The visit in hand: under way, else on the way to it, else the first that is not over yet. */

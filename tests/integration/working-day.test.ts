@@ -5,6 +5,7 @@ import { newId } from "@/lib/ids";
 import { correctionChoices, planVisit } from "@/lib/visits/booking/service";
 import { workDay } from "@/lib/visits/day/service";
 import { cancelVisit, moveVisit } from "@/lib/visits/moves/service";
+import { firstStep } from "@/lib/visits/rules";
 import { visitMovePlan, visitPlan } from "@/lib/visits/schema";
 import { createVisit, getVisit } from "@/lib/visits/service";
 import { closeFactories, makeCustomer, makeInstrument, makeShop, makeSite } from "../support/factories";
@@ -73,6 +74,22 @@ describe("a working day", () => {
     const today = await workDay(at.technician);
     expect(today.visits.map(({ id, state }) => [id, state])).toEqual([[cancelled.id, "cancelled"]]);
     expect((await workDay(at.technician, day)).visits).toHaveLength(1);
+  });
+
+  it("begins an empty book with a step that works: customer, site, instrument, and then nothing more", async () => {
+    const shop = await makeShop();
+    const step = async () => {
+      const { beginning } = await workDay(shop.office);
+      return beginning && firstStep(beginning);
+    };
+    expect(await step()).toBe("customer");
+    const customerId = await makeCustomer(shop.shopId);
+    expect(await step()).toBe("site");
+    const siteId = await makeSite(shop.shopId, customerId);
+    expect(await step()).toBe("instrument");
+    expect((await workDay(shop.technician)).beginning).toEqual({ customerId, siteId, instruments: false });
+    await makeInstrument(shop.shopId, { siteId, ownerId: customerId });
+    expect(await step()).toBeNull();
   });
 
   it("names visits of past days that nobody has closed", async () => {

@@ -7,6 +7,7 @@ import { DemoBadge } from "@/components/ui/demo-badge";
 import { Sign } from "@/components/ui/sign";
 import { EmptyState } from "@/components/ui/states";
 import { DayString } from "@/components/visits/day-string";
+import { FirstSteps } from "@/components/visits/first-steps";
 import { goesOn } from "@/components/visits/progress-words";
 import { hoursOf } from "@/components/visits/time-words";
 import { VisitJobs } from "@/components/visits/visit-jobs";
@@ -167,6 +168,8 @@ function InHand({ work, locale }: { work: VisitWork; locale: string }) {
 }
 
 function NothingToday({ day, actor }: { day: WorkDay; actor: Actor }) {
+  if (day.beginning)
+    return <FirstSteps records={day.beginning} mayAdd={may(actor.role, "customers.change")} />;
   const when = day.day === day.today ? "today" : "on this day";
   return (
     <EmptyState

@@ -1,11 +1,12 @@
 import "server-only";
 import { withShop } from "@/db/client";
+import { firstRecords } from "@/db/queries/first-records";
 import { firstDayWithVisits, visitsBetween } from "@/db/queries/visits";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import { addDays, type Day } from "@/lib/dates";
 import { clockWithin } from "@/lib/shop-clock/service";
-import { type VisitState, visitStates } from "../rules";
+import { type FirstRecords, firstStep, type VisitState, visitStates } from "../rules";
 import type { VisitRow } from "../schema";
 import { rowsOf } from "../service";
 
@@ -24,6 +25,8 @@ export type WorkDay = {
   /** For the whole shop: offers without an answer, and visits of past days still open. */
   unanswered: VisitRow[];
   leftOpen: VisitRow[];
+  /** While the book has nothing to visit: what it has so far. */
+  beginning: FirstRecords | null;
 };
 
 /** A visit that moved on is seen where it went; one declined never was of this day. */
@@ -53,6 +56,7 @@ export async function workDay(actor: Actor, asked?: Day): Promise<WorkDay> {
     const unanswered = own ? [] : await find({ states: ["offered"], from: today, most: listed });
     const leftOpen = await find({ states: unfinished, before: today, most: listed, latestFirst: true });
     const rows = await rowsOf(tx, actor, ofDay);
+    const records = ofDay.length === 0 && !next ? await firstRecords(tx, actor.shopId) : null;
     return {
       day,
       today,
@@ -63,6 +67,7 @@ export async function workDay(actor: Actor, asked?: Day): Promise<WorkDay> {
       next,
       unanswered: await rowsOf(tx, actor, unanswered),
       leftOpen: await rowsOf(tx, actor, leftOpen),
+      beginning: records && firstStep(records) ? records : null,
     };
   });
 }

@@ -2,10 +2,11 @@ import type { Metadata } from "next";
 import { notFound } from "next/navigation";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { AppLink } from "@/components/ui/app-link";
+import { LinkButton } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/states";
 import { NewVisitForm } from "@/components/visits/new-visit-form";
 import { SitePicker } from "@/components/visits/site-picker";
-import { scopeOf } from "@/lib/auth/access";
+import { may, scopeOf } from "@/lib/auth/access";
 import { isDay } from "@/lib/dates";
 import { idParams } from "@/lib/doors/params";
 import { AppError } from "@/lib/errors";
@@ -96,13 +97,27 @@ async function ChooseSite({ asked }: { asked: Asked }) {
   return (
     <>
       <WorkHead title="Where?" summary="The instruments and the time zone come with the site." />
-      <SitePicker q={asked.q} date={asked.date} sites={items} more={next !== null} />
+      {items.length > 0 || asked.q ? (
+        <SitePicker q={asked.q} date={asked.date} sites={items} more={next !== null} />
+      ) : null}
       {items.length === 0 ? (
-        <EmptyState title={asked.q ? "No site is called that" : "No sites yet"}>
-          {asked.q
-            ? "Try fewer letters, the street, or the town."
-            : "Add a customer and a site under Customers first; visits happen at sites."}
-        </EmptyState>
+        asked.q ? (
+          <EmptyState title="No site is called that">Try fewer letters, the street, or the town.</EmptyState>
+        ) : (
+          <EmptyState
+            title="No sites yet"
+            action={
+              may(actor.role, "sites.change") ? (
+                <LinkButton kind="primary" href="/sites/new">
+                  Add a site
+                </LinkButton>
+              ) : null
+            }
+          >
+            Visits happen at sites.{" "}
+            {may(actor.role, "sites.change") ? "Add one first." : "The office adds them."}
+          </EmptyState>
+        )
       ) : null}
     </>
   );
