@@ -101,6 +101,15 @@ test("a customer's pages come alive", async ({ browser }) => {
   const page = await pageFor(browser, "customer", phone);
   await page.goto("/my");
   await page.evaluate(() => Object.assign(window, { loadedOnce: true }));
+  const own = page
+    .getByRole("region", { name: /^Your instruments?$/ })
+    .getByRole("link")
+    .first();
+  const name = (await own.textContent()) ?? "";
+  await own.tap();
+  await expect(page.getByRole("heading", { level: 1, name })).toBeVisible();
+  await expect(page.getByText(/It stood .* pitch when we/).first()).toBeVisible();
+  await page.getByRole("link", { name: "Back to your instruments and visits" }).tap();
   await page.getByRole("link", { name: "Your account" }).tap();
   await expect(page).toHaveURL(/\/account$/);
   expect(await page.evaluate(() => "loadedOnce" in window)).toBe(true);

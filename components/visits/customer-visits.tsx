@@ -60,7 +60,7 @@ export function CustomerVisits({
               <VisitStateWord state={visit.state} className="text-14" />
             </div>
             <p className="text-14 text-ink-soft">
-              {hoursOf(visit, locale)}, {visit.siteName}
+              {[hoursOf(visit, locale), visit.siteName].filter(Boolean).join(", ")}
               {visit.technicians.length > 0
                 ? `, with ${visit.technicians.map(({ name }) => name).join(" and ")}`
                 : null}

@@ -25,6 +25,10 @@ export const allPages: Record<string, Visited> = {
   "/(auth)/sign-up/page": open("/sign-up"),
   "/(customer)/my/page": staff("customer", () => "/my"),
   "/(customer)/my/account/page": staff("customer", () => "/my/account"),
+  "/(customer)/my/instruments/[id]/page": staff(
+    "customer",
+    ({ ownInstrumentId }) => `/my/instruments/${ownInstrumentId}`,
+  ),
   "/(shop)/page": { ...staff("technician", () => "/"), endsAt: "/today" },
   "/(shop)/(reading)/instruments/[id]/sheets/[sheetId]/page": staff(
     "technician",

@@ -14,6 +14,10 @@ export async function demoRecords(request: APIRequestContext) {
     sheetId: await firstId(request, `/api/v1/instruments/${instrumentId}/sheets`),
     visitId: await firstId(request, "/api/v1/visits", { instrumentId }),
     styleId: await firstId(request, "/api/v1/styles"),
+    /** Of the customer who signs in. */
+    ownInstrumentId: await firstId(request, "/api/v1/instruments", {
+      ownerId: await firstId(request, "/api/v1/customers", { q: "customer@example.org" }),
+    }),
   };
 }
 

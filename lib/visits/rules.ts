@@ -88,6 +88,11 @@ export function isLive(state: VisitState): boolean {
   return !notLive.has(state);
 }
 
+/** Somebody is still to come, or there. */
+export function isToCome(state: VisitState): boolean {
+  return state !== "done" && !over.has(state);
+}
+
 export type Part = "time" | "work" | "notes";
 
 /** What of a visit may still be corrected in a state. A new time after the journey began is another visit. */

@@ -10,7 +10,7 @@ import { instrumentListQuery } from "@/lib/instruments/schema";
 import { findInstruments } from "@/lib/instruments/service";
 import { customerActor } from "@/lib/pages/page-actor";
 import { shopClock } from "@/lib/shop-clock/service";
-import { isLive, isOver } from "@/lib/visits/rules";
+import { isToCome } from "@/lib/visits/rules";
 import { visitListQuery } from "@/lib/visits/schema";
 import { findVisits } from "@/lib/visits/service";
 
@@ -27,7 +27,7 @@ export default async function OwnPage() {
     visitListQuery.parse({ from: clock.today, direction: "asc", most: mostListed }),
   );
   const { items: before } = await findVisits(actor, visitListQuery.parse({ most: mostListed }));
-  const ahead = coming.filter(({ state }) => isLive(state) && !isOver(state) && state !== "done");
+  const ahead = coming.filter(({ state }) => isToCome(state));
   const past = before.filter(({ id, state }) => state !== "moved" && !ahead.some((one) => one.id === id));
   const [next, ...later] = ahead;
   return (
@@ -42,12 +42,7 @@ export default async function OwnPage() {
         </p>
       )}
       <CustomerVisits title="After that" visits={later} locale={clock.locale} />
-      <CustomerInstruments
-        instruments={instruments.items}
-        locale={clock.locale}
-        timeZone={clock.timeZone}
-        shopName={actor.shopName}
-      />
+      <CustomerInstruments instruments={instruments.items} shopName={actor.shopName} />
       <CustomerVisits title="Visits until now" visits={past} locale={clock.locale} />
       <div className="mt-10 flex flex-wrap items-center gap-2">
         <LinkButton href="/my/account">Your account</LinkButton>
