@@ -1,7 +1,7 @@
 import type { BandStep } from "@/components/charts/band-progress";
 import { adviceFrom, keyboard } from "@/lib/acoustics";
 import type { Observation, Style, Temperament } from "@/lib/acoustics/types";
-import { type KeyRange, observationsOf } from "@/lib/readings/rules";
+import { type KeyRange, keyboardInput, observationsOf } from "@/lib/readings/rules";
 import type { NoteRecord } from "@/lib/readings/schema";
 
 export type BandContext = {
@@ -28,12 +28,8 @@ export function observationsInOrder(notes: readonly NoteRecord[]): Observation[]
 }
 
 function adviceOn(observations: readonly Observation[], { range, ...options }: BandContext) {
-  const curve = keyboard({
-    observations: [...observations].sort((one, other) => one.midi - other.midi),
-    firstMidi: range.firstMidi,
-    lastMidi: range.lastMidi,
-    ...(range.breakMidi === null ? {} : { breakMidi: range.breakMidi }),
-  });
+  const inOrder = [...observations].sort((one, other) => one.midi - other.midi);
+  const curve = keyboard(keyboardInput(inOrder, range));
   return { curve, advice: adviceFrom(curve, options) };
 }
 

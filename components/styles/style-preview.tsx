@@ -5,10 +5,10 @@ import { centsWithBand, signed } from "@/components/charts/format";
 import { KeyPlots } from "@/components/charts/key-plots";
 import { Readout } from "@/components/charts/readout";
 import { Select } from "@/components/forms/select";
-import { planFrom, type RegisterStyle, styleFromRegisters } from "@/lib/acoustics";
+import { planFrom, plannedKeyboard, type RegisterStyle, styleFromRegisters } from "@/lib/acoustics";
 import type { KeyboardResult } from "@/lib/acoustics/types";
-import { plannedKeyboard } from "@/lib/plans/planned-keyboard";
 import type { PreviewInstrument } from "@/lib/plans/schema";
+import { keyboardInput } from "@/lib/readings/rules";
 import { movedAt, movedPlot, previewPlot } from "./preview-plots";
 
 /** What pianos are like, before any is measured. */
@@ -39,7 +39,7 @@ export function StylePreview({ style, before, instruments }: Props) {
   const chosen = instruments.find(({ instrumentId }) => instrumentId === chosenId);
   const { firstMidi, lastMidi, breakMidi, observations } = chosen ?? typicalPiano;
   const curve = useMemo(
-    () => plannedKeyboard(observations, { firstMidi, lastMidi, breakMidi }).planned,
+    () => plannedKeyboard(keyboardInput(observations, { firstMidi, lastMidi, breakMidi })).planned,
     [observations, firstMidi, lastMidi, breakMidi],
   );
   const held = useMemo(

@@ -42,6 +42,7 @@ export {
   partialHzFromF0,
   partialHzFromF1,
 } from "./partials";
+export { plannedKeyboard } from "./planned-keyboard";
 export type { Register } from "./registers";
 export { REGISTERS, registerOf } from "./registers";
 export { planFrom, stretch } from "./stretch";

@@ -210,6 +210,22 @@ describe("the whole compass", () => {
   });
 });
 
+describe("a note that does not belong", () => {
+  const clean = recordedNotes
+    .filter((_, index) => index % 3 === 0)
+    .map(({ midi, B }) => ({ midi, b: B, bSigma: 0.01 * B }));
+  const wrong = clean[Math.floor(clean.length / 2)]?.midi ?? 0;
+  const withWrongWire = clean.map((one) => (one.midi === wrong ? { ...one, b: 1.6 * one.b } : one));
+
+  it("changes nothing of the plan: it is as if it had not been read", () => {
+    const { keys } = keyboard({ observations: withWrongWire });
+    expect(keys.filter(({ flag }) => flag !== null).map(({ midi }) => midi)).toEqual([wrong]);
+    const plan = stretch({ observations: withWrongWire });
+    expect(plan).toEqual(stretch({ observations: clean.filter(({ midi }) => midi !== wrong) }));
+    expect(plan.notes).not.toEqual(planFrom(keyboard({ observations: withWrongWire })).notes);
+  });
+});
+
 describe("the anchor and the reference pitch", () => {
   it("puts the named partial of the named key at its pitch", () => {
     const keys = meanKeys();

@@ -1,9 +1,9 @@
 import { evenness } from "./beats";
-import { keyboard } from "./keyboard";
 import { checkedKey, checkedNumber, checkedRange } from "./keyboard-input";
 import { equalTemperedHz, raiseByCents } from "./keys";
 import { at } from "./linear-algebra";
 import { partialHzFromF1 } from "./partials";
+import { plannedKeyboard } from "./planned-keyboard";
 import {
   covarianceWithStretch,
   irregularityVariance,
@@ -19,8 +19,8 @@ import { AcousticsError, type KeyboardResult, type StretchInput, type StretchRes
  * The stretch plan: cents of every key's first partial from equal temperament, by weighted least squares over coincident
  * partials, with its 95 % half-width and the partial to listen to.
  *
- * Give `observations` (B of some keys; the rest is predicted as in `keyboard`) or `keys` (exact B; the plan then
- * covers those keys and has no band). Weights of a style given as an array start at the lowest key of the plan.
+ * Give `observations` (B of some keys; the rest is predicted, and so are keys that do not belong: `plannedKeyboard`) or
+ * `keys` (exact B; the plan then covers those keys and has no band). Weights of a style given as an array start at the lowest key of the plan.
  * Errors: AcousticsError `observations-or-keys`, `duplicate-key`, `unknown-style`, `no-intervals`, `bad-interval`,
  * `bad-partial`, `weights-too-short`, `undetermined`, `unknown-temperament`, `bad-temperament` and those of `keyboard`.
  * Sources: octave relation and octave-type curve, Rigaud, David & Daudet 2013, JASA 133:3107 (from memory); least squares on
@@ -28,7 +28,7 @@ import { AcousticsError, type KeyboardResult, type StretchInput, type StretchRes
  */
 export function stretch(input: StretchInput): StretchResult {
   if (input.keys === undefined) {
-    return planFrom(keyboard({ ...input, observations: input.observations ?? [] }), input);
+    return planFrom(plannedKeyboard({ ...input, observations: input.observations ?? [] }).planned, input);
   }
   if (input.observations !== undefined && input.observations.length > 0) {
     throw new AcousticsError("observations-or-keys", "Give observations or exact keys, not both", "keys");

@@ -5,12 +5,12 @@ import {
   equalTemperedHz,
   type KeyboardResult,
   planFrom,
+  plannedKeyboard,
   raiseByCents,
 } from "@/lib/acoustics";
 import type { Style, Temperament } from "@/lib/acoustics/types";
 import { COMPUTATION_VERSION } from "@/lib/acoustics/version";
-import { type FittedNote, observationsOf, pitchOf } from "@/lib/readings/rules";
-import { plannedKeyboard } from "./planned-keyboard";
+import { type FittedNote, keyboardInput, observationsOf, pitchOf } from "@/lib/readings/rules";
 import type { AnalysisRecord } from "./schema";
 
 export type AnalysisInput = {
@@ -30,7 +30,7 @@ export function analyse(input: AnalysisInput): { record: AnalysisRecord; planned
   const { instrument, sheet, style, temperament, referenceHz } = input;
   // The compass may have been corrected after a note was read; what lies outside it belongs to no key.
   const notes = input.notes.filter(({ midi }) => midi >= instrument.firstMidi && midi <= instrument.lastMidi);
-  const { curve, planned } = plannedKeyboard(observationsOf(notes), instrument);
+  const { curve, planned } = plannedKeyboard(keyboardInput(observationsOf(notes), instrument));
   const options = { style: style.style, temperament, referenceHz };
   const plan = planFrom(planned, options);
   const tuned = plan.notes.map((note, index) => ({

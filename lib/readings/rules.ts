@@ -1,5 +1,5 @@
 import { centsBetween, checkFrequency, equalTemperedHz, fit, keyboard, raiseByCents } from "@/lib/acoustics";
-import type { FitInput, Observation } from "@/lib/acoustics/types";
+import type { FitInput, KeyboardInput, Observation } from "@/lib/acoustics/types";
 import type { NoteInput } from "./schema";
 
 /** How a unison's strings are numbered where a number is needed: 0 is the whole unison sounding together. */
@@ -114,18 +114,21 @@ export function pitchOffset(pitch: readonly { midi: number; cents: number }[]): 
 
 export type KeyRange = { firstMidi: number; lastMidi: number; breakMidi: number | null };
 
+/** An instrument's compass and what is known of it, as the keyboard's computation takes them. */
+export function keyboardInput(
+  observations: readonly Observation[],
+  { firstMidi, lastMidi, breakMidi }: KeyRange,
+): KeyboardInput {
+  return { observations, firstMidi, lastMidi, ...(breakMidi === null ? {} : { breakMidi }) };
+}
+
 /** What the other keys' fits tell of B of this one. */
 export function keyModel(
   others: readonly FittedNote[],
   midi: number,
-  { firstMidi, lastMidi, breakMidi }: KeyRange,
+  range: KeyRange,
 ): { b: number; lnBSigma: number } | undefined {
-  const { keys } = keyboard({
-    observations: observationsOf(others),
-    firstMidi,
-    lastMidi,
-    ...(breakMidi === null ? {} : { breakMidi }),
-  });
+  const { keys } = keyboard(keyboardInput(observationsOf(others), range));
   const key = keys.find((estimate) => estimate.midi === midi);
   return key ? { b: key.b, lnBSigma: key.lnBSigma } : undefined;
 }

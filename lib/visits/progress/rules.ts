@@ -1,6 +1,13 @@
 import { keyboard } from "@/lib/acoustics";
 import type { KeyEstimate, Quality, Temperament } from "@/lib/acoustics/types";
-import { type FittedNote, type KeyRange, observationsOf, pitchOf, pitchOffset } from "@/lib/readings/rules";
+import {
+  type FittedNote,
+  type KeyRange,
+  keyboardInput,
+  observationsOf,
+  pitchOf,
+  pitchOffset,
+} from "@/lib/readings/rules";
 import type { Stage } from "@/lib/readings/schema";
 
 export type SheetFacts = {
@@ -114,18 +121,10 @@ export function countOf(notes: readonly Pick<NoteFacts, "midi" | "string" | "qua
 export type Stranger = Omit<KeyEstimate, "residualCents">;
 
 /** Notes whose B does not belong to its neighbours', the strangest first. */
-export function strangersAmong(
-  notes: readonly FittedNote[],
-  { firstMidi, lastMidi, breakMidi }: KeyRange,
-): Stranger[] {
+export function strangersAmong(notes: readonly FittedNote[], range: KeyRange): Stranger[] {
   const observations = observationsOf(notes);
   if (observations.length === 0) return [];
-  const { keys } = keyboard({
-    observations,
-    firstMidi,
-    lastMidi,
-    ...(breakMidi === null ? {} : { breakMidi }),
-  });
+  const { keys } = keyboard(keyboardInput(observations, range));
   return keys
     .filter(({ flag }) => flag !== null)
     .map(({ residualCents: _, ...key }) => key)
