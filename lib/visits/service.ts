@@ -1,5 +1,6 @@
 import "server-only";
 import { type Tx, withShop } from "@/db/client";
+import { instrumentsAt, siteForVisit } from "@/db/queries/visit-booking";
 import {
   deleteJobs,
   insertEvent,
@@ -10,16 +11,7 @@ import {
   removeTechniciansExcept,
   updateVisit,
 } from "@/db/queries/visit-writes";
-import {
-  eventsOf,
-  instrumentsAt,
-  jobsOf,
-  listVisits,
-  sheetsOfJobs,
-  siteForVisit,
-  techniciansOf,
-  visitById,
-} from "@/db/queries/visits";
+import { eventsOf, jobsOf, listVisits, sheetsOfJobs, techniciansOf, visitById } from "@/db/queries/visits";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import { isUniqueViolation } from "@/lib/database-errors";

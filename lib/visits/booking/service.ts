@@ -1,6 +1,6 @@
 import "server-only";
 import { withShop } from "@/db/client";
-import { bookableMembers, instrumentsAt } from "@/db/queries/visits";
+import { bookableMembers, instrumentsAt } from "@/db/queries/visit-booking";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import { type Day, dayOf } from "@/lib/dates";

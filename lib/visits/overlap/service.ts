@@ -1,7 +1,7 @@
 import "server-only";
 import { type Tx, withShop } from "@/db/client";
+import { busyOn, overlapping } from "@/db/queries/visit-booking";
 import { lockTechnicians } from "@/db/queries/visit-writes";
-import { busyOn, overlapping } from "@/db/queries/visits";
 import type { Actor } from "@/lib/auth/actor";
 import { violationOf } from "@/lib/database-errors";
 import { AppError, invalid } from "@/lib/errors";
