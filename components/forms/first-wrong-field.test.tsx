@@ -1,40 +1,24 @@
 // @vitest-environment happy-dom
 import { QueryClientProvider } from "@tanstack/react-query";
-import { act, type ReactNode } from "react";
-import { createRoot, type Root } from "react-dom/client";
-import { afterEach, beforeEach, expect, it, vi } from "vitest";
+import type { ReactNode } from "react";
+import { expect, it, vi } from "vitest";
 import { NewInstrumentForm } from "@/components/instruments/new-instrument-form";
 import { makeQueryClient } from "@/components/providers";
 import { SiteForm } from "@/components/sites/site-form";
 import { NewVisitForm } from "@/components/visits/new-visit-form";
 import { newId } from "@/lib/ids";
+import { mounted } from "../../tests/support/mounted";
 
 vi.mock("next/navigation", () => ({ useRouter: () => ({ push: vi.fn(), refresh: vi.fn() }) }));
 vi.mock("next/link", () => ({
   default: ({ href, ...rest }: { href: string }) => <a href={href} {...rest} />,
 }));
 
-let root: Root;
-let host: HTMLElement;
-beforeEach(() => {
-  Reflect.set(globalThis, "IS_REACT_ACT_ENVIRONMENT", true);
-  host = document.createElement("div");
-  document.body.append(host);
-  root = createRoot(host);
-});
-afterEach(() => {
-  act(() => root.unmount());
-  host.remove();
-});
+const page = mounted();
 
 async function submit(form: ReactNode) {
-  await act(async () =>
-    root.render(<QueryClientProvider client={makeQueryClient()}>{form}</QueryClientProvider>),
-  );
-  await act(async () => {
-    host.querySelector("form")?.dispatchEvent(new Event("submit", { bubbles: true, cancelable: true }));
-    await new Promise((done) => setTimeout(done, 20));
-  });
+  await page.show(<QueryClientProvider client={makeQueryClient()}>{form}</QueryClientProvider>);
+  await page.submit();
 }
 
 const focused = () => document.activeElement?.getAttribute("name");

@@ -1,7 +1,6 @@
 // @vitest-environment happy-dom
 import { QueryClientProvider } from "@tanstack/react-query";
-import { act } from "react";
-import { createRoot, type Root } from "react-dom/client";
+import { act, type ReactNode } from "react";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { CustomersLedger } from "@/components/customers/customers-ledger";
 import { InstrumentsLedger } from "@/components/instruments/instruments-ledger";
@@ -9,6 +8,7 @@ import { makeQueryClient } from "@/components/providers";
 import { SitesLedger } from "@/components/sites/sites-ledger";
 import { shownMessages } from "@/components/ui/message-queue";
 import type { CustomerRow } from "@/lib/customers/schema";
+import { mounted } from "../../tests/support/mounted";
 import { ArchiveButton } from "./archive-button";
 import type { ArchiveAction } from "./use-archive";
 
@@ -72,42 +72,24 @@ function archiveAction() {
   });
 }
 
-let root: Root;
-let host: HTMLElement;
+const page = mounted();
+const { press } = page;
 beforeEach(() => {
-  Reflect.set(globalThis, "IS_REACT_ACT_ENVIRONMENT", true);
   vi.stubGlobal("fetch", async () => Response.json(first));
   router.push.mockReset();
   search = "";
-  host = document.createElement("div");
-  document.body.append(host);
-  root = createRoot(host);
 });
-afterEach(() => {
-  act(() => root.unmount());
-  host.remove();
-  vi.unstubAllGlobals();
-});
+afterEach(() => vi.unstubAllGlobals());
 
-async function show(what: React.ReactNode) {
-  await act(async () =>
-    root.render(<QueryClientProvider client={makeQueryClient()}>{what}</QueryClientProvider>),
-  );
-}
-const settle = () => act(async () => void (await new Promise((wait) => setTimeout(wait, 20))));
-async function press(words: string) {
-  const button = [...host.querySelectorAll("button")].find(({ textContent }) => textContent === words);
-  if (!button) throw new Error(`no button ${words}`);
-  await act(async () => button.click());
-  await settle();
-}
+const show = (what: ReactNode) =>
+  page.show(<QueryClientProvider client={makeQueryClient()}>{what}</QueryClientProvider>);
 async function choose(...ids: string[]) {
   for (const id of ids) {
-    const box = host.querySelector<HTMLInputElement>(`[data-row="${id}"] [data-row-check]`);
+    const box = page.host().querySelector<HTMLInputElement>(`[data-row="${id}"] [data-row-check]`);
     await act(async () => box?.click());
   }
 }
-const question = () => host.querySelector("dialog")?.textContent ?? "";
+const question = () => page.host().querySelector("dialog")?.textContent ?? "";
 
 describe("archiving from a list", () => {
   it("archives what has nothing to come and asks about the rest, naming the visits", async () => {
@@ -123,7 +105,7 @@ describe("archiving from a list", () => {
     expect(question()).toContain("7 visits are not over yet");
     expect(question()).toContain("Rope Walk 14");
     expect(question()).toContain("and 6 more");
-    expect(host.querySelector(`dialog a[href="/visits/${visitId}"]`)).not.toBeNull();
+    expect(page.host().querySelector(`dialog a[href="/visits/${visitId}"]`)).not.toBeNull();
     await press("Archive all the same");
     expect(archive).toHaveBeenLastCalledWith({ id: "2", version: 1, archived: true, confirm: true });
     expect(question()).toBe("");
@@ -157,7 +139,7 @@ describe("archiving from a list", () => {
 
   it("offers nothing to a person who may not", async () => {
     await show(<CustomersLedger first={first} clock={clock} mayAdd={false} />);
-    expect(host.querySelector("[data-row-check]")).toBeNull();
+    expect(page.host().querySelector("[data-row-check]")).toBeNull();
   });
 });
 
@@ -188,6 +170,6 @@ it("says of each list what to do first when it is empty", async () => {
     [<InstrumentsLedger key="i" first={none} clock={clock} mayAdd />, "/instruments/new"],
   ] as const) {
     await show(ledger);
-    expect(host.querySelector("a")?.getAttribute("href")).toBe(href);
+    expect(page.host().querySelector("a")?.getAttribute("href")).toBe(href);
   }
 });

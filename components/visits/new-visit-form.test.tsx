@@ -1,9 +1,8 @@
 // @vitest-environment happy-dom
-import { act } from "react";
-import { createRoot, type Root } from "react-dom/client";
-import { afterEach, beforeEach, expect, it, vi } from "vitest";
+import { beforeEach, expect, it, vi } from "vitest";
 import type { ActionResult } from "@/lib/doors/action-result";
 import { newId } from "@/lib/ids";
+import { mounted } from "../../tests/support/mounted";
 import { NewVisitForm } from "./new-visit-form";
 
 const router = { push: vi.fn(), refresh: vi.fn() };
@@ -14,18 +13,9 @@ vi.mock("next/link", () => ({
 
 type Sent = { date: string; time: string; notes: string; confirm?: boolean };
 
-let root: Root;
-let host: HTMLElement;
+const page = mounted();
 beforeEach(() => {
-  Reflect.set(globalThis, "IS_REACT_ACT_ENVIRONMENT", true);
   router.push.mockReset();
-  host = document.createElement("div");
-  document.body.append(host);
-  root = createRoot(host);
-});
-afterEach(() => {
-  act(() => root.unmount());
-  host.remove();
 });
 
 const askOrBook = () =>
@@ -37,59 +27,34 @@ const askOrBook = () =>
   });
 
 async function show(action: ReturnType<typeof askOrBook>) {
-  await act(async () =>
-    root.render(
-      <NewVisitForm
-        visitId={newId()}
-        site={{ id: newId(), name: "Home", timeZone: "Europe/Dublin" }}
-        instruments={[]}
-        technicians={[{ id: newId(), name: "Ines" }]}
-        chosen={{ date: "2026-05-11", instrumentIds: [] }}
-        locale="en-GB"
-        action={action}
-      />,
-    ),
+  await page.show(
+    <NewVisitForm
+      visitId={newId()}
+      site={{ id: newId(), name: "Home", timeZone: "Europe/Dublin" }}
+      instruments={[]}
+      technicians={[{ id: newId(), name: "Ines" }]}
+      chosen={{ date: "2026-05-11", instrumentIds: [] }}
+      locale="en-GB"
+      action={action}
+    />,
   );
 }
 
-function field(name: string): HTMLInputElement | HTMLTextAreaElement {
-  const found = host.querySelector<HTMLInputElement>(`[name="${name}"]`);
-  if (!found) throw new Error(`no field ${name}`);
-  return found;
-}
-
-async function type(name: string, text: string) {
-  const element = field(name);
-  await act(async () => {
-    Object.getOwnPropertyDescriptor(Object.getPrototypeOf(element), "value")?.set?.call(element, text);
-    element.dispatchEvent(new Event("input", { bubbles: true }));
-  });
-}
-
-const settle = () => act(async () => void (await new Promise((done) => setTimeout(done, 20))));
-async function submit() {
-  await act(async () => {
-    host.querySelector("form")?.dispatchEvent(new Event("submit", { bubbles: true, cancelable: true }));
-  });
-  await settle();
-}
-const button = (words: string) =>
-  [...host.querySelectorAll("button")].find(({ textContent }) => textContent === words);
+const field = (name: string) => page.field(`[name="${name}"]`);
 const sent = (action: ReturnType<typeof askOrBook>) => action.mock.calls.at(-1)?.[0] as Sent;
 
 it("asks beside the day about a start in the past, and books what was typed when told to", async () => {
   const action = askOrBook();
   await show(action);
-  await type("notes", "Forgotten in the book.");
-  await submit();
-  expect(host.querySelector("[role=alert]")?.textContent).toContain(
+  await page.type(field("notes"), "Forgotten in the book.");
+  await page.submit();
+  expect(page.host().querySelector("[role=alert]")?.textContent).toContain(
     "This is 3 days ago. Book it all the same?",
   );
-  expect(document.activeElement).toBe(button("Book it all the same"));
+  expect(document.activeElement).toBe(page.button("Book it all the same"));
   expect(field("notes").value).toBe("Forgotten in the book.");
   expect(router.push).not.toHaveBeenCalled();
-  await act(async () => button("Book it all the same")?.click());
-  await settle();
+  await page.press("Book it all the same");
   expect(sent(action)).toMatchObject({
     date: "2026-05-11",
     notes: "Forgotten in the book.",
@@ -101,11 +66,11 @@ it("asks beside the day about a start in the past, and books what was typed when
 it("takes the question back with another day, and asks anew about that one", async () => {
   const action = askOrBook();
   await show(action);
-  await submit();
-  await type("date", "2026-05-12");
-  expect(button("Book it all the same")).toBeUndefined();
-  await submit();
+  await page.submit();
+  await page.type(field("date"), "2026-05-12");
+  expect(page.button("Book it all the same")).toBeUndefined();
+  await page.submit();
   expect(sent(action)).toMatchObject({ date: "2026-05-12" });
   expect(sent(action).confirm ?? false).toBe(false);
-  expect(button("Book it all the same")).toBeDefined();
+  expect(page.button("Book it all the same")).toBeDefined();
 });

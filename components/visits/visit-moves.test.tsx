@@ -1,8 +1,7 @@
 // @vitest-environment happy-dom
-import { act, type ReactNode } from "react";
-import { createRoot, type Root } from "react-dom/client";
-import { afterEach, beforeEach, expect, it, vi } from "vitest";
+import { expect, it, vi } from "vitest";
 import { movesOf, type VisitState } from "@/lib/visits/rules";
+import { mounted } from "../../tests/support/mounted";
 import { NextStep, type StepAction, VisitMoves } from "./visit-moves";
 
 vi.mock("next/navigation", () => ({ useRouter: () => ({ push: vi.fn(), refresh: vi.fn() }) }));
@@ -10,20 +9,8 @@ vi.mock("next/link", () => ({
   default: ({ href, ...rest }: { href: string }) => <a href={href} {...rest} />,
 }));
 
-let root: Root;
-let host: HTMLElement;
-beforeEach(() => {
-  Reflect.set(globalThis, "IS_REACT_ACT_ENVIRONMENT", true);
-  host = document.createElement("div");
-  document.body.append(host);
-  root = createRoot(host);
-});
-afterEach(() => {
-  act(() => root.unmount());
-  host.remove();
-});
+const { show, host } = mounted();
 
-const show = (what: ReactNode) => act(async () => root.render(what));
 const never: StepAction = async () => ({ ok: false, error: { code: "stale", message: "Stale." } });
 const goOn = { label: "Continue: read as found", href: "/instruments/piano/sheets/new" };
 
@@ -39,10 +26,10 @@ function visit(state: VisitState) {
 
 /** The one primary action: under the thumb, and at the head of the page on the desk. */
 function primaries() {
-  const strip = host.querySelector("[data-action-strip]");
+  const strip = host().querySelector("[data-action-strip]");
   const words = (within: Iterable<Element>) =>
     [...within].filter(({ className }) => className.includes("bg-felt-fill")).map((one) => one.textContent);
-  const all = [...host.querySelectorAll("a, button")];
+  const all = [...host().querySelectorAll("a, button")];
   return {
     strip: words(all.filter((one) => strip?.contains(one))),
     head: words(all.filter((one) => !strip?.contains(one))),
@@ -77,7 +64,7 @@ it.each([
 
 it("keeps the end of the work beside work that goes on", async () => {
   await show(page("in-progress", goOn));
-  const strip = host.querySelector("[data-action-strip]");
+  const strip = host().querySelector("[data-action-strip]");
   expect([...(strip?.querySelectorAll("a, button") ?? [])].map(({ textContent }) => textContent)).toEqual([
     "Finish work",
     "Continue: read as found",
@@ -86,7 +73,7 @@ it("keeps the end of the work beside work that goes on", async () => {
 
 it("draws no strip for a visit that is over", async () => {
   await show(page("closed", null));
-  expect(host.querySelector("[data-action-strip]")).toBeNull();
+  expect(host().querySelector("[data-action-strip]")).toBeNull();
 });
 
 it("leads from the day's page with the words of the visit's own page", async () => {
