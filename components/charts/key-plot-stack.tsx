@@ -2,7 +2,7 @@
 
 import { useId, useMemo, useRef, useState } from "react";
 import { KeyPlotCanvas } from "./key-plot-canvas";
-import type { KeyPlotsProps } from "./key-plots";
+import type { KeyPlotsProps } from "./key-plots-props";
 import { KeyboardRibbon } from "./keyboard-ribbon";
 import { PlotTitle } from "./plot-legend";
 import { axisWidth, isCompact, makeScene } from "./plot-scene";

@@ -2,11 +2,10 @@
 
 import { type KeyboardEvent, type PointerEvent, useMemo, useRef } from "react";
 import { clampKey, type KeyLayout, type KeyRange, keyUnder, layOutKeys } from "./key-geometry";
+import type { KeyMark } from "./key-mark";
 import { noteOctave, spokenNote } from "./note-spelling";
 import { RibbonMarks } from "./ribbon-marks";
 import { useWidth } from "./use-width";
-
-export type KeyMark = { midi: number; kind: "measured" | "next" | "flagged" };
 
 type Props = {
   firstMidi: number;

@@ -1,5 +1,5 @@
 import type { KeyLayout, KeyShape } from "./key-geometry";
-import type { KeyMark } from "./keyboard-ribbon";
+import type { KeyMark } from "./key-mark";
 
 type Props = {
   layout: KeyLayout;

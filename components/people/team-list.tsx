@@ -1,11 +1,6 @@
 "use client";
 
-import type { ActionResult } from "@/lib/doors/action-result";
-import type { MemberRecord } from "@/lib/people/schema";
-import { TeamRow } from "./team-row";
-
-export type ShownMember = MemberRecord & { sinceWords: string };
-export type MemberAction = (input: unknown) => Promise<ActionResult<MemberRecord>>;
+import { type MemberAction, type ShownMember, TeamRow } from "./team-row";
 
 export function TeamList({
   members,

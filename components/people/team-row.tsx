@@ -7,8 +7,12 @@ import { Button } from "@/components/ui/button";
 import { ConfirmDialog } from "@/components/ui/dialog";
 import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
 import { Sign } from "@/components/ui/sign";
+import type { ActionResult } from "@/lib/doors/action-result";
 import { roleWords } from "@/lib/people/role-words";
-import type { MemberAction, ShownMember } from "./team-list";
+import type { MemberRecord } from "@/lib/people/schema";
+
+export type ShownMember = MemberRecord & { sinceWords: string };
+export type MemberAction = (input: unknown) => Promise<ActionResult<MemberRecord>>;
 
 type Change = { role?: "owner" | "office" | "technician"; bookable?: boolean };
 

@@ -1,5 +1,5 @@
 import { fixed, inharmonicity, signed, signedCents } from "@/components/charts/format";
-import type { KeyMark } from "@/components/charts/keyboard-ribbon";
+import type { KeyMark } from "@/components/charts/key-mark";
 import { noteText, spokenNote } from "@/components/charts/note-spelling";
 import type { FlaggedPoint, KeyPlot, KeyValue } from "@/components/charts/plot-types";
 import type { AnalysisRecord } from "@/lib/plans/schema";

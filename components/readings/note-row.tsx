@@ -17,7 +17,7 @@ import { QualityWord } from "./quality-word";
 import { hasRowNotes, RowNotes } from "./row-notes";
 import { type RowState, rowState } from "./row-state";
 import { type Row, rowKey } from "./sheet-row";
-import type { TableMeasures } from "./sheet-table";
+import type { TableMeasures } from "./table-measures";
 
 type Props = {
   prefix: string;

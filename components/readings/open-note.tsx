@@ -17,7 +17,7 @@ import { OtherTakes } from "./other-takes";
 import type { RowState } from "./row-state";
 import type { Place, Row, RowKey } from "./sheet-row";
 import { partialsOf, rowKey } from "./sheet-row";
-import type { TableMeasures } from "./sheet-table";
+import type { TableMeasures } from "./table-measures";
 
 export type OpenNoteActions = NoteMattersActions & {
   remove: (key: RowKey) => void;

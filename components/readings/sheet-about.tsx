@@ -3,7 +3,8 @@
 import { useRef, useState } from "react";
 import { BandProgress } from "@/components/charts/band-progress";
 import { fixed } from "@/components/charts/format";
-import { KeyboardRibbon, type KeyMark } from "@/components/charts/keyboard-ribbon";
+import type { KeyMark } from "@/components/charts/key-mark";
+import { KeyboardRibbon } from "@/components/charts/keyboard-ribbon";
 import { NoteName } from "@/components/charts/note-name";
 import { PageSection } from "@/components/shell/page-section";
 import { LeftPage } from "@/components/shell/spread";

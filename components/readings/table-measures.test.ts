@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { columnsAt } from "./partial-columns";
-import { tableMeasures } from "./sheet-table";
+import { tableMeasures } from "./table-measures";
 
 /** Widths of six tabular figures with a point, measured in the shipped face. */
 const drawn = { 12: 45.6, 14: 53.2, 16: 60.8 } as const;

@@ -1,7 +1,7 @@
 "use client";
 
 import { useEffect, useMemo, useRef, useState } from "react";
-import type { KeyMark } from "@/components/charts/keyboard-ribbon";
+import type { KeyMark } from "@/components/charts/key-mark";
 import { useWidth } from "@/components/charts/use-width";
 import { flaggedKeys } from "@/components/plans/analysis-plots";
 import { useAnalysis } from "@/components/plans/use-analysis";
