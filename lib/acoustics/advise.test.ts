@@ -93,21 +93,19 @@ describe("advice", () => {
     expect(advise({ observations })).toMatchObject({ next: [], enough: true });
   });
 
-  it("takes under 20 ms, and the plan with its band under 10 ms, once warm and undisturbed", () => {
+  it("weighs every key for the price of a few plans, not of one for each key", () => {
     const result = keyboard({ observations: recorded(() => true) });
     const fastest = (work: () => unknown) => {
       let least = Number.POSITIVE_INFINITY;
-      for (let i = 0; i < 100; i += 1) {
+      for (let i = 0; i < 30; i += 1) {
         const start = performance.now();
         work();
         least = Math.min(least, performance.now() - start);
       }
       return least;
     };
-    const advice = fastest(() => adviceFrom(result));
-    const plan = fastest(() => planFrom(result));
-    console.log(`advice ${advice.toFixed(1)} ms, plan with band ${plan.toFixed(1)} ms (fastest of 100)`);
-    expect(advice).toBeLessThan(20);
-    expect(plan).toBeLessThan(10);
+    const ratio = fastest(() => adviceFrom(result)) / fastest(() => planFrom(result));
+    console.log(`advice costs ${ratio.toFixed(1)} plans (fastest of 30)`);
+    expect(ratio).toBeLessThan(result.keys.length / 8);
   });
 });
