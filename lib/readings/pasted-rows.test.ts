@@ -92,12 +92,10 @@ describe("rows from a spreadsheet", () => {
 
   it("answers 10 000 rows at once with what would fit", () => {
     const text = Array.from({ length: 10_000 }, () => "A4\t1\t2\t3").join("\n");
-    const begun = performance.now();
     const { rows, faults } = readPasted(text, piano);
     expect(rows).toEqual([]);
     expect(faults).toHaveLength(1);
     expect(faults[0]?.message).toMatch(/10000 rows.*128 fit.*lines 1 to 128/);
-    expect(performance.now() - begun).toBeLessThan(2_000);
   });
 
   it("counts faults beyond the first few instead of listing hundreds", () => {
