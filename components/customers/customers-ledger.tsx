@@ -20,7 +20,7 @@ const customers: RecordList<CustomerRow> = {
       extra: true,
       phone: "none",
     },
-    { id: "phone", header: "Telephone", cell: (row) => row.phone ?? "", width: 140, phone: "line" },
+    { id: "phone", header: "Telephone", cell: (row) => row.phone ?? "", width: 152, phone: "line" },
     {
       id: "email",
       header: "E-mail",

@@ -1,7 +1,7 @@
 import type { ReactNode } from "react";
 import { type KeptView, KeptViews } from "@/components/shell/kept-views";
+import { NextAction, NextActionStrip } from "@/components/shell/next-action";
 import { LeftPage, RightPage, Spread, WorkHead } from "@/components/shell/spread";
-import { LinkButton } from "@/components/ui/button";
 import { DemoBadge } from "@/components/ui/demo-badge";
 import { LoadingLines } from "@/components/ui/states";
 
@@ -37,15 +37,12 @@ export function RecordsPage({
           <WorkHead
             title={title}
             unseen
-            actions={
-              add ? (
-                <LinkButton kind="primary" href={add.href}>
-                  {add.label}
-                </LinkButton>
-              ) : null
-            }
+            actions={add ? <NextAction {...add} /> : null}
+            // On the phone the action stands under the thumb, and the heading is unseen.
+            className={add ? "max-lg:mt-3! max-lg:mb-0!" : undefined}
           />
           {children}
+          {add ? <NextActionStrip {...add} /> : null}
         </RightPage>
       }
     />

@@ -1,6 +1,5 @@
-import { ActionStrip } from "@/components/shell/action-strip";
+import { NextAction, NextActionStrip } from "@/components/shell/next-action";
 import { WorkHead } from "@/components/shell/spread";
-import { LinkButton } from "@/components/ui/button";
 import { type FirstRecords, firstStep } from "@/lib/visits/rules";
 import { JobRow, type RowState } from "./job-row";
 
@@ -35,11 +34,6 @@ export function FirstSteps({ records, mayAdd }: { records: FirstRecords; mayAdd:
   ];
   const step = steps.find(({ key }) => key === next);
   if (!step) return null;
-  const button = (
-    <LinkButton kind="primary" href={step.href}>
-      {step.label}
-    </LinkButton>
-  );
   const state = (one: (typeof steps)[number]): RowState => (one.done ? "done" : "open");
   return (
     <>
@@ -50,7 +44,7 @@ export function FirstSteps({ records, mayAdd }: { records: FirstRecords; mayAdd:
             ? "Three things, and the first visit can be booked."
             : "The office adds the first customer, site and instrument; then visits can be booked."
         }
-        actions={mayAdd ? <span className="max-lg:hidden">{button}</span> : null}
+        actions={mayAdd ? <NextAction href={step.href} label={step.label} /> : null}
       />
       <ol aria-label="First steps" className="border-t border-edge!">
         {steps.map((one) => (
@@ -63,7 +57,7 @@ export function FirstSteps({ records, mayAdd }: { records: FirstRecords; mayAdd:
           />
         ))}
       </ol>
-      {mayAdd ? <ActionStrip>{button}</ActionStrip> : null}
+      {mayAdd ? <NextActionStrip href={step.href} label={step.label} /> : null}
     </>
   );
 }

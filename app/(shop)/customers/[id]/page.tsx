@@ -3,6 +3,7 @@ import { CustomerAbout } from "@/components/customers/customer-about";
 import { SiteLines } from "@/components/customers/site-lines";
 import { InstrumentLines } from "@/components/instruments/instrument-lines";
 import { ArchiveButton } from "@/components/records/archive-button";
+import { NextAction, NextActionStrip } from "@/components/shell/next-action";
 import { PageSection } from "@/components/shell/page-section";
 import { RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { LinkButton } from "@/components/ui/button";
@@ -32,6 +33,7 @@ export default async function CustomerPage({ params }: Props) {
     findInstruments(actor, instrumentListQuery.parse({ ownerId: customer.id, sort: "place", most: 100 })),
   ]);
   const mayChange = may(actor.role, "customers.change");
+  const add = { href: `/sites/new?customer=${customer.id}`, label: "Add a site" };
   const mayAdd = may(actor.role, "instruments.create");
   return (
     <Spread
@@ -52,9 +54,7 @@ export default async function CustomerPage({ params }: Props) {
                     locale={clock.locale}
                   />
                   <LinkButton href={`/customers/${customer.id}/edit`}>Change</LinkButton>
-                  <LinkButton kind="primary" href={`/sites/new?customer=${customer.id}`}>
-                    Add a site
-                  </LinkButton>
+                  <NextAction {...add} />
                 </>
               ) : null
             }
@@ -75,6 +75,7 @@ export default async function CustomerPage({ params }: Props) {
               ) : null}
             </PageSection>
           </div>
+          {mayChange ? <NextActionStrip {...add} /> : null}
         </RightPage>
       }
     />

@@ -1,6 +1,7 @@
 import type { Metadata } from "next";
 import { InstrumentLines } from "@/components/instruments/instrument-lines";
 import { ArchiveButton } from "@/components/records/archive-button";
+import { NextAction, NextActionStrip } from "@/components/shell/next-action";
 import { RightPage, Spread, WorkHead } from "@/components/shell/spread";
 import { SiteAbout } from "@/components/sites/site-about";
 import { LinkButton } from "@/components/ui/button";
@@ -27,6 +28,8 @@ export default async function SitePage({ params }: Props) {
     findInstruments(actor, instrumentListQuery.parse({ siteId: site.id, most: 100 })),
   ]);
   const count = instruments.items.length;
+  const mayAdd = may(actor.role, "instruments.create");
+  const add = { href: `/instruments/new?site=${site.id}`, label: "Add an instrument" };
   return (
     <Spread
       left={<SiteAbout site={site} clock={clock} />}
@@ -55,15 +58,12 @@ export default async function SitePage({ params }: Props) {
                 {may(actor.role, "visits.change") ? (
                   <LinkButton href={`/visits/new?site=${site.id}`}>Book a visit</LinkButton>
                 ) : null}
-                {may(actor.role, "instruments.create") ? (
-                  <LinkButton kind="primary" href={`/instruments/new?site=${site.id}`}>
-                    Add an instrument
-                  </LinkButton>
-                ) : null}
+                {mayAdd ? <NextAction {...add} /> : null}
               </>
             }
           />
           <InstrumentLines instruments={instruments.items} clock={clock} showOwner />
+          {mayAdd ? <NextActionStrip {...add} /> : null}
         </RightPage>
       }
     />
