@@ -56,7 +56,10 @@ export function invalid(fields: FieldErrors, message = "Some fields need another
 }
 
 /** Done when it is sent once more with `confirm`: not wrong, but perhaps not what was meant. */
-export function needsConfirming(message: string, more: { fields?: FieldErrors; current?: unknown }): AppError {
+export function needsConfirming(
+  message: string,
+  more: { fields?: FieldErrors; current?: unknown },
+): AppError {
   return new AppError("needs-confirming", message, more);
 }
 
