@@ -105,6 +105,11 @@ export function SiteForm({
           of="customers"
           name="customerId"
           label="Customer"
+          help={
+            record && customer && customer.id !== record.customerId
+              ? `Visits booked so far stay with ${record.customerName}.`
+              : undefined
+          }
           value={customer}
           error={state.form.formState.errors.customerId?.message}
           onChange={(next) => {
