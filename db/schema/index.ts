@@ -1,5 +1,6 @@
 export * from "./auth";
 export * from "./customers";
+export * from "./diary";
 export * from "./instruments";
 export * from "./plans";
 export * from "./readings";

@@ -29,6 +29,8 @@ const table = {
   "search.read": ["all", "all", "all", "none"],
   "visits.read": ["all", "all", "all", "own"],
   "visits.change": ["all", "all", "own", "none"],
+  "service-plans.read": ["all", "all", "all", "none"],
+  "service-plans.change": ["all", "all", "none", "none"],
   "sheets.read": ["all", "all", "all", "none"],
   "sheets.change": ["all", "none", "own", "none"],
   "plans.read": ["all", "all", "all", "none"],
