@@ -59,11 +59,11 @@ export const servicePlan = pgTable(
     foreignKey({ columns: [table.shopId, table.technicianId], foreignColumns: [member.shopId, member.id] }),
     check(
       "service_plan_rhythm_whole",
-      sql`case ${table.rhythm}
+      sql`coalesce(case ${table.rhythm}
         when 'interval' then ${table.every} between 1 and 120 and ${table.unit} is not null
         when 'months' then cardinality(${table.months}) between 1 and 12 and ${table.months} <@ '{1,2,3,4,5,6,7,8,9,10,11,12}'
         else ${table.daysBefore} between 0 and 60
-      end`,
+      end, false)`,
     ),
     check("service_plan_weekdays", sql`${table.weekdays} <@ '{1,2,3,4,5,6,7}'`),
     check(

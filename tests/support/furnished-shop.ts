@@ -61,6 +61,10 @@ export async function furnishShop(): Promise<FurnishedShop> {
       ${shop.owner.memberId}, now() + interval '1 day')`;
   await sql`insert into instrument_string (shop_id, instrument_id, midi, strings, wound)
     values (${shopId}, ${instrumentId}, 69, 3, false)`;
+  await sql`insert into service_plan (shop_id, instrument_id, rhythm, every, unit, starts_on)
+    values (${shopId}, ${instrumentId}, 'interval', 6, 'month', '2026-01-10')`;
+  await sql`insert into site_event (shop_id, id, site_id, day, name)
+    values (${shopId}, ${newId()}, ${siteId}, '2026-06-20', 'Summer concert')`;
   const sheetId = newId();
   await sql`insert into reading_sheet (shop_id, id, instrument_id, job_id, stage, taken_at, taken_by, reference_hz)
     values (${shopId}, ${sheetId}, ${instrumentId}, ${jobId}, 'as-found', now(), ${shop.technician.memberId}, 440)`;

@@ -2,11 +2,13 @@ import type { RouteMap } from "@/lib/doors/openapi";
 import * as nothing from "./[[...nothing]]/route";
 import * as customer from "./customers/[id]/route";
 import * as customers from "./customers/route";
+import * as due from "./due/route";
 import * as instrumentAdvice from "./instruments/[id]/advice/route";
 import * as instrumentCompare from "./instruments/[id]/compare/route";
 import * as instrumentHoldings from "./instruments/[id]/holdings/route";
 import * as instrumentPlace from "./instruments/[id]/place/route";
 import * as instrument from "./instruments/[id]/route";
+import * as instrumentServicePlan from "./instruments/[id]/service-plan/route";
 import * as instrumentSheets from "./instruments/[id]/sheets/route";
 import * as instrumentString from "./instruments/[id]/strings/[midi]/route";
 import * as instrumentStrings from "./instruments/[id]/strings/route";
@@ -35,12 +37,14 @@ export const routes: RouteMap = {
   "/[[...nothing]]": nothing,
   "/customers": customers,
   "/customers/{id}": customer,
+  "/due": due,
   "/instruments": instruments,
   "/instruments/{id}": instrument,
   "/instruments/{id}/advice": instrumentAdvice,
   "/instruments/{id}/compare": instrumentCompare,
   "/instruments/{id}/holdings": instrumentHoldings,
   "/instruments/{id}/place": instrumentPlace,
+  "/instruments/{id}/service-plan": instrumentServicePlan,
   "/instruments/{id}/sheets": instrumentSheets,
   "/instruments/{id}/strings": instrumentStrings,
   "/instruments/{id}/strings/{midi}": instrumentString,
