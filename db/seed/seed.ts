@@ -8,6 +8,7 @@ import { chance as chanceFrom } from "./random";
 import { demoCustomers, type SeedCustomer } from "./scenario";
 import { wrongWireKey } from "./story";
 import { type PlaceIds, writePlaces } from "./write-places";
+import { writeServicePlans } from "./write-service-plans";
 import { writeVisits } from "./write-visits";
 
 const years = 3.2;
@@ -66,6 +67,7 @@ async function seedLarchAndWren(db: Handle, today: string, begin: Date): Promise
     { technicians, office },
     { ref: styleId, name: "Even harbour", style: styleFromRegisters(evenHarbour, 21, 108) },
   );
+  await writeServicePlans(db, shopId, customers, ids, technicians, { begin, today });
 }
 
 async function writeCustomerSignIns(
