@@ -8,6 +8,7 @@ import { signOutAction } from "../(auth)/sign-out/actions";
 
 const places = [
   { href: "/today", label: "Today", phone: true },
+  { href: "/due", label: "Due" },
   { href: "/instruments", label: "Instruments", phone: true },
   { href: "/customers", label: "Customers", also: ["/sites"] },
   { href: "/visits", label: "Visits", phone: true },

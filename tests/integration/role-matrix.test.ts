@@ -104,6 +104,8 @@ const actionRows: Record<string, readonly Role[] | "anyone" | "signed-in"> = {
   "instruments.save-strings": staff,
   "invitations.accept": "signed-in",
   "invitations.accept-as-new": "anyone",
+  "service-plans.remove": desk,
+  "service-plans.save": desk,
   "sheets.change": workshop,
   "sheets.create": workshop,
   "shop.change": ownerOnly,

@@ -2,6 +2,8 @@
 
 import { revalidatePath } from "next/cache";
 import { z } from "zod";
+import { planIn, servicePlanForm } from "@/lib/diary/service-plans/form";
+import { removeServicePlan, saveServicePlan } from "@/lib/diary/service-plans/service";
 import { defineAction } from "@/lib/doors/define-action";
 import { correctPlace, moveInstrument } from "@/lib/instruments/holdings/service";
 import {
@@ -97,5 +99,26 @@ export const removeStringAction = defineAction({
   run: async (actor, { instrumentId, midi, version }) => {
     await removeString(actor, instrumentId, midi, version);
     return { midi };
+  },
+});
+
+export const saveServicePlanAction = defineAction({
+  name: "service-plans.save",
+  permission: "service-plans.change",
+  input: servicePlanForm,
+  run: async (actor, form) => {
+    const plan = await saveServicePlan(actor, form.instrumentId, planIn(form));
+    showInstruments();
+    return plan;
+  },
+});
+
+export const removeServicePlanAction = defineAction({
+  name: "service-plans.remove",
+  permission: "service-plans.change",
+  input: z.object({ instrumentId: z.uuid(), version: z.int().positive() }),
+  run: async (actor, { instrumentId, version }) => {
+    await removeServicePlan(actor, instrumentId, version);
+    showInstruments();
   },
 });

@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { ServicePlanSection } from "@/components/diary/service-plan-section";
 import { InstrumentForm } from "@/components/instruments/instrument-form";
 import { BreakWords, KeysWords, temperamentWords } from "@/components/instruments/instrument-words";
 import { PlaceSection } from "@/components/instruments/place-section";
@@ -10,6 +11,7 @@ import { Disclosure } from "@/components/ui/disclosure";
 import { Facts } from "@/components/ui/facts";
 import { may } from "@/lib/auth/access";
 import { showDayOf } from "@/lib/dates";
+import { getServicePlan } from "@/lib/diary/service-plans/service";
 import { newId } from "@/lib/ids";
 import { findHoldings } from "@/lib/instruments/holdings/service";
 import { instrumentKeys } from "@/lib/instruments/keys";
@@ -18,12 +20,15 @@ import type { InstrumentRecord } from "@/lib/instruments/schema";
 import { findStrings } from "@/lib/instruments/strings/service";
 import { staffActor } from "@/lib/pages/page-actor";
 import { shopClock } from "@/lib/shop-clock/service";
+import { bookableTechnicians } from "@/lib/visits/booking/service";
 import {
   archiveInstrumentAction,
   changeInstrumentAction,
   correctPlaceAction,
   moveInstrumentAction,
+  removeServicePlanAction,
   removeStringAction,
+  saveServicePlanAction,
   saveStringAction,
   saveStringsAction,
 } from "../../actions";
@@ -34,10 +39,12 @@ export const metadata: Metadata = { title: "Record" };
 export default async function InstrumentRecordPage({ params }: PageProps<"/instruments/[id]/record">) {
   const instrument = await instrumentOf((await params).id);
   const actor = await staffActor();
-  const [clock, holdings, strings] = await Promise.all([
+  const [clock, holdings, strings, servicePlan, technicians] = await Promise.all([
     shopClock(actor),
     findHoldings(actor, instrument.id),
     findStrings(actor, instrument.id),
+    getServicePlan(actor, instrument.id),
+    bookableTechnicians(actor),
   ]);
   const mayPlace = may(actor.role, "instruments.place");
   return (
@@ -74,6 +81,15 @@ export default async function InstrumentRecordPage({ params }: PageProps<"/instr
           locale={clock.locale}
           move={moveInstrumentAction}
           correct={correctPlaceAction}
+        />
+        <ServicePlanSection
+          instrumentId={instrument.id}
+          plan={servicePlan}
+          change={may(actor.role, "service-plans.change")}
+          technicians={technicians}
+          locale={clock.locale}
+          save={saveServicePlanAction}
+          remove={removeServicePlanAction}
         />
         <PageSection
           title="Strings"

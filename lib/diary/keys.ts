@@ -1,0 +1,4 @@
+/** Names of what the browser keeps of the diary. */
+export const dueKeys = {
+  all: ["due"] as const,
+};
