@@ -38,6 +38,7 @@ export const allPages: Record<string, Visited> = {
   "/(shop)/customers/[id]/edit/page": staff("office", ({ customerId }) => `/customers/${customerId}/edit`),
   "/(shop)/customers/[id]/page": staff("office", ({ customerId }) => `/customers/${customerId}`),
   "/(shop)/customers/new/page": staff("office", () => "/customers/new"),
+  "/(shop)/due/page": staff("office", () => "/due"),
   "/(shop)/find/page": staff("technician", () => "/find?q=averil"),
   "/(shop)/instruments/(list)/page": staff("office", () => "/instruments"),
   "/(shop)/instruments/[id]/compare/page": staff(

@@ -4,6 +4,7 @@ import type { Actor } from "@/lib/auth/actor";
 import { addDays, type Day, dayOf } from "@/lib/dates";
 import { dueQuery } from "@/lib/diary/due/schema";
 import { findDue } from "@/lib/diary/due/service";
+import { addSiteEvent, findSiteEvents, removeSiteEvent } from "@/lib/diary/events/service";
 import { servicePlanInput } from "@/lib/diary/service-plans/schema";
 import { getServicePlan, removeServicePlan, saveServicePlan } from "@/lib/diary/service-plans/service";
 import { AppError } from "@/lib/errors";
@@ -189,13 +190,36 @@ describe("the due list", () => {
       halfYearly({ rhythm: { kind: "events", daysBefore: 3 } }),
     );
     expect((await due(office)).items).toMatchObject([{ state: "later", window: null }]);
-    for (const day of [addDays(today, -5), addDays(today, 20)]) {
-      await sql()`insert into site_event (shop_id, id, site_id, day, name)
-        values (${shopId}, ${newId()}, ${siteId}, ${day}, 'Concert')`;
-    }
+    const concert = { day: addDays(today, 20), name: "Concert" };
+    const { id } = await addSiteEvent(office, siteId, concert);
+    await sql()`insert into site_event (shop_id, id, site_id, day, name)
+      values (${shopId}, ${newId()}, ${siteId}, ${addDays(today, -5)}, 'Concert of last week')`;
     expect((await due(office)).items).toMatchObject([
       { state: "due", window: { from: addDays(today, 17), until: addDays(today, 20) } },
     ]);
+    expect((await findSiteEvents(office, siteId)).items).toEqual([{ ...concert, id, siteId }]);
+    await removeSiteEvent(office, siteId, id);
+    expect((await due(office)).items).toMatchObject([{ state: "later", window: null }]);
+  });
+
+  it("takes an event sent twice for one, and none on a day that is over or at a site of another shop", async () => {
+    const here = await scene();
+    const there = await scene();
+    const event = { id: newId(), day: addDays(today, 3), name: "Recital" };
+    await addSiteEvent(here.office, here.siteId, event);
+    await addSiteEvent(here.office, here.siteId, event);
+    expect((await findSiteEvents(here.office, here.siteId)).items).toHaveLength(1);
+    const over = await refusal(
+      addSiteEvent(here.office, here.siteId, { ...event, id: newId(), day: addDays(today, -1) }),
+    );
+    expect(over.more.fields).toHaveProperty("day");
+    for (const run of [
+      () => addSiteEvent(there.office, here.siteId, event),
+      () => removeSiteEvent(there.office, here.siteId, event.id),
+      () => findSiteEvents(there.office, here.siteId),
+    ]) {
+      expect(await refusal(run())).toMatchObject({ code: "not-found" });
+    }
   });
 
   it("leaves out instruments put away", async () => {

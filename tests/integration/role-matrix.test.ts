@@ -71,6 +71,9 @@ const routeRows: Record<string, readonly Role[] | "anyone"> = {
   "DELETE /sheets/{id}/notes/{midi}": workshop,
   "GET /sheets/{id}/plans": staff,
   "POST /sheets/{id}/plans": workshop,
+  "GET /sites/{id}/events": staff,
+  "POST /sites/{id}/events": desk,
+  "DELETE /sites/{id}/events/{eventId}": desk,
   "GET /styles": staff,
   "POST /styles": ownerOnly,
   "PATCH /styles/{id}": ownerOnly,
@@ -119,8 +122,10 @@ const actionRows: Record<string, readonly Role[] | "anyone" | "signed-in"> = {
   "sign-in.send-confirmation": "anyone",
   "sign-in.sign-out": "anyone",
   "sign-in.sign-up": "anyone",
+  "sites.add-event": desk,
   "sites.change": desk,
   "sites.create": desk,
+  "sites.remove-event": desk,
   "styles.change": ownerOnly,
   "styles.create": ownerOnly,
   "team.change-member": ownerOnly,
@@ -147,7 +152,7 @@ let actions: FoundAction[];
 const routes = allRoutes();
 
 function knock(route: FoundRoute, browser: Browser | null): Promise<Response> {
-  const url = `${env().APP_URL}/api/v1${route.path.replace("{id}", newId()).replace("{midi}", "69")}?version=1`;
+  const url = `${env().APP_URL}/api/v1${route.path.replace("{id}", newId()).replace("{midi}", "69").replace("{eventId}", newId())}?version=1`;
   const headers = browser ? browser.headers() : new Headers({ origin: env().APP_URL });
   if (route.method !== "GET") headers.set("content-type", "application/json");
   const hasBody = route.method !== "GET" && route.method !== "DELETE";

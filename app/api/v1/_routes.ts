@@ -24,6 +24,8 @@ import * as sheetNote from "./sheets/[id]/notes/[midi]/route";
 import * as sheetNotes from "./sheets/[id]/notes/route";
 import * as sheetPlans from "./sheets/[id]/plans/route";
 import * as sheet from "./sheets/[id]/route";
+import * as siteEvent from "./sites/[id]/events/[eventId]/route";
+import * as siteEvents from "./sites/[id]/events/route";
 import * as site from "./sites/[id]/route";
 import * as sites from "./sites/route";
 import * as style from "./styles/[id]/route";
@@ -61,6 +63,8 @@ export const routes: RouteMap = {
   "/sheets/{id}/plans": sheetPlans,
   "/sites": sites,
   "/sites/{id}": site,
+  "/sites/{id}/events": siteEvents,
+  "/sites/{id}/events/{eventId}": siteEvent,
   "/styles": styles,
   "/styles/{id}": style,
   "/visits": visits,
