@@ -2,6 +2,8 @@ import { sql } from "drizzle-orm";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { closeDatabases, withShop } from "@/db/client";
 import type { Actor } from "@/lib/auth/actor";
+import { dueQuery } from "@/lib/diary/due/schema";
+import { findDue } from "@/lib/diary/due/service";
 import { getHistory } from "@/lib/instruments/history/service";
 import { search } from "@/lib/search/service";
 import { workDay } from "@/lib/visits/day/service";
@@ -174,6 +176,17 @@ describe("a shop of 5 000 instruments among twenty, for staff", () => {
     await of("a technician", { technicianId: technician.memberId }, "visit_by_start", 3_000);
     await hold("a day's work", () => workDay(office, here.day), "visit_by_start", 3_000);
     await hold("a technician's day", () => workDay(technician, here.day), "visit_by_start", 3_000);
+  });
+
+  it("computes the due list of the whole shop", async () => {
+    const list = await hold(
+      "due list",
+      () => findDue(office, dueQuery.parse({ state: "any" })),
+      "service_plan_shop_id_instrument_id_pk",
+      40_000,
+    );
+    const counted = Object.values(list.counts).reduce((sum, count) => sum + count, 0);
+    expect(counted).toBe(5_000 - Math.floor(5_000 / 33));
   });
 
   it("lists the reading sheets of an instrument to the last page, and its history", async () => {

@@ -113,6 +113,11 @@ export const rows = [
       lateral (select case when e.era = 1 then 1 + n % ${size.sites} else w.site end) h(site)
     order by n, s`,
 
+  `insert into service_plan (shop_id, instrument_id, rhythm, every, unit, months, starts_on)
+    select pg_temp.made_id('shop', s, 0), pg_temp.made_id('instrument', s, n),
+      case when n % 3 = 0 then 'months' else 'interval' end::rhythm_kind, 6, 'month', '{4,10}', current_date - 600
+    from ${each(size.instruments)} order by n, s`,
+
   `insert into visit (shop_id, id, site_id, customer_id, state, starts_local, ends_local, time_zone, during)
     select pg_temp.made_id('shop', t.s, 0), pg_temp.made_id('visit', t.s, t.n), pg_temp.made_id('site', t.s, w.site),
       pg_temp.made_id('customer', t.s, 1 + (w.site - 1) % ${size.customers}),
