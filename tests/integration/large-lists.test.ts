@@ -183,7 +183,7 @@ describe("a shop of 5 000 instruments among twenty, for staff", () => {
       "due list",
       () => findDue(office, dueQuery.parse({ state: "any" })),
       "service_plan_shop_id_instrument_id_pk",
-      40_000,
+      55_000,
     );
     const counted = Object.values(list.counts).reduce((sum, count) => sum + count, 0);
     expect(counted).toBe(5_000 - Math.floor(5_000 / 33));
