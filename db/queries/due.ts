@@ -1,18 +1,12 @@
-import { sql } from "drizzle-orm";
+import { inArray, sql } from "drizzle-orm";
 import type { Handle } from "@/db/client";
+import { instrument } from "@/db/schema";
 import type { InstrumentRow } from "@/lib/instruments/schema";
 
-/** All that decides what is due, one row for each instrument in use that has a service plan. */
-export type DueRow = {
+/** All that decides whether an instrument in use is due. */
+export type DueFactsRow = {
   instrumentId: string;
-  instrument: string;
   kind: InstrumentRow["kind"];
-  room: string;
-  siteId: string;
-  site: string;
-  city: string;
-  customerId: string;
-  customer: string;
   rhythm: "interval" | "months" | "events";
   every: number | null;
   unit: "week" | "month" | null;
@@ -22,7 +16,6 @@ export type DueRow = {
   rests: boolean;
   restsUntil: string | null;
   technicianId: string | null;
-  technician: string | null;
   workMinutes: number;
   lastServed: string | null;
   bookedOn: string | null;
@@ -35,8 +28,12 @@ export type DueRow = {
  * One pass over the shop's jobs tells when each instrument was last served, is booked next and was last
  * declined. Read whole: the order of a due list is known only when every window has been computed.
  */
-export async function dueRows(db: Handle, shopId: string, today: string): Promise<DueRow[]> {
-  const rows = await db.execute<DueRow>(sql`
+export async function dueFacts(
+  db: Handle,
+  shopId: string,
+  { today, timeZone }: { today: string; timeZone: string },
+): Promise<DueFactsRow[]> {
+  const rows = await db.execute<DueFactsRow>(sql`
     with told as (
       select j.instrument_id,
         max(v.ends_local::date) filter (where v.state in ('done', 'closed')) as last_served,
@@ -51,28 +48,57 @@ export async function dueRows(db: Handle, shopId: string, today: string): Promis
       where j.shop_id = ${shopId} and v.shop_id = ${shopId}
       group by j.instrument_id
     ), to_come as (
-      select e.site_id, array_agg(e.day::text order by e.day) as days
+      select h.instrument_id, array_agg(e.day::text order by e.day) as days
       from site_event e
+      join instrument_holding h on h.shop_id = e.shop_id and h.site_id = e.site_id and h.until is null
       where e.shop_id = ${shopId} and e.day >= ${today}
-      group by e.site_id
+      group by h.instrument_id
     )
-    select i.id as "instrumentId", i.name as instrument, i.kind, i.room,
-      s.id as "siteId", s.name as site, s.city, c.id as "customerId", c.name as customer,
+    select p.instrument_id as "instrumentId", i.kind,
       p.rhythm, p.every, p.unit, p.months, p.days_before as "daysBefore",
       p.starts_on::text as "startsOn", p.rests, p.rests_until::text as "restsUntil",
-      p.technician_id as "technicianId", m.name as technician, p.work_minutes as "workMinutes",
+      p.technician_id as "technicianId", p.work_minutes as "workMinutes",
       greatest(t.last_served, p.served_before)::text as "lastServed",
       t.booked::date::text as "bookedOn", t.booked_id as "bookedVisitId",
-      (t.declined at time zone s.time_zone)::date::text as "declinedOn",
+      (t.declined at time zone ${timeZone})::date::text as "declinedOn",
       e.days as events
     from service_plan p
     join instrument i on i.shop_id = p.shop_id and i.id = p.instrument_id and i.archived_at is null
-    join instrument_holding h on h.shop_id = i.shop_id and h.instrument_id = i.id and h.until is null
+    left join told t on t.instrument_id = p.instrument_id
+    left join to_come e on e.instrument_id = p.instrument_id and p.rhythm = 'events'
+    where p.shop_id = ${shopId}`);
+  return [...rows];
+}
+
+/** What a due instrument is called, where it stands and whose it is. */
+export type DueNamesRow = {
+  instrumentId: string;
+  instrument: string;
+  room: string;
+  siteId: string;
+  site: string;
+  city: string;
+  customerId: string;
+  customer: string;
+  technician: string | null;
+};
+
+export async function dueNames(
+  db: Handle,
+  shopId: string,
+  instrumentIds: readonly string[],
+): Promise<DueNamesRow[]> {
+  if (instrumentIds.length === 0) return [];
+  const rows = await db.execute<DueNamesRow>(sql`
+    select instrument.id as "instrumentId", instrument.name as instrument, instrument.room,
+      s.id as "siteId", s.name as site, s.city, c.id as "customerId", c.name as customer,
+      m.name as technician
+    from instrument
+    join instrument_holding h on h.shop_id = instrument.shop_id and h.instrument_id = instrument.id and h.until is null
     join site s on s.shop_id = h.shop_id and s.id = h.site_id
     join customer c on c.shop_id = h.shop_id and c.id = h.owner_id
+    left join service_plan p on p.shop_id = instrument.shop_id and p.instrument_id = instrument.id
     left join member m on m.shop_id = p.shop_id and m.id = p.technician_id
-    left join told t on t.instrument_id = i.id
-    left join to_come e on e.site_id = s.id and p.rhythm = 'events'
-    where p.shop_id = ${shopId}`);
+    where instrument.shop_id = ${shopId} and ${inArray(instrument.id, [...instrumentIds])}`);
   return [...rows];
 }

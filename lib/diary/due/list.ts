@@ -1,69 +1,84 @@
 import { AppError } from "@/lib/errors";
 import type { DueItem, DueList, DueQuery } from "./schema";
 
+/** What is known of an instrument before its names are read: enough to count, and to order by when it is due. */
+export type DueFact = Omit<
+  DueItem,
+  "instrument" | "room" | "siteId" | "site" | "city" | "customerId" | "customer" | "technician"
+>;
+
 const noWindow = "9999-12-31";
 
-const keys: Record<DueQuery["sort"], (item: DueItem) => string> = {
-  due: ({ window }) => window?.until ?? noWindow,
-  name: ({ instrument }) => instrument,
-  place: ({ city, site }) => `${city} ${site}`,
-};
-
-/** The part of the whole due list that a query asks for. Pages by key, so that one booked meanwhile shifts none. */
-export function partOf(items: readonly DueItem[], query: DueQuery, locale: string): DueList {
-  const inOrder = new Intl.Collator(locale, { sensitivity: "base", numeric: true });
-  const keyOf = keys[query.sort];
-  const sign = query.direction === "asc" ? 1 : -1;
-  const compare = (one: { key: string; id: string }, other: { key: string; id: string }) =>
-    sign * (inOrder.compare(one.key, other.key) || (one.id < other.id ? -1 : one.id > other.id ? 1 : 0));
-  const after = query.cursor === undefined ? null : readCursor(query.cursor);
-  const found = items
-    .filter((item) => isAskedFor(item, query))
-    .map((item) => ({ item, key: keyOf(item), id: item.instrumentId }))
-    .sort(compare)
-    .filter((each) => after === null || compare(each, after) > 0);
-  const shown = found.slice(0, query.most);
-  const last = shown.at(-1);
-  return {
-    items: shown.map(({ item }) => item),
-    next: last && found.length > shown.length ? cursorOf(last) : null,
-    counts: countsOf(items),
-  };
+/** Whether the question is about names, so that those of every instrument are needed to answer it. */
+export function asksForNames({ sort, q, city }: DueQuery): boolean {
+  return sort !== "due" || Boolean(q) || Boolean(city);
 }
 
-function countsOf(items: readonly DueItem[]): DueList["counts"] {
+export function countsOf(facts: readonly DueFact[]): DueList["counts"] {
   const counts = { due: 0, overdue: 0, booked: 0, declined: 0, resting: 0, later: 0 };
-  for (const { state } of items) counts[state] += 1;
+  for (const { state } of facts) counts[state] += 1;
   return counts;
 }
 
-function isAskedFor(item: DueItem, { state, technicianId, kind, city, q }: DueQuery): boolean {
+export function isAskedFor(fact: DueFact, { state, technicianId, kind }: DueQuery): boolean {
   const inState =
     state === "any" ||
-    (state === "to-book" ? item.state === "due" || item.state === "overdue" : item.state === state);
+    (state === "to-book" ? fact.state === "due" || fact.state === "overdue" : fact.state === state);
   return (
     inState &&
-    (technicianId === undefined || item.technicianId === technicianId) &&
-    (kind === undefined || item.kind === kind) &&
-    (city === undefined || plain(item.city) === plain(city)) &&
-    (q === undefined || contains(item, q))
+    (technicianId === undefined || fact.technicianId === technicianId) &&
+    (kind === undefined || fact.kind === kind)
   );
 }
 
-const plain = (text: string) => text.normalize("NFD").replace(/\p{M}/gu, "").toLowerCase();
-
-function contains({ instrument, room, site, city, customer }: DueItem, q: string): boolean {
+export function isNamed({ instrument, room, site, city, customer }: DueItem, asked: DueQuery): boolean {
+  if (asked.city && plain(city) !== plain(asked.city)) return false;
   const text = plain([instrument, room, site, city, customer].join(" "));
-  return plain(q)
+  return plain(asked.q ?? "")
     .split(/\s+/)
     .every((word) => text.includes(word));
 }
 
-function cursorOf({ key, id }: { key: string; id: string }): string {
+export const byDue = ({ window }: DueFact) => window?.until ?? noWindow;
+export const byNames: Record<DueQuery["sort"], (item: DueItem) => string> = {
+  due: byDue,
+  name: ({ instrument }) => instrument,
+  place: ({ city, site }) => `${city} ${site}`,
+};
+
+/** A page by key, so that one booked meanwhile shifts none. */
+export function pageOf<Item extends { instrumentId: string }>(
+  items: readonly Item[],
+  keyOf: (item: Item) => string,
+  { direction, cursor, most }: DueQuery,
+  locale: string,
+): { items: Item[]; next: string | null } {
+  const inOrder = new Intl.Collator(locale, { sensitivity: "base", numeric: true });
+  const sign = direction === "asc" ? 1 : -1;
+  const compare = (one: Key, other: Key) =>
+    sign * (inOrder.compare(one.key, other.key) || (one.id < other.id ? -1 : one.id > other.id ? 1 : 0));
+  const after = cursor === undefined ? null : readCursor(cursor);
+  const found = items
+    .map((item) => ({ item, key: keyOf(item), id: item.instrumentId }))
+    .filter((each) => after === null || compare(each, after) > 0)
+    .sort(compare);
+  const shown = found.slice(0, most);
+  const last = shown.at(-1);
+  return {
+    items: shown.map(({ item }) => item),
+    next: last && found.length > shown.length ? cursorOf(last) : null,
+  };
+}
+
+const plain = (text: string) => text.normalize("NFD").replace(/\p{M}/gu, "").toLowerCase();
+
+type Key = { key: string; id: string };
+
+function cursorOf({ key, id }: Key): string {
   return Buffer.from(JSON.stringify([key, id])).toString("base64url");
 }
 
-function readCursor(cursor: string): { key: string; id: string } {
+function readCursor(cursor: string): Key {
   try {
     const [key, id] = JSON.parse(Buffer.from(cursor, "base64url").toString("utf8"));
     if (typeof key === "string" && typeof id === "string") return { key, id };

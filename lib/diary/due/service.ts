@@ -1,12 +1,12 @@
 import "server-only";
-import { withShop } from "@/db/client";
-import { type DueRow, dueRows } from "@/db/queries/due";
+import { type Tx, withShop } from "@/db/client";
+import { type DueFactsRow, dueFacts, dueNames } from "@/db/queries/due";
 import type { Actor } from "@/lib/auth/actor";
 import { authorise } from "@/lib/auth/authorise";
 import type { Day } from "@/lib/dates";
 import { clockWithin } from "@/lib/shop-clock/service";
 import { rhythmOf } from "../service-plans/rhythm-columns";
-import { partOf } from "./list";
+import { asksForNames, byDue, byNames, countsOf, type DueFact, isAskedFor, isNamed, pageOf } from "./list";
 import { dueState, dueWindow } from "./rules";
 import type { DueItem, DueList, DueQuery } from "./schema";
 
@@ -15,42 +15,47 @@ const LEAD_DAYS = 28;
 
 export async function findDue(actor: Actor, query: DueQuery): Promise<DueList> {
   authorise(actor, "service-plans.read");
-  const { rows, clock } = await withShop(actor, async (tx) => {
-    const now = await clockWithin(tx, actor.shopId);
-    return { clock: now, rows: await dueRows(tx, actor.shopId, now.today) };
+  return withShop(actor, async (tx) => {
+    const clock = await clockWithin(tx, actor.shopId);
+    const facts = (await dueFacts(tx, actor.shopId, clock)).map((row) => factOf(row, clock.today));
+    const asked = facts.filter((fact) => isAskedFor(fact, query));
+    const counts = countsOf(facts);
+    if (asksForNames(query)) {
+      const named = (await withNames(tx, actor, asked)).filter((item) => isNamed(item, query));
+      return { ...pageOf(named, byNames[query.sort], query, clock.locale), counts };
+    }
+    const page = pageOf(asked, byDue, query, clock.locale);
+    return { items: await withNames(tx, actor, page.items), next: page.next, counts };
   });
-  return partOf(
-    rows.map((row) => itemOf(row, clock.today)),
-    query,
-    clock.locale,
-  );
 }
 
-function itemOf(row: DueRow, today: Day): DueItem {
-  const window = dueWindow(
-    rhythmOf(row),
-    { lastServed: row.lastServed, startsOn: row.startsOn, events: row.events ?? [] },
-    today,
+/** In the order of the facts. An instrument that stands nowhere has no names and is left out. */
+async function withNames(tx: Tx, actor: Actor, facts: readonly DueFact[]): Promise<DueItem[]> {
+  const rows = await dueNames(
+    tx,
+    actor.shopId,
+    facts.map(({ instrumentId }) => instrumentId),
   );
+  const names = new Map(rows.map((row) => [row.instrumentId, row]));
+  return facts.flatMap((fact) => {
+    const row = names.get(fact.instrumentId);
+    return row ? [{ ...fact, ...row }] : [];
+  });
+}
+
+function factOf(row: DueFactsRow, today: Day): DueFact {
+  const { lastServed, startsOn, bookedOn, declinedOn } = row;
+  const window = dueWindow(rhythmOf(row), { lastServed, startsOn, events: row.events ?? [] }, today);
   const resting = row.rests && (row.restsUntil === null || row.restsUntil > today);
-  const { bookedOn, declinedOn } = row;
   return {
     instrumentId: row.instrumentId,
-    instrument: row.instrument,
     kind: row.kind,
-    room: row.room,
-    siteId: row.siteId,
-    site: row.site,
-    city: row.city,
-    customerId: row.customerId,
-    customer: row.customer,
     window,
     state: dueState({ window, resting, bookedOn, declinedOn, leadDays: LEAD_DAYS }, today),
-    lastServed: row.lastServed,
+    lastServed,
     bookedOn,
     bookedVisitId: row.bookedVisitId,
     technicianId: row.technicianId,
-    technician: row.technician,
     workMinutes: row.workMinutes,
   };
 }
