@@ -1,6 +1,6 @@
 /** Numbers as the screens print them: fixed decimals, a true minus, units said by the column or the label. */
 
-export const MINUS = "−";
+const MINUS = "−";
 const NOTHING = "–";
 
 function digits(value: number, decimals: number): { text: string; sign: -1 | 0 | 1 } {
@@ -27,7 +27,7 @@ export function signedCents(value: number | null | undefined): string {
 }
 
 /** " ± 0.2", or nothing when the number is exact or its error unknown. */
-export function plusMinus(half: number | null | undefined, decimals: number): string {
+function plusMinus(half: number | null | undefined, decimals: number): string {
   return half == null || !Number.isFinite(half) ? "" : ` ± ${Math.abs(half).toFixed(decimals)}`;
 }
 

@@ -1,6 +1,6 @@
 "use client";
 
-import { type ReactNode, useEffect, useId, useRef, useState } from "react";
+import { type ReactNode, useEffect, useRef, useState } from "react";
 import { NoteName } from "./note-name";
 import { spokenNote } from "./note-spelling";
 import type { PlotTableData } from "./plot-types";
@@ -144,17 +144,5 @@ function CopyButton({ table }: { table: PlotTableData }) {
         {said}
       </span>
     </>
-  );
-}
-
-/** One button and the table behind it, for a plot that stands alone. */
-export function PlotTable(props: Omit<TableProps, "id">) {
-  const [open, setOpen] = useState(false);
-  const id = useId();
-  return (
-    <div>
-      <NumbersButton open={open} controls={id} title={props.title} onClick={() => setOpen(!open)} />
-      {open && <NumbersTable id={id} {...props} />}
-    </div>
   );
 }

@@ -1,6 +1,6 @@
 import { fixed, inharmonicity, signed, signedCents } from "@/components/charts/format";
 import type { KeyMark } from "@/components/charts/key-mark";
-import { noteText, spokenNote } from "@/components/charts/note-spelling";
+import { noteText } from "@/components/charts/note-spelling";
 import type { FlaggedPoint, KeyPlot, KeyValue } from "@/components/charts/plot-types";
 import type { AnalysisRecord } from "@/lib/plans/schema";
 
@@ -195,9 +195,4 @@ export function planTable({ notes }: Pick<AnalysisRecord, "notes">): KeyPlot["ta
 /** Half-width of B's band at a key, for "2.12 ± 0.18". */
 export function halfBand(key: Pick<Key, "bLow" | "bHigh">): number {
   return (key.bHigh - key.bLow) / 2;
-}
-
-/** "E6" said for a screen reader's sentence. */
-export function spokenKeys(keys: readonly Key[]): string {
-  return keys.map((key) => spokenNote(key.midi)).join(", ");
 }

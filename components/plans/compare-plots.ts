@@ -6,13 +6,13 @@ import type { ComparisonRecord } from "@/lib/plans/compare/schema";
 type Note = ComparisonRecord["notes"][number];
 type Side = ComparisonRecord["before"];
 
-export const verdictWords: Record<Note["verdict"], string> = {
+const verdictWords: Record<Note["verdict"], string> = {
   unchanged: "unchanged within error",
   changed: "changed",
   "not-comparable": "not comparable",
 };
 
-export const reasonWords: Record<NonNullable<Note["reason"]>, string> = {
+const reasonWords: Record<NonNullable<Note["reason"]>, string> = {
   "not-read-before": "not read before",
   "not-read-after": "not read this time",
   "different-string": "another string was read",

@@ -75,7 +75,7 @@ export function notBelongingWords(key: AnalysisRecord["keys"][number]): string {
   return `does not belong, ${why.charAt(0).toLowerCase()}${why.slice(1)}`;
 }
 
-export function stringWords(string: number | "all"): string {
+function stringWords(string: number | "all"): string {
   if (string === "all") return "all strings";
   return ["left string", "middle string", "right string"][string - 1] ?? `string ${string}`;
 }

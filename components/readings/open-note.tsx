@@ -151,7 +151,7 @@ function emptyWords(live: Live, row: Row): string {
     : "No fit yet.";
 }
 
-export function FitFacts({
+function FitFacts({
   fit,
   className,
   style,

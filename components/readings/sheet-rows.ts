@@ -57,7 +57,7 @@ export function mended(trouble: Trouble | null): Trouble | null {
   return trouble?.kind === "stale" || trouble?.kind === "signed-out" ? trouble : null;
 }
 
-export function placeIn(state: SheetState, place: Place): number {
+function placeIn(state: SheetState, place: Place): number {
   const rank = ({ midi, string, take }: Place) => midi * 1000 + (string === "all" ? 0 : string) * 100 + take;
   const before = state.order.findIndex((key) => {
     const row = state.rows[key];

@@ -1,5 +1,5 @@
 import type { NoteRecord } from "@/lib/readings/schema";
-import { type ReadingUnit, typedFault } from "@/lib/readings/typed-number";
+import { type ReadingUnit } from "@/lib/readings/typed-number";
 import {
   afterFailure,
   afterRemoval,
@@ -13,7 +13,6 @@ import {
   draftOf,
   isChanged,
   type Place,
-  partialsOf,
   type Row,
   type RowKey,
   rowKey,
@@ -137,18 +136,7 @@ export function shownRows(state: SheetState): Row[] {
   });
 }
 
-export function canUndo(state: SheetState): boolean {
-  return state.history.length > 0;
-}
-
 /** The first partial with no reading yet, among those shown. */
 export function firstEmpty(row: Row | undefined, columns: readonly number[]): number {
   return columns.find((partial) => !row?.cells[partial]) ?? columns[0] ?? 1;
-}
-
-export function hasBadText(row: Row): boolean {
-  return partialsOf(row).some((partial) => {
-    const cell = row.cells[partial];
-    return cell?.kind === "typed" && cell.settled && typedFault(cell.text, cell.unit) !== null;
-  });
 }

@@ -52,7 +52,7 @@ export function settled(state: SheetState): SheetState {
   ]);
 }
 
-export const minus = (list: readonly number[], value: number) => list.filter((one) => one !== value);
+const minus = (list: readonly number[], value: number) => list.filter((one) => one !== value);
 
 export function reverted(state: SheetState): SheetState {
   const { editing } = state;

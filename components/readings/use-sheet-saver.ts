@@ -19,7 +19,7 @@ const LEFT_MS = 120;
 const RETRY_MS = [3_000, 8_000, 20_000, 60_000];
 const MOST_AT_ONCE = 128;
 
-export function isReady(row: Row, live: Live, state: SheetState): boolean {
+function isReady(row: Row, live: Live, state: SheetState): boolean {
   return (
     !row.sending &&
     row.trouble === null &&

@@ -19,7 +19,7 @@ export function Book({ children, ...way }: BookProps) {
   );
 }
 
-export function SkipLink({ to = "#work" }: { to?: `#${string}` }) {
+function SkipLink({ to = "#work" }: { to?: `#${string}` }) {
   return (
     <a
       href={to}

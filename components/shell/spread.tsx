@@ -51,7 +51,7 @@ export function LeftPage({ crumb, title, subtitle, aside, children, fold = "Abou
   );
 }
 
-export function PageTitle({
+function PageTitle({
   title,
   subtitle,
   aside,

@@ -6,7 +6,7 @@ import { Sign } from "@/components/ui/sign";
 import { BEATING_INTERVALS, REGISTERS, type RegisterRule } from "@/lib/acoustics";
 import { ruleKey, type StyleDraft } from "./style-draft";
 
-export function ruleName(rule: RegisterRule): string {
+function ruleName(rule: RegisterRule): string {
   const known = BEATING_INTERVALS.find((interval) => ruleKey(interval) === ruleKey(rule));
   return (
     (known && intervalWords[known.name]) ??

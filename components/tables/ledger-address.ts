@@ -52,7 +52,7 @@ export function writeAddress<Row extends LedgerRow>(
   return next;
 }
 
-export function defaultColumns<Row extends LedgerRow>(columns: readonly LedgerColumn<Row>[]): string[] {
+function defaultColumns<Row extends LedgerRow>(columns: readonly LedgerColumn<Row>[]): string[] {
   return columns.filter((column) => !column.extra).map((column) => column.id);
 }
 

@@ -4,7 +4,7 @@ import { type KeyboardEvent, type RefObject, useCallback, useEffect, useState } 
 import { isPagesKey, letterKeysOn } from "../shell/letter-keys";
 
 /** Where a key leads from row `at` of `count`; null when the key means nothing here. */
-export function rowAfterKey(key: string, at: number, count: number): number | null {
+function rowAfterKey(key: string, at: number, count: number): number | null {
   if (count === 0) return null;
   switch (key) {
     case "ArrowDown":

@@ -1,6 +1,6 @@
 "use client";
 
-import type { ComponentProps, ReactNode } from "react";
+import type { ComponentProps } from "react";
 import { cx } from "./class-names";
 import { Sign } from "./sign";
 
@@ -8,48 +8,6 @@ const look =
   "inline-flex h-7 items-center gap-1.5 rounded border px-2.5 text-12 font-medium whitespace-nowrap touch:h-11 touch:px-3.5 touch:text-14";
 const kept = "border-brass bg-brass-wash text-ink";
 const free = "border-edge text-ink-soft hover:bg-cover";
-
-/** A filter that is set; pressing it takes the filter away. */
-export function KeptChip({
-  name,
-  value,
-  onRemove,
-}: {
-  name: string;
-  value: ReactNode;
-  onRemove: () => void;
-}) {
-  return (
-    <button type="button" className={cx(look, kept)} onClick={onRemove}>
-      {name} <b className="font-semibold">{value}</b>
-      <Sign name="cross" size={10} />
-      <span className="sr-only">Remove this filter</span>
-    </button>
-  );
-}
-
-/** A press that is on or off. */
-export function ToggleChip({
-  on,
-  onChange,
-  children,
-}: {
-  on: boolean;
-  onChange: (on: boolean) => void;
-  children: ReactNode;
-}) {
-  return (
-    <button
-      type="button"
-      aria-pressed={on}
-      className={cx(look, on ? kept : free)}
-      onClick={() => onChange(!on)}
-    >
-      {on ? <Sign name="tick" size={12} /> : null}
-      {children}
-    </button>
-  );
-}
 
 /** A filter with a short list of values: the system's own list under the look of a chip. */
 export function SelectChip({

@@ -25,7 +25,7 @@ export function Sharp() {
   return <Accidental word="sharp" d="M3 1.500v14M7 .5v14M.8 6l8.400-2M.8 12l8.400-2" />;
 }
 
-export function Flat() {
+function Flat() {
   return <Accidental word="flat" d="M2 .5v14c2.800-1.600 5.600-3.600 5.600-6.200 0-2.600-3.200-3-5.600-.6" />;
 }
 
@@ -51,9 +51,4 @@ export function PowerOfTen({ exponent }: { exponent: number }) {
       × 10<sup>{exponent < 0 ? `−${-exponent}` : exponent}</sup>
     </span>
   );
-}
-
-/** The typographic minus, so that it lines up with plus and figures. */
-export function Minus() {
-  return <>−</>;
 }

@@ -95,7 +95,7 @@ export function takenWords(
 type Opened = Pick<OpenedJob, "next" | "strangers">;
 
 /** What stands on the button that leads on: "look at E6". */
-export function stepWords(step: Step, strangers: readonly { midi: number }[]): string {
+function stepWords(step: Step, strangers: readonly { midi: number }[]): string {
   const [first] = strangers;
   const words: Record<Step, string> = {
     found: "read as found",

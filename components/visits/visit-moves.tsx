@@ -28,7 +28,7 @@ export type MovesProps = {
  * Where the visit goes next. The next step stands at the head of the page on the desk and under the thumb on
  * the phone; what is rarer stands beside it. Steps are done at once and offered back.
  */
-export function useVisitMoves({ visit, step }: Pick<MovesProps, "visit" | "step">) {
+function useVisitMoves({ visit, step }: Pick<MovesProps, "visit" | "step">) {
   const [busy, setBusy] = useState<VisitState | null>(null);
   const [refused, setRefused] = useState<string>();
 

@@ -21,7 +21,7 @@ import { VisitStateWord } from "./visit-state";
 
 type Row = VisitRow & { href: string };
 
-export function asLedgerPage({ items, next }: ListPage<VisitRow>): LedgerPage<Row> {
+function asLedgerPage({ items, next }: ListPage<VisitRow>): LedgerPage<Row> {
   return { rows: items.map((row) => ({ ...row, href: `/visits/${row.id}` })), nextCursor: next };
 }
 

@@ -4,7 +4,7 @@ import { account, member, person, shop } from "@/db/schema";
 import { normalisePassword } from "@/lib/auth/passwords";
 import type { Chance } from "./random";
 
-export const demoPassword = "port-averil-demo-2026";
+const demoPassword = "port-averil-demo-2026";
 
 export type SeedPerson = {
   name: string;

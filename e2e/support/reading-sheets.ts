@@ -21,7 +21,7 @@ export async function newSheetOn(request: APIRequestContext, serial: string) {
   return { id, instrumentId, address: `/instruments/${instrumentId}/sheets/${id}` };
 }
 
-export function midiOf(name: string): number {
+function midiOf(name: string): number {
   const midi = keyFromName(name);
   if (midi === null) throw new Error(`There is no key ${name}`);
   return midi;

@@ -88,8 +88,8 @@ export function beatRates(
 }
 
 /** Lower keys over which evenness is judged, C3 to F4: there thirds, sixths and tenths beat 5 to 16 times a second. */
-export const EVENNESS_LOWEST_KEY = 48;
-export const EVENNESS_HIGHEST_KEY = 65;
+const EVENNESS_LOWEST_KEY = 48;
+const EVENNESS_HIGHEST_KEY = 65;
 
 const EVENNESS_INTERVALS = ["major-third", "major-sixth", "major-tenth"] as const;
 

@@ -1,7 +1,7 @@
 import { AcousticsError, type FitInput } from "./types";
 
 /** Most readings one sheet may hold: a hundred partials, some read several times. */
-export const MOST_READINGS = 1000;
+const MOST_READINGS = 1000;
 export const HIGHEST_PARTIAL = 128;
 const LOWEST_HZ = 1e-3;
 const HIGHEST_HZ = 1e6;
@@ -18,7 +18,7 @@ export function checkMidi(midi: unknown, path: string): void {
   }
 }
 
-export function checkReferenceHz(referenceHz: unknown): void {
+function checkReferenceHz(referenceHz: unknown): void {
   if (!isPositive(referenceHz)) {
     throw new AcousticsError("bad-reference", "The reference pitch must be above 0 Hz.", "referenceHz");
   }

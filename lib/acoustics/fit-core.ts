@@ -39,7 +39,7 @@ const MOST_ITERATIONS = 60;
 const PRECISION = 1e-9;
 
 /** Lowest B tried: keeps 1 + B·n² well above 0 for every partial of the sheet. */
-export function smallestB(largestSquare: number): number {
+function smallestB(largestSquare: number): number {
   return -0.5 / largestSquare;
 }
 

@@ -56,7 +56,7 @@ export function interpolate(knots: readonly Knot[], x: number): number {
 }
 
 /** Standard deviation of one note's ln B about its bridge's curve. */
-export const noteScatterSigma = (midi: number): number => interpolate(scatterSigmas, midi);
+const noteScatterSigma = (midi: number): number => interpolate(scatterSigmas, midi);
 
 /** Mean of ln B at a key for given bridge offsets; zeros give the published mean instrument. */
 export function meanLnB(midi: number, effects: Float64Array): number {

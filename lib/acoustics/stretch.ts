@@ -96,7 +96,7 @@ function checkedExactKeys(input: StretchInput, keys: NonNullable<StretchInput["k
  * The partial a tuner sets the note by: high in the bass, where the first is weak and pulled, the first in the treble.
  * Common practice, no source.
  */
-export function listenPartialOf(midi: number): number {
+function listenPartialOf(midi: number): number {
   if (midi < 36) return 6;
   if (midi < 48) return 4;
   return midi < 72 ? 2 : 1;

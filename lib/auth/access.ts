@@ -42,8 +42,6 @@ const table = {
 
 export type Permission = keyof typeof table;
 
-export const permissions = Object.keys(table) as Permission[];
-
 export function scopeOf(role: Role, permission: Permission): Scope {
   return table[permission][roles.indexOf(role)] ?? "none";
 }

@@ -4,7 +4,7 @@ import { AppError, invalid } from "@/lib/errors";
 type Names = { password?: string; currentPassword?: string };
 
 /** The sign-in library's refusals in our words, at the field they belong to. What is not expected is thrown on. */
-export function asRefusal(error: unknown, names: Names = {}): unknown {
+function asRefusal(error: unknown, names: Names = {}): unknown {
   if (!isAPIError(error)) return error;
   const code = error.body?.code ?? "";
   const message = error.body?.message ?? "";

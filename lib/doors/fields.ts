@@ -1,7 +1,7 @@
 import type { z } from "zod";
 import { AppError, type FieldErrors } from "@/lib/errors";
 
-export function fieldErrorsOf(error: z.ZodError): FieldErrors {
+function fieldErrorsOf(error: z.ZodError): FieldErrors {
   const fields: FieldErrors = {};
   for (const issue of error.issues) {
     const path = issue.path.map(String).join(".") || "_";

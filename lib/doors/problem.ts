@@ -45,7 +45,7 @@ export function asAppError(error: unknown): AppError {
   );
 }
 
-export function problemOf(error: AppError): Problem {
+function problemOf(error: AppError): Problem {
   const { fields, current } = error.more;
   return {
     type: `/problems/${error.code}`,

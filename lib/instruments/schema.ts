@@ -16,7 +16,7 @@ const offset = z
   .max(100, "Between −100 and 100 cents.");
 
 /** A named temperament, or twelve offsets in cents from equal, C to B. */
-export const temperament = z.union(
+const temperament = z.union(
   [z.enum(TEMPERAMENT_NAMES), z.array(offset).length(12, "Give twelve offsets, C to B.")],
   "Choose a temperament, or give twelve offsets between −100 and 100 cents.",
 );

@@ -3,11 +3,11 @@ import { passwordFault } from "@/lib/auth/passwords";
 import { requiredText } from "@/lib/clean-text";
 import { country, locale, shopName, timeZone } from "@/lib/shop/schema";
 
-export const personName = requiredText(120, "Give your name.").regex(
+const personName = requiredText(120, "Give your name.").regex(
   /^[^\p{Cc}\p{Cf}]*$/u,
   "Write your name on one line.",
 );
-export const address = z
+const address = z
   .string()
   .trim()
   .toLowerCase()
@@ -43,7 +43,7 @@ export const openShopInput = z.object({
   timeZone,
   locale,
 });
-export const signUpInput = openShopInput.extend({
+const signUpInput = openShopInput.extend({
   name: personName,
   email: address,
   password: passwordAlone,

@@ -3,14 +3,14 @@ import { TEMPERAMENT_NAMES } from "@/lib/acoustics";
 import type { Observation } from "@/lib/acoustics/types";
 import { requiredText } from "@/lib/clean-text";
 
-export const temperament = z.union([
+const temperament = z.union([
   z.enum(TEMPERAMENT_NAMES),
   z.array(z.number().min(-100).max(100)).length(12, "Twelve offsets in cents, from C to B."),
 ]);
 
 const weight = z.number().min(0, "A weight is not below zero.").max(100, "At most 100.");
 
-export const registerRule = z
+const registerRule = z
   .object({
     lowerPartial: z.int().min(1).max(32),
     upperPartial: z.int().min(1).max(32),

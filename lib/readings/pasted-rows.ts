@@ -4,7 +4,7 @@ import { couldBeOne, decimalMarks, twoWaysFault, type Where } from "./separators
 import { isBlank, type ReadingUnit, readTyped, typedFault } from "./typed-number";
 
 /** One sheet holds one instrument; the server takes as many rows at once. */
-export const MOST_ROWS = 128;
+const MOST_ROWS = 128;
 const MOST_PARTIAL = 64;
 /** So many faults are named; the rest are counted. */
 const MOST_FAULTS = 8;

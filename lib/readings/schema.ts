@@ -43,7 +43,7 @@ const hertz = z
   .positive("A frequency is above zero.")
   .max(100_000, "Above 100 kHz: check the unit.");
 
-export const readingInput = z
+const readingInput = z
   .object({
     partial: z.int("A whole number from 1 to 64.").min(1, "From 1 to 64.").max(64, "From 1 to 64."),
     hz: hertz.optional(),
@@ -74,7 +74,7 @@ export const noteInput = z.object({
   version: z.int().nonnegative().optional(),
 });
 
-export const midiNumber = z.coerce.number().int().min(9).max(120);
+const midiNumber = z.coerce.number().int().min(9).max(120);
 
 export const noteParams = z.object({ id: z.uuid(), midi: midiNumber });
 
@@ -112,7 +112,7 @@ const fitWarning = z.enum([
   "scatter-exceeds-sigma",
 ]);
 
-export const fitRecord = z.object({
+const fitRecord = z.object({
   f1Hz: z.number(),
   f1SigmaCents: z.number(),
   b: z.number().nullable(),

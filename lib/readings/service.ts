@@ -46,7 +46,7 @@ function sheetRowOf(row: StoredSheet): SheetRow {
   };
 }
 
-export function noteRecordOf(row: NoteRow): NoteRecord {
+function noteRecordOf(row: NoteRow): NoteRecord {
   const { partials, hz, sigmaCents, string, fit, ...rest } = row;
   return {
     ...fit,

@@ -40,7 +40,7 @@ export const locales = [
   { value: "ja-JP", label: "2026年5月14日 · 1,234.5" },
 ] as const;
 
-export const defaultLocale = "en-GB";
+const defaultLocale = "en-GB";
 
 /** The nearest of our locales to what a browser asks for. */
 export function nearestLocale(wanted: string | undefined): string {

@@ -50,11 +50,11 @@ export function instrumentName({ maker, model }: { maker: string; model: string 
   return model ? `${maker} ${model}` : maker;
 }
 
-export function isOwn(actor: Actor, technicians: readonly Named[]): boolean {
+function isOwn(actor: Actor, technicians: readonly Named[]): boolean {
   return technicians.some(({ id }) => id === actor.memberId);
 }
 
-export function mayChange(actor: Actor, technicians: readonly Named[]): boolean {
+function mayChange(actor: Actor, technicians: readonly Named[]): boolean {
   const scope = scopeOf(actor.role, "visits.change");
   return scope === "all" || (scope === "own" && isOwn(actor, technicians));
 }

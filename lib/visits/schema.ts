@@ -6,7 +6,7 @@ import { listOf } from "@/lib/pages/list-query";
 import { isWallTime, parseOffsetTime } from "@/lib/wall-time";
 import { visitStates } from "./rules";
 
-export const visitState = z.enum(visitStates);
+const visitState = z.enum(visitStates);
 
 const day = z.string().refine(isDay, "Write a day like 2026-05-14.");
 
@@ -111,7 +111,7 @@ export const cancelQuery = z.object({
 
 const named = z.object({ id: z.uuid(), name: z.string() });
 
-export const stageOfSheet = z.enum(["as-found", "after-raise", "as-left"]);
+const stageOfSheet = z.enum(["as-found", "after-raise", "as-left"]);
 
 export const visitJob = z.object({
   id: z.uuid(),

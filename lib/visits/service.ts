@@ -181,7 +181,7 @@ export function notAmongThem(): AppError {
 }
 
 /** A job's id made by the client may be another job's already. */
-export async function withIdInUse<T>(write: () => Promise<T>): Promise<T> {
+async function withIdInUse<T>(write: () => Promise<T>): Promise<T> {
   try {
     return await write();
   } catch (error) {

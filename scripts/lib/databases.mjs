@@ -2,7 +2,7 @@ import { childEnvironment } from "./environment.mjs";
 import { runScript } from "./processes.mjs";
 import { inProject } from "./project.mjs";
 
-export const ownerRole = "agraffe_owner";
+const ownerRole = "agraffe_owner";
 export const appRole = "agraffe_app";
 export const authRole = "agraffe_auth";
 

@@ -70,7 +70,7 @@ export function installPostgres(report) {
   });
 }
 
-export const chromiumPath = "/usr/bin/chromium";
+const chromiumPath = "/usr/bin/chromium";
 
 export async function ensureChromium(report) {
   if (fs.existsSync(chromiumPath)) return "already installed";

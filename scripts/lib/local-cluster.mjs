@@ -7,7 +7,7 @@ import { localFolder, projectHash, projectRoot } from "./project.mjs";
 import { keepSecrets } from "./secrets.mjs";
 
 /** Inside the project, or, where PostgreSQL's user cannot get in, one folder per project elsewhere. */
-export function possibleHomes() {
+function possibleHomes() {
   return [
     path.join(localFolder, "cluster"),
     path.join("/var/lib", `agraffe-${path.basename(projectRoot)}-${projectHash}`),

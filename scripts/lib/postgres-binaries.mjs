@@ -7,7 +7,7 @@ const debianFolder = "/usr/lib/postgresql";
 const needed = ["initdb", "postgres", "psql"];
 
 /** The server versions installed here, newest first. They are not on the PATH. */
-export function installedVersions(folder = debianFolder) {
+function installedVersions(folder = debianFolder) {
   if (!fs.existsSync(folder)) return [];
   return fs
     .readdirSync(folder)

@@ -8,7 +8,7 @@ import { clearLeftovers } from "./postgres-leftovers.mjs";
 import { CommandFailed, Problem } from "./problem.mjs";
 import { launch, run } from "./processes.mjs";
 
-export const superuser = "postgres";
+const superuser = "postgres";
 
 const readyWithinMs = 120_000;
 const portAttempts = 5;

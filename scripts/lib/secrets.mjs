@@ -5,7 +5,7 @@ import { Problem } from "./problem.mjs";
 
 const names = ["superuser", "owner", "app", "auth", "authSecret"];
 
-export function newSecret() {
+function newSecret() {
   return randomBytes(32).toString("base64url");
 }
 

@@ -18,7 +18,7 @@ function filesUnder(root, folder) {
 }
 
 /** Everything `next build` reads, whether git knows it yet or not. */
-export function buildSources(root) {
+function buildSources(root) {
   const files = sourceFolders
     .filter((folder) => fs.existsSync(path.join(root, folder)))
     .flatMap((folder) => filesUnder(root, folder));

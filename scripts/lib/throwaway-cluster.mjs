@@ -15,7 +15,7 @@ export const templateDatabase = "agraffe_template";
 const firstPort = 5500;
 
 /** Removes what test runs left behind that were killed before they could tidy up. */
-export async function sweepThrowAways() {
+async function sweepThrowAways() {
   let swept = 0;
   for (const parent of temporaryFolders()) {
     for (const name of fs.readdirSync(parent).filter((entry) => entry.startsWith(prefix))) {

@@ -5,7 +5,7 @@ import { makers, models, streets, towns } from "@/db/seed/names";
  * time would have written them, the shops in turn: a shop's rows lie scattered over the whole table, which is
  * the hardest case for reading one shop.
  */
-export const size = {
+const size = {
   shops: 20,
   customers: 2_000,
   sites: 2_500,

@@ -2,7 +2,7 @@ import { z } from "zod";
 import { kinds } from "@/lib/instruments/rules";
 import { listOf } from "@/lib/pages/list-query";
 
-export const dueStates = ["due", "overdue", "booked", "declined", "resting", "later"] as const;
+const dueStates = ["due", "overdue", "booked", "declined", "resting", "later"] as const;
 
 export const dueQuery = z.object({
   q: z.string().trim().max(200).optional(),

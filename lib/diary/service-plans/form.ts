@@ -97,7 +97,7 @@ export function formOf(instrumentId: string, plan: ServicePlanRecord | null): Se
   };
 }
 
-export function minutesOf(text: string): number | null {
+function minutesOf(text: string): number | null {
   const [, hours, minutes] = /^([01]\d|2[0-3]):([0-5]\d)$/.exec(text) ?? [];
   return hours && minutes ? 60 * Number(hours) + Number(minutes) : null;
 }
