@@ -1,5 +1,5 @@
 import type { NoteRecord } from "@/lib/readings/schema";
-import { type ReadingUnit } from "@/lib/readings/typed-number";
+import type { ReadingUnit } from "@/lib/readings/typed-number";
 import {
   afterFailure,
   afterRemoval,

@@ -5,7 +5,8 @@ import type { Route } from "next";
 import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
-import { type Archivable, type ArchiveAction, useArchive } from "./use-archive";
+import type { Archivable } from "./open-visits-dialog";
+import { type ArchiveAction, useArchive } from "./use-archive";
 
 /** Takes one record out of the lists, or puts it back. */
 export function ArchiveButton({

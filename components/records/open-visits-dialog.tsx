@@ -5,7 +5,10 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { dayWithYear, hoursOf } from "@/components/visits/time-words";
 import { VisitStateWord } from "@/components/visits/visit-state";
-import type { Asked } from "./use-archive";
+import type { OpenVisits } from "@/lib/visits/open/schema";
+
+export type Archivable = { id: string; name: string; version: number; archivedAt: string | null };
+export type Asked = { record: Archivable; open: OpenVisits };
 
 /** Asked before records are archived whose visits are not over yet: which they are, and whether to go on. */
 export function OpenVisitsDialog({

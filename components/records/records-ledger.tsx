@@ -10,7 +10,8 @@ import { EmptyState } from "@/components/ui/states";
 import { fetchJson } from "@/lib/client/fetch-json";
 import { apiQuery } from "@/lib/pages/ledger-request";
 import type { ListPage } from "@/lib/pages/list-query";
-import { type Archivable, type ArchiveAction, useArchive } from "./use-archive";
+import type { Archivable } from "./open-visits-dialog";
+import { type ArchiveAction, useArchive } from "./use-archive";
 
 export type RecordClock = { locale: string; timeZone: string };
 

@@ -4,12 +4,10 @@ import { type QueryKey, useQueryClient } from "@tanstack/react-query";
 import { type ReactNode, useState } from "react";
 import { showMessage, toastWithUndo } from "@/components/ui/message-queue";
 import type { ActionResult } from "@/lib/doors/action-result";
-import { type OpenVisits, openVisits } from "@/lib/visits/open/schema";
-import { OpenVisitsDialog } from "./open-visits-dialog";
+import { openVisits } from "@/lib/visits/open/schema";
+import { type Archivable, type Asked, OpenVisitsDialog } from "./open-visits-dialog";
 
-export type Archivable = { id: string; name: string; version: number; archivedAt: string | null };
 export type ArchiveAction = (input: unknown) => Promise<ActionResult<Archivable>>;
-export type Asked = { record: Archivable; open: OpenVisits };
 
 /**
  * Takes records out of the lists or puts them back, one after another: done at once and undone from the message.
