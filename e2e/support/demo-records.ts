@@ -11,7 +11,7 @@ export async function demoRecords(request: APIRequestContext) {
     instrumentId,
     siteId,
     customerId: ownerId,
-    sheetId: await firstId(request, `/api/v1/instruments/${instrumentId}/sheets`),
+    sheetId: await fullestSheet(request, instrumentId),
     visitId: await firstId(request, "/api/v1/visits", { instrumentId }),
     styleId: await firstId(request, "/api/v1/styles"),
     /** Of the customer who signs in. */
@@ -22,6 +22,15 @@ export async function demoRecords(request: APIRequestContext) {
 }
 
 export type DemoRecords = Awaited<ReturnType<typeof demoRecords>>;
+
+/** Other tests begin sheets of this instrument too; the demo's own have the most notes. */
+async function fullestSheet(request: APIRequestContext, instrumentId: string) {
+  const answer = await request.get(`/api/v1/instruments/${instrumentId}/sheets`, { params: { most: 100 } });
+  const { items } = (await answer.json()) as { items: { id: string; notesRead: number }[] };
+  const [fullest] = items.toSorted((one, other) => other.notesRead - one.notesRead);
+  if (!fullest) throw new Error("The demo's instrument has no sheet");
+  return fullest.id;
+}
 
 async function firstId(request: APIRequestContext, path: string, params: Record<string, string> = {}) {
   const answer = await request.get(path, { params });

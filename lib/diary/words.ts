@@ -1,15 +1,11 @@
 import { type Day, showDay } from "@/lib/dates";
 import type { ServicePlanRecord } from "./service-plans/schema";
 
-/** "2–20 Nov 2026": from one day to another, as the locale joins them. */
+/** "2 Nov – 20 Nov 2026". Not the locale's own way of ranges: server and browser know different ones. */
 export function showWindow({ from, until }: { from: Day; until: Day }, locale: string): string {
-  const format = new Intl.DateTimeFormat(locale, {
-    day: "numeric",
-    month: "short",
-    year: "numeric",
-    timeZone: "UTC",
-  });
-  return format.formatRange(new Date(`${from}T00:00:00Z`), new Date(`${until}T00:00:00Z`));
+  if (from.slice(0, 4) !== until.slice(0, 4)) return `${showDay(from, locale)} – ${showDay(until, locale)}`;
+  const short = new Intl.DateTimeFormat(locale, { day: "numeric", month: "short", timeZone: "UTC" });
+  return `${short.format(new Date(`${from}T00:00:00Z`))} – ${showDay(until, locale)}`;
 }
 
 /** "every 6 months", "in April and October", "2 days before each event". */
