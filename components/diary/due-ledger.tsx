@@ -71,7 +71,7 @@ export function DueLedger({
         header: "Where",
         cell: (row) => [row.site, row.city].filter(Boolean).join(", "),
         sortable: true,
-        width: 216,
+        width: 200,
         phone: "line",
       },
       {
@@ -84,7 +84,7 @@ export function DueLedger({
             <span className="text-ink-soft">no event to come</span>
           ),
         sortable: true,
-        width: 196,
+        width: 184,
         phone: "end",
       },
       {
@@ -152,7 +152,7 @@ export function DueLedger({
       queryKey={dueKeys.all}
       columns={columns}
       filters={filters}
-      searchLabel="Find an instrument, place or customer"
+      searchLabel="Find in the list"
       fetchPage={fetchPage}
       initialPage={asPage(first)}
       defaultSort={{ id: "due", descending: false }}

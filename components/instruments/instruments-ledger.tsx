@@ -28,7 +28,7 @@ const instruments: RecordList<InstrumentRow> = {
         </>
       ),
       sortable: true,
-      width: 190,
+      width: 248,
       phone: "line",
     },
     {
@@ -36,7 +36,7 @@ const instruments: RecordList<InstrumentRow> = {
       header: "Owner",
       cell: (row) => row.ownerName,
       sortable: true,
-      width: 120,
+      width: 152,
       from: "xl",
       phone: "none",
     },
