@@ -19,10 +19,8 @@ import { type InstrumentChoice, WorkChoice } from "./work-choice";
 
 type Plan = z.input<typeof visitPlan>;
 
-const lengths = [30, 45, 60, 75, 90, 120, 150, 180, 240, 300, 360, 480].map((minutes) => ({
-  value: String(minutes),
-  label: durationWords(minutes),
-}));
+const lengths = [30, 45, 60, 75, 90, 120, 150, 180, 240, 300, 360, 480, 600, 720];
+const lengthOptions = lengths.map((minutes) => ({ value: String(minutes), label: durationWords(minutes) }));
 
 export function NewVisitForm({
   visitId,
@@ -39,25 +37,31 @@ export function NewVisitForm({
   site: { id: string; name: string; timeZone: string };
   instruments: readonly InstrumentChoice[];
   technicians: readonly { id: string; name: string }[];
-  chosen: { date: string; instrumentIds: readonly string[] };
+  chosen: {
+    date: string;
+    instrumentIds: readonly string[];
+    /** As the instrument's service plan has it. */
+    habit?: { technicianId: string | null; time: string | null; minutes: number; work: string } | undefined;
+  };
   /** Set where this person may book own visits only. */
   ownId?: string | undefined;
   locale: string;
   action: (input: unknown) => Promise<ActionResult<{ id: string }>>;
 }) {
   const router = useRouter();
-  const onlyOne = technicians.length === 1 ? technicians.map(({ id }) => id) : [];
+  const { habit } = chosen;
+  const expected = technicians.filter(({ id }) => technicians.length === 1 || id === habit?.technicianId);
   const state = useActionForm<Plan, { id: string }>({
     schema: visitPlan,
     action,
     defaultValues: {
       id: visitId,
       siteId: site.id,
-      technicianIds: ownId ? [ownId] : onlyOne,
+      technicianIds: ownId ? [ownId] : expected.map(({ id }) => id),
       date: chosen.date,
-      time: "09:00",
-      minutes: 90,
-      jobs: chosen.instrumentIds.map((instrumentId) => ({ instrumentId, work: "Tuning" })),
+      time: habit?.time ?? "09:00",
+      minutes: lengths.find((minutes) => minutes >= (habit?.minutes ?? 90)) ?? 90,
+      jobs: chosen.instrumentIds.map((instrumentId) => ({ instrumentId, work: habit?.work ?? "Tuning" })),
       state: "offered",
       notes: "",
     },
@@ -94,7 +98,7 @@ export function NewVisitForm({
           {...state.field("date")}
         />
         <TextInput label="Starts" type="time" {...state.field("time")} />
-        <Select label="Length" options={lengths} {...state.numberField("minutes")} />
+        <Select label="Length" options={lengthOptions} {...state.numberField("minutes")} />
       </div>
       <AskAgain
         state={state}

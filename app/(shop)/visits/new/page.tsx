@@ -8,6 +8,8 @@ import { NewVisitForm } from "@/components/visits/new-visit-form";
 import { SitePicker } from "@/components/visits/site-picker";
 import { may, scopeOf } from "@/lib/auth/access";
 import { isDay } from "@/lib/dates";
+import { clockOf } from "@/lib/diary/service-plans/form";
+import { getServicePlan } from "@/lib/diary/service-plans/service";
 import { idParams } from "@/lib/doors/params";
 import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
@@ -45,6 +47,7 @@ async function Book({ asked }: { asked: Asked }) {
   const { site, instruments, technicians } = await choicesAt(asked.site);
   const only = instruments.length === 1 ? instruments.map(({ id }) => id) : [];
   const named = instruments.filter(({ id }) => id === asked.instrument).map(({ id }) => id);
+  const plan = named[0] ? await getServicePlan(actor, named[0]) : null;
   return (
     <>
       <WorkHead
@@ -66,6 +69,14 @@ async function Book({ asked }: { asked: Asked }) {
         chosen={{
           date: isDay(asked.date) ? asked.date : site.today,
           instrumentIds: named.length > 0 ? named : only,
+          habit: plan
+            ? {
+                technicianId: plan.technicianId,
+                time: plan.hours && clockOf(plan.hours.from),
+                minutes: plan.workMinutes,
+                work: plan.work,
+              }
+            : undefined,
         }}
         ownId={scopeOf(actor.role, "visits.change") === "own" ? actor.memberId : undefined}
         locale={locale}
