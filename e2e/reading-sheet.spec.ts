@@ -211,7 +211,7 @@ test("a far frequency is asked about, never dropped, and saved once it is confir
   await expect(cell("A3", 5)).toHaveAttribute("aria-invalid", "true");
   await expect(kept(page)).toContainText("1 note not saved yet");
 
-  await page.getByRole("button", { name: "Keep as typed" }).click();
+  await page.getByRole("button", { name: "It is as typed" }).click();
   await expect(kept(page)).toContainText(/saved \d/);
   await page.reload();
   await comesAlive(page);

@@ -81,7 +81,7 @@ test.describe("a stretch plan's address", () => {
     await expect(page.getByText(/^Wide, equal temperament/)).toHaveCount(0);
 
     await page.goto(`${at}?style=close&temperament=vallotti&referenceHz=415`);
-    await expect(page.getByText(/^Close, vallotti temperament/)).toBeVisible();
+    await expect(page.getByText(/^Close, Vallotti temperament/)).toBeVisible();
     await expect(pitch).toHaveValue("415");
   });
 

@@ -17,6 +17,10 @@ describe("dates", () => {
     expect(dayOf("2026-05-14T23:30:00Z", "America/New_York")).toBe("2026-05-14");
   });
 
+  it("take a year of another age for a slip", () => {
+    expect(["9999-01-01", "0206-05-14", "2026-05-14"].map(isDay)).toEqual([false, false, true]);
+  });
+
   it("keeps the day on both sides of a clock change", () => {
     expect(dayOf("2026-03-28T23:59:59Z", "Europe/London")).toBe("2026-03-28");
     expect(dayOf("2026-03-29T23:30:00Z", "Europe/London")).toBe("2026-03-30");

@@ -7,7 +7,8 @@ import { format, formatISO, isValid, parseISO } from "date-fns";
  */
 export type Day = string;
 
-const dayPattern = /^\d{4}-\d{2}-\d{2}$/;
+/** Years from 1900 to 2199: another is a slip of the finger. */
+const dayPattern = /^(?:19|2[01])\d{2}-\d{2}-\d{2}$/;
 
 export function isDay(text: string): boolean {
   return dayPattern.test(text) && isValid(parseISO(text)) && formatISO(parseISO(text)).startsWith(text);

@@ -7,8 +7,8 @@ export type Fold = 0 | 1;
 
 export type OffsetTime = { wall: WallTime; offsetMinutes: number };
 
-const pattern = /^(\d{4}-\d{2}-\d{2})T(\d{2}:\d{2})(?::00(?:\.0+)?)?(Z|[+-]\d{2}:\d{2})$/i;
-const wallPattern = /^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}$/;
+const pattern = /^((?:19|2[01])\d{2}-\d{2}-\d{2})T(\d{2}:\d{2})(?::00(?:\.0+)?)?(Z|[+-]\d{2}:\d{2})$/i;
+const wallPattern = /^(?:19|2[01])\d{2}-\d{2}-\d{2}T\d{2}:\d{2}$/;
 const minute = 60_000;
 const day = 24 * 60 * minute;
 

@@ -57,21 +57,16 @@ export function DueLedger({
       {
         id: "name",
         header: "Instrument",
-        cell: (row) => (
-          <>
-            {row.instrument}
-            {row.room ? <span className="font-normal text-ink-soft">, {row.room}</span> : null}
-          </>
-        ),
+        cell: (row) => row.instrument,
         sortable: true,
         phone: "title",
       },
       {
         id: "place",
         header: "Where",
-        cell: (row) => [row.site, row.city].filter(Boolean).join(", "),
+        cell: (row) => [row.room, row.site, row.city].filter(Boolean).join(", "),
         sortable: true,
-        width: 200,
+        width: 264,
         phone: "line",
       },
       {

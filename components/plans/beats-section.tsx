@@ -23,7 +23,7 @@ export function BeatsSection({ analysis }: { analysis: AnalysisRecord }) {
         Beats per second where the partials coincide: + wide, − narrow. From the plan and the B of each key;
         of a note that does not belong, the B its neighbours foretell.
       </p>
-      <Evenness evenness={analysis.evenness} />
+      <Evenness evenness={analysis.evenness} meant={analysis.temperament !== "equal"} />
       <Select
         label="Interval"
         className="mt-4 w-full sm:w-72"
@@ -59,7 +59,14 @@ const risingWords: Record<string, string> = {
   "major-tenth": "Major tenths",
 };
 
-function Evenness({ evenness }: { evenness: AnalysisRecord["evenness"] }) {
+function Evenness({
+  evenness,
+  meant,
+}: {
+  evenness: AnalysisRecord["evenness"];
+  /** The temperament itself has the keys beat differently. */
+  meant: boolean;
+}) {
   return (
     <ul className="mt-3 grid gap-1" aria-label="Evenness over the temperament octaves, by the lower key">
       {evenness.intervals.map(({ name, roughness, reversals, rates }) => {
@@ -68,11 +75,12 @@ function Evenness({ evenness }: { evenness: AnalysisRecord["evenness"] }) {
         const last = rates.at(-1);
         return (
           <li key={name} className="flex flex-wrap items-baseline gap-x-2">
-            <StateWord kind={uneven ? "partial" : "done"} wrap>
+            <StateWord kind={!uneven ? "done" : meant ? "draft" : "partial"} wrap>
               {risingWords[name] ?? name} {uneven ? "rise unevenly" : "rise evenly"}
               {first && last ? (
                 <SharpText text={` from ${noteText(first.lowerMidi)} to ${noteText(last.lowerMidi)}`} />
               ) : null}
+              {uneven && meant ? ", as this temperament means them to" : null}
             </StateWord>
             <span className="text-ink-soft">
               {first && last

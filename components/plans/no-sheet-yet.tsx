@@ -17,7 +17,7 @@ export function NoSheetYet({ instrumentId, canBegin }: { instrumentId: string; c
         }
       >
         {canBegin
-          ? "Read A4 first, then one note near each end of both bridges. Three partials of a note are enough for a first B."
+          ? "The sheet names the note that tells most, one after another. Three partials of a note are enough for a first B."
           : "A technician reads the first notes; then the curve of all keys stands here."}
       </EmptyState>
     </>

@@ -84,8 +84,9 @@ export function StretchView(props: Props) {
         title="Stretch plan"
         summary={
           <>
-            {analysis.style.name}, {temperamentName(analysis.temperament).toLowerCase()} temperament, from{" "}
-            {sheet.words}. <SharpText text={adviceSentence(analysis)} />
+            {analysis.style.name},{" "}
+            {analysis.temperament === "equal" ? "equal" : temperamentName(analysis.temperament)} temperament,
+            from {sheet.words}. <SharpText text={adviceSentence(analysis)} />
           </>
         }
         actions={<span className="contents max-lg:hidden">{saveButton}</span>}

@@ -1,12 +1,12 @@
 import type { KeptDraft } from "./sheet-answers";
 
-/** What is typed and not yet saved, kept in the tab so that a reload loses nothing. */
+/** What is typed and not yet saved, kept on the device so that neither a reload nor a closed tab loses it. */
 const nameOf = (sheetId: string) => `agraffe:sheet:${sheetId}`;
 
 export function keepDrafts(sheetId: string, drafts: readonly KeptDraft[]): void {
   try {
-    if (drafts.length === 0) sessionStorage.removeItem(nameOf(sheetId));
-    else sessionStorage.setItem(nameOf(sheetId), JSON.stringify(drafts));
+    if (drafts.length === 0) localStorage.removeItem(nameOf(sheetId));
+    else localStorage.setItem(nameOf(sheetId), JSON.stringify(drafts));
   } catch {
     // Storage may be full or forbidden; the page itself still holds everything.
   }
@@ -14,7 +14,7 @@ export function keepDrafts(sheetId: string, drafts: readonly KeptDraft[]): void 
 
 export function readKeptDrafts(sheetId: string): KeptDraft[] {
   try {
-    const kept: unknown = JSON.parse(sessionStorage.getItem(nameOf(sheetId)) ?? "[]");
+    const kept: unknown = JSON.parse(localStorage.getItem(nameOf(sheetId)) ?? "[]");
     return Array.isArray(kept) ? kept.filter(isDraft) : [];
   } catch {
     return [];

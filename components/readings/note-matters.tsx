@@ -121,7 +121,7 @@ export function PartialMatter({
         actions={
           isNumber && canChange ? (
             <Button size={big ? "normal" : "small"} onClick={() => actions.confirm(key, partial)}>
-              Keep as typed
+              It is as typed
             </Button>
           ) : null
         }
@@ -135,11 +135,11 @@ export function PartialMatter({
       <Matter
         big={big}
         what={what}
-        why={`${why} Correct it, or keep it.`}
+        why={`${why} Correct it, or say that it is so.`}
         actions={
           canChange ? (
             <Button size={big ? "normal" : "small"} onClick={() => actions.confirm(key, partial)}>
-              Keep as typed
+              It is as typed
             </Button>
           ) : null
         }

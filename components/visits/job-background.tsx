@@ -31,7 +31,8 @@ export function JobBackground({
               date: entry.visitId ? (
                 <AppLink
                   href={`/visits/${entry.visitId}`}
-                  className="hover:underline touch:inline-flex touch:min-h-11 touch:items-center"
+                  // Its room to press lies around the words and moves nothing.
+                  className="relative hover:underline touch:after:absolute touch:after:-top-3.5 touch:after:left-0 touch:after:h-11 touch:after:w-24 touch:after:content-['']"
                 >
                   {showDay(entry.day, locale)}
                 </AppLink>

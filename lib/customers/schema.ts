@@ -2,6 +2,7 @@ import { z } from "zod";
 import { requiredText } from "@/lib/clean-text";
 import { optionalText } from "@/lib/optional-text";
 import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
+import { versionSeen } from "@/lib/version";
 
 export const customerFields = z.object({
   kind: z.enum(["person", "organisation"]).optional(),
@@ -28,7 +29,7 @@ export const newCustomer = customerFields.extend({ id: z.uuid().optional() });
 export const customerChange = customerFields.partial().extend(recordChange);
 
 /** What the form holds: a new record has no version yet. */
-export const customerForm = customerFields.extend({ id: z.uuid(), version: z.int().positive().optional() });
+export const customerForm = customerFields.extend({ id: z.uuid(), version: versionSeen.optional() });
 
 export const customerRecord = z.object({
   id: z.uuid(),

@@ -25,6 +25,12 @@ describe("input at a door", () => {
     expect(faultsOf({ name: "A", hz: 500 })).toEqual({ hz: "Not above 480." });
   });
 
+  it("refuses what is nested too deeply to be read, instead of failing", () => {
+    let nested: unknown = "end";
+    for (let depth = 0; depth < 20_000; depth += 1) nested = [nested];
+    expect(() => parseInput(schema, nested)).toThrow("nested too deeply");
+  });
+
   it("refuses the character that no text of the database can hold, wherever it stands", () => {
     expect(faultsOf({ name: "A\0B", hz: 440 })).toHaveProperty("name");
     expect(faultsOf({ name: "A", hz: 440, parts: [{ text: "fine" }, { text: "\0" }] })).toHaveProperty([

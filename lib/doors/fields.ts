@@ -46,8 +46,17 @@ function nulPath(input: unknown, path: string): string | null {
 }
 
 /** Input parsed by its schema, or an `invalid` error that names each field. */
+function unkeepablePath(input: unknown): string | null {
+  try {
+    return nulPath(input, "");
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error;
+    throw new AppError("malformed", "This is nested too deeply to be read.");
+  }
+}
+
 export function parseInput<Schema extends z.ZodType>(schema: Schema, input: unknown): z.output<Schema> {
-  const unkeepable = nulPath(input, "");
+  const unkeepable = unkeepablePath(input);
   if (unkeepable) {
     throw new AppError("invalid", "One field needs another look.", {
       fields: { [unkeepable]: "Holds a character that cannot be kept. Type it again." },

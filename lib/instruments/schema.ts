@@ -4,6 +4,7 @@ import { requiredText } from "@/lib/clean-text";
 import { isDay } from "@/lib/dates";
 import { optionalText, plainText } from "@/lib/optional-text";
 import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
+import { versionInAddress, versionOrNone, versionSeen } from "@/lib/version";
 import { kinds, stringFaults } from "./rules";
 
 const key = (message: string) => z.int(message).min(9, message).max(120, message);
@@ -61,17 +62,17 @@ export const newInstrument = instrumentFields.extend({ ...holdingFields.shape, i
 export const instrumentChange = instrumentFields.partial().extend(recordChange);
 
 /** What the form of an old record holds. */
-export const instrumentForm = instrumentFields.extend({ id: z.uuid(), version: z.int().positive() });
+export const instrumentForm = instrumentFields.extend({ id: z.uuid(), version: versionSeen });
 
 /** Moved or sold: closes the present place on that day and opens another. */
 export const newHolding = holdingFields.extend({
   id: z.uuid().optional(),
   /** The instrument's version. */
-  version: z.int().positive(),
+  version: versionSeen,
 });
 
 /** A slip in the present place put right; history is not rewritten. */
-export const holdingChange = holdingFields.partial().extend({ version: z.int().positive() });
+export const holdingChange = holdingFields.partial().extend({ version: versionSeen });
 
 /** What the form of a move or of a correction holds. */
 export const placeForm = newHolding.extend({ instrumentId: z.uuid() });
@@ -161,7 +162,7 @@ const stringShape = z.object({
 export const stringInput = stringShape
   .extend({
     /** The version that was changed, 0 where there was none; left out, it is written whatever is there. */
-    version: z.int().nonnegative().optional(),
+    version: versionOrNone.optional(),
   })
   .superRefine((row, context) => {
     for (const [path, message] of Object.entries(stringFaults(row))) {
@@ -172,7 +173,7 @@ export const stringInput = stringShape
 export const stringRecord = stringShape.required().extend({ midi: z.int(), version: z.int() });
 export const stringList = z.object({ items: z.array(stringRecord), next: z.null() });
 export const stringParams = z.object({ id: z.uuid(), midi: z.coerce.number().int().min(9).max(120) });
-export const stringQuery = z.object({ version: z.coerce.number().int().positive().optional() });
+export const stringQuery = z.object({ version: versionInAddress.optional() });
 /** What a stale scale carries: the notes somebody else changed, as they are now; those taken away are not among them. */
 export const changedStrings = z.object({ midis: z.array(z.int()), items: z.array(stringRecord) });
 /** A pasted scale: all of it is saved or none. */

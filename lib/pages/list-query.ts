@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { versionSeen } from "@/lib/version";
 
 /** What every list takes in its address: words to find, sorting, a page. Shared by client and server. */
 export function listQuery<const Sorts extends readonly [string, ...string[]]>(sorts: Sorts) {
@@ -18,7 +19,7 @@ export function listOf<Item extends z.ZodType>(item: Item) {
 
 /** What a change of a customer, a site or an instrument says beside its fields. */
 export const recordChange = {
-  version: z.int().positive(),
+  version: versionSeen,
   archived: z.boolean().optional(),
   /** Archives although visits are not over yet. */
   confirm: z.boolean().optional(),

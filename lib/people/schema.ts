@@ -2,6 +2,7 @@ import { z } from "zod";
 import { passwordFault } from "@/lib/auth/passwords";
 import { requiredText } from "@/lib/clean-text";
 import { country, locale, shopName, timeZone } from "@/lib/shop/schema";
+import { versionSeen } from "@/lib/version";
 
 const personName = requiredText(120, "Give your name.").regex(
   /^[^\p{Cc}\p{Cf}]*$/u,
@@ -83,11 +84,11 @@ export const acceptInput = z.object({ token: z.string().min(1).max(200) });
 
 export const memberChange = z.object({
   id: z.uuid(),
-  version: z.int().positive(),
+  version: versionSeen,
   role: staffRole.optional(),
   bookable: z.boolean().optional(),
 });
-export const memberEnd = z.object({ id: z.uuid(), version: z.int().positive() });
+export const memberEnd = z.object({ id: z.uuid(), version: versionSeen });
 
 export const nameInput = z.object({ name: personName });
 export const passwordChange = z.object({ currentPassword, newPassword });

@@ -3,7 +3,7 @@ import { may } from "@/lib/auth/access";
 import type { Actor } from "@/lib/auth/actor";
 import type { SheetRow } from "@/lib/readings/schema";
 import { findSheets, getSheet } from "@/lib/readings/service";
-import { sheetName } from "@/lib/readings/stage-words";
+import { sheetNames } from "@/lib/readings/stage-words";
 import { shopClock } from "@/lib/shop-clock/service";
 
 /** What the pages about one instrument's sheets share: the sheets to choose from and the one in hand. */
@@ -12,7 +12,7 @@ export async function sheetInHand(actor: Actor, instrumentId: string, wanted: st
   const { items } = await findSheets(actor, instrumentId, { most: 100, archived: "hide" });
   const read = items.filter((sheet) => sheet.notesRead > 0);
   const chosen = items.find((sheet) => sheet.id === wanted) ?? fullest(read) ?? items[0] ?? null;
-  const name = (sheet: SheetRow) => sheetName(sheet, clock.locale, clock.timeZone);
+  const name = sheetNames(items, clock.locale, clock.timeZone);
   const canRead =
     chosen !== null && may(actor.role, "sheets.change") && (await getSheet(actor, chosen.id)).canChange;
   return {

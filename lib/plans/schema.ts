@@ -2,6 +2,7 @@ import { z } from "zod";
 import { TEMPERAMENT_NAMES } from "@/lib/acoustics";
 import type { Observation } from "@/lib/acoustics/types";
 import { requiredText } from "@/lib/clean-text";
+import { versionSeen } from "@/lib/version";
 
 const temperament = z.union([
   z.enum(TEMPERAMENT_NAMES),
@@ -44,7 +45,7 @@ export const styleFields = registerStyle.extend({
 });
 export const newStyle = styleFields.extend({ id: z.uuid().optional() });
 export const styleChange = styleFields.partial().extend({
-  version: z.int().positive(),
+  version: versionSeen,
   archived: z.boolean().optional(),
 });
 

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { versionInAddress, versionOrNone, versionSeen } from "@/lib/version";
 
 export const stages = ["as-found", "after-raise", "as-left"] as const;
 
@@ -25,7 +26,7 @@ export const newSheet = z.object({
 });
 
 export const sheetChange = z.object({
-  version: z.int().positive(),
+  version: versionSeen,
   stage: z.enum(stages).optional(),
   takenAt: z.iso.datetime({ offset: true }).optional(),
   referenceHz: newSheet.shape.referenceHz.optional(),
@@ -71,7 +72,7 @@ export const noteInput = z.object({
   /** Partials that were asked about because they lie far from where they are expected, and are meant as typed. */
   confirmed: partialList.default([]),
   /** The version that was changed, 0 where there was no note; left out, the note is written whatever is there. */
-  version: z.int().nonnegative().optional(),
+  version: versionOrNone.optional(),
 });
 
 const midiNumber = z.coerce.number().int().min(9).max(120);
@@ -81,7 +82,7 @@ export const noteParams = z.object({ id: z.uuid(), midi: midiNumber });
 export const noteQuery = z.object({
   string: z.union([z.literal("all"), z.coerce.number().int().min(1).max(5)]).default("all"),
   take: z.coerce.number().int().min(1).max(99).default(1),
-  version: z.coerce.number().int().positive().optional(),
+  version: versionInAddress.optional(),
 });
 
 /** Whole rows, as pasted from a spreadsheet: all of them are saved or none. */

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { requiredText } from "@/lib/clean-text";
 import { isTimeZone } from "@/lib/dates";
+import { versionSeen } from "@/lib/version";
 import { countryCodes, currencyCodes, locales } from "./places";
 
 export const shopName = requiredText(120, "Give the shop a name.").regex(
@@ -28,7 +29,7 @@ export const shopFields = z.object({
   defaultStyle: z.string().min(1, "Choose a style.").max(60),
 });
 
-export const shopChange = shopFields.partial().extend({ version: z.int().positive() });
+export const shopChange = shopFields.partial().extend({ version: versionSeen });
 
 export const shopRecord = shopFields.extend({
   id: z.uuid(),

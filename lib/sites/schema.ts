@@ -3,6 +3,7 @@ import { requiredText } from "@/lib/clean-text";
 import { isTimeZone } from "@/lib/dates";
 import { optionalText, plainText } from "@/lib/optional-text";
 import { listOf, listQuery, recordChange } from "@/lib/pages/list-query";
+import { versionSeen } from "@/lib/version";
 
 const degrees = (most: number) =>
   z
@@ -37,7 +38,7 @@ export const newSite = siteFields.extend({ id: z.uuid().optional() });
 export const siteChange = siteFields.partial().extend(recordChange);
 
 /** What the form holds: a new record has no version yet. */
-export const siteForm = siteFields.extend({ id: z.uuid(), version: z.int().positive().optional() });
+export const siteForm = siteFields.extend({ id: z.uuid(), version: versionSeen.optional() });
 
 export const siteRecord = z.object({
   id: z.uuid(),

@@ -3,6 +3,7 @@ import { requiredText } from "@/lib/clean-text";
 import { isDay } from "@/lib/dates";
 import { optionalText } from "@/lib/optional-text";
 import { listOf } from "@/lib/pages/list-query";
+import { versionInAddress, versionSeen } from "@/lib/version";
 import { isWallTime, parseOffsetTime } from "@/lib/wall-time";
 import { visitStates } from "./rules";
 
@@ -71,7 +72,7 @@ export const visitPlan = newVisit
   });
 
 export const visitChange = z.object({
-  version: z.int().positive(),
+  version: versionSeen,
   technicianIds: technicianIds.optional(),
   start: offsetTime.optional(),
   end: offsetTime.optional(),
@@ -82,7 +83,7 @@ export const visitChange = z.object({
 export const visitTransition = z.object({
   to: visitState,
   reason: optionalText(500),
-  version: z.int().positive(),
+  version: versionSeen,
   /** For "moved": the successor's time, and its technicians where they change. */
   start: offsetTime.optional(),
   end: offsetTime.optional(),
@@ -93,7 +94,7 @@ export const visitTransition = z.object({
 
 /** The form that moves a visit: a new wall time of the same length. */
 export const visitMovePlan = z.object({
-  version: z.int().positive(),
+  version: versionSeen,
   reason: requiredText(500, "Say why the visit moves."),
   date: day,
   time: z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, "Write a time like 09:30."),
@@ -105,7 +106,7 @@ export const visitMovePlan = z.object({
 export const visitMove = visitMovePlan.extend({ id: z.uuid() });
 
 export const cancelQuery = z.object({
-  version: z.coerce.number().int().positive(),
+  version: versionInAddress,
   reason: optionalText(500),
 });
 

@@ -31,7 +31,7 @@ export default async function DuePage({ searchParams }: PageProps<"/due">) {
   return (
     <RecordsPage
       title="Due"
-      subtitle="Instruments whose next visit is near, by their service plans."
+      subtitle="Instruments whose next visit is near, by their service plans. A line opens its booking."
       views={views}
       demo={demo}
       add={null}

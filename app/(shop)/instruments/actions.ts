@@ -16,6 +16,7 @@ import {
 } from "@/lib/instruments/schema";
 import { changeInstrument, createInstrument } from "@/lib/instruments/service";
 import { removeString, saveString, saveStrings } from "@/lib/instruments/strings/service";
+import { versionSeen } from "@/lib/version";
 
 const showInstruments = () => revalidatePath("/instruments", "layout");
 
@@ -95,7 +96,7 @@ export const saveStringsAction = defineAction({
 export const removeStringAction = defineAction({
   name: "instruments.remove-string",
   permission: "instruments.change",
-  input: noteOf.extend({ version: z.int().positive().optional() }),
+  input: noteOf.extend({ version: versionSeen.optional() }),
   run: async (actor, { instrumentId, midi, version }) => {
     await removeString(actor, instrumentId, midi, version);
     return { midi };
@@ -116,7 +117,7 @@ export const saveServicePlanAction = defineAction({
 export const removeServicePlanAction = defineAction({
   name: "service-plans.remove",
   permission: "service-plans.change",
-  input: z.object({ instrumentId: z.uuid(), version: z.int().positive() }),
+  input: z.object({ instrumentId: z.uuid(), version: versionSeen }),
   run: async (actor, { instrumentId, version }) => {
     await removeServicePlan(actor, instrumentId, version);
     showInstruments();

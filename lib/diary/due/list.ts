@@ -39,7 +39,7 @@ export function isNamed({ instrument, room, site, city, customer }: DueItem, ask
     .every((word) => text.includes(word));
 }
 
-export const byDue = ({ window }: DueFact) => window?.until ?? noWindow;
+export const byDue = ({ window }: DueFact) => (window ? `${window.from} ${window.until}` : noWindow);
 export const byNames: Record<DueQuery["sort"], (item: DueItem) => string> = {
   due: byDue,
   name: ({ instrument }) => instrument,

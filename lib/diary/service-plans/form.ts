@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { isDay } from "@/lib/dates";
+import { versionOrNone } from "@/lib/version";
 import { rhythm, type ServicePlanInput, type ServicePlanRecord, servicePlanInput } from "./schema";
 
 const blankOr = (is: (text: string) => boolean, message: string) =>
@@ -13,7 +14,7 @@ const number = z.unknown();
 export const servicePlanForm = z
   .object({
     instrumentId: z.uuid(),
-    version: z.int().min(0),
+    version: versionOrNone,
     kind: z.enum(["interval", "months", "events"]),
     every: number,
     unit: z.enum(["week", "month"]),

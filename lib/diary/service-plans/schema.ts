@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { day } from "@/lib/instruments/schema";
+import { versionOrNone } from "@/lib/version";
 
 const whole = (least: number, most: number, message: string) =>
   z.int(message).min(least, message).max(most, message);
@@ -29,7 +30,7 @@ const minuteOfDay = whole(0, 1440, "A time of the day.");
 
 export const servicePlanInput = z.object({
   /** The version seen; 0 for the first plan of an instrument. */
-  version: z.int().min(0),
+  version: versionOrNone,
   rhythm,
   /** Today at the shop when not given. */
   startsOn: day.optional(),

@@ -8,7 +8,6 @@ import { staffActor } from "@/lib/pages/page-actor";
 import { compareQuery } from "@/lib/plans/compare/schema";
 import { compareSheets } from "@/lib/plans/compare/service";
 import { sheetInHand } from "@/lib/plans/page-data";
-import { sheetName } from "@/lib/readings/stage-words";
 
 export const metadata: Metadata = { title: "Compare" };
 
@@ -16,7 +15,7 @@ export default async function ComparePage({ params, searchParams }: PageProps<"/
   const actor = await staffActor();
   const { id } = await params;
   const instrument = await getInstrument(actor, id);
-  const { read, options, clock } = await sheetInHand(actor, id, undefined);
+  const { read, options, name } = await sheetInHand(actor, id, undefined);
   const asked = compareQuery.safeParse(await searchParams);
   const pair = asked.success ? asked.data.sheets : bestPair(read);
   if (!pair) {
@@ -38,8 +37,8 @@ export default async function ComparePage({ params, searchParams }: PageProps<"/
         instrument={instrument}
         sheets={options}
         names={{
-          before: sheetName(comparison.before, clock.locale, clock.timeZone),
-          after: sheetName(comparison.after, clock.locale, clock.timeZone),
+          before: name({ ...comparison.before, id: comparison.before.sheetId }),
+          after: name({ ...comparison.after, id: comparison.after.sheetId }),
         }}
       />
     );
