@@ -46,17 +46,18 @@ export const byNames: Record<DueQuery["sort"], (item: DueItem) => string> = {
   place: ({ city, site }) => `${city} ${site}`,
 };
 
+/** For days and ids; names are ordered as the shop's language does. */
+export const byCode = (one: string, other: string) => (one < other ? -1 : one > other ? 1 : 0);
+
 /** A page by key, so that one booked meanwhile shifts none. */
 export function pageOf<Item extends { instrumentId: string }>(
   items: readonly Item[],
   keyOf: (item: Item) => string,
   { direction, cursor, most }: DueQuery,
-  locale: string,
+  inOrder: (one: string, other: string) => number,
 ): { items: Item[]; next: string | null } {
-  const inOrder = new Intl.Collator(locale, { sensitivity: "base", numeric: true });
   const sign = direction === "asc" ? 1 : -1;
-  const compare = (one: Key, other: Key) =>
-    sign * (inOrder.compare(one.key, other.key) || (one.id < other.id ? -1 : one.id > other.id ? 1 : 0));
+  const compare = (one: Key, other: Key) => sign * (inOrder(one.key, other.key) || byCode(one.id, other.id));
   const after = cursor === undefined ? null : readCursor(cursor);
   const found = items
     .map((item) => ({ item, key: keyOf(item), id: item.instrumentId }))

@@ -6,7 +6,17 @@ import { authorise } from "@/lib/auth/authorise";
 import type { Day } from "@/lib/dates";
 import { clockWithin } from "@/lib/shop-clock/service";
 import { rhythmOf } from "../service-plans/rhythm-columns";
-import { asksForNames, byDue, byNames, countsOf, type DueFact, isAskedFor, isNamed, pageOf } from "./list";
+import {
+  asksForNames,
+  byCode,
+  byDue,
+  byNames,
+  countsOf,
+  type DueFact,
+  isAskedFor,
+  isNamed,
+  pageOf,
+} from "./list";
 import { dueState, dueWindow } from "./rules";
 import type { DueItem, DueList, DueQuery } from "./schema";
 
@@ -22,9 +32,10 @@ export async function findDue(actor: Actor, query: DueQuery): Promise<DueList> {
     const counts = countsOf(facts);
     if (asksForNames(query)) {
       const named = (await withNames(tx, actor, asked)).filter((item) => isNamed(item, query));
-      return { ...pageOf(named, byNames[query.sort], query, clock.locale), counts };
+      const { compare } = new Intl.Collator(clock.locale, { sensitivity: "base", numeric: true });
+      return { ...pageOf(named, byNames[query.sort], query, compare), counts };
     }
-    const page = pageOf(asked, byDue, query, clock.locale);
+    const page = pageOf(asked, byDue, query, byCode);
     return { items: await withNames(tx, actor, page.items), next: page.next, counts };
   });
 }
