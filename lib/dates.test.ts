@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import {
   addDays,
+  addMonths,
   dayOf,
   isDay,
   isTimeZone,
@@ -19,6 +20,13 @@ describe("dates", () => {
 
   it("take a year of another age for a slip", () => {
     expect(["9999-01-01", "0206-05-14", "2026-05-14"].map(isDay)).toEqual([false, false, true]);
+  });
+
+  it("counts months as calendars do: a short one ends earlier, and a year turns", () => {
+    expect(addMonths("2026-08-31", 6)).toBe("2027-02-28");
+    expect(addMonths("2027-08-31", 6)).toBe("2028-02-29");
+    expect(addMonths("2026-12-15", 1)).toBe("2027-01-15");
+    expect(addMonths("2026-03-31", -1)).toBe("2026-02-28");
   });
 
   it("keeps the day on both sides of a clock change", () => {

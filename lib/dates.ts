@@ -63,6 +63,18 @@ export function addDays(day: Day, days: number): Day {
   return new Date(Date.parse(`${day}T00:00:00Z`) + days * 86_400_000).toISOString().slice(0, 10);
 }
 
+/** A month after the 31st is the last day of a shorter month. */
+export function addMonths(day: Day, months: number): Day {
+  const [year = 0, month = 1, date = 1] = day.split("-").map(Number);
+  const first = new Date(Date.UTC(year, month - 1 + months, 1)).toISOString().slice(0, 8);
+  return `${first}${String(Math.min(date, daysInMonth(first))).padStart(2, "0")}`;
+}
+
+/** Of the month a day or "2026-02" begins with. */
+export function daysInMonth(day: Day): number {
+  return new Date(Date.UTC(Number(day.slice(0, 4)), Number(day.slice(5, 7)), 0)).getUTCDate();
+}
+
 /** "Thursday 14 May": a day near enough that its year is plain. */
 export function showWeekday(day: Day, locale: string, length: "long" | "short" = "long"): string {
   return new Intl.DateTimeFormat(locale, {

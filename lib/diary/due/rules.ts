@@ -1,5 +1,4 @@
-import { addMonths, format, getDaysInMonth, parseISO } from "date-fns";
-import { addDays, type Day } from "@/lib/dates";
+import { addDays, addMonths, type Day, daysInMonth } from "@/lib/dates";
 
 /** When an instrument wants its next visit. */
 export type Rhythm =
@@ -52,9 +51,8 @@ function afterInterval(
   return { from: addDays(target, -tolerance), until: addDays(target, tolerance) };
 }
 
-/** A month after the 31st is the last of a shorter month. */
 function later(day: Day, count: number, unit: "week" | "month"): Day {
-  return unit === "week" ? addDays(day, 7 * count) : format(addMonths(parseISO(day), count), "yyyy-MM-dd");
+  return unit === "week" ? addDays(day, 7 * count) : addMonths(day, count);
 }
 
 function inNextSeason(months: readonly number[], { lastServed, startsOn }: ServiceHistory): DueWindow | null {
@@ -74,7 +72,7 @@ function inNextSeason(months: readonly number[], { lastServed, startsOn }: Servi
 
 function wholeMonth(year: number, month: number): DueWindow {
   const name = `${year}-${String(month).padStart(2, "0")}`;
-  return { from: `${name}-01`, until: `${name}-${getDaysInMonth(new Date(year, month - 1))}` };
+  return { from: `${name}-01`, until: `${name}-${daysInMonth(name)}` };
 }
 
 function beforeNextEvent(
