@@ -2,9 +2,9 @@ import { PageSection } from "@/components/shell/page-section";
 import { Disclosure } from "@/components/ui/disclosure";
 import { Facts } from "@/components/ui/facts";
 import { showDay } from "@/lib/dates";
-import { clockOf } from "@/lib/diary/service-plans/form";
 import type { ServicePlanRecord } from "@/lib/diary/service-plans/schema";
 import { restWords, rhythmWords, weekdayName } from "@/lib/diary/words";
+import { timeOfMinute } from "@/lib/wall-time";
 import { ServicePlanForm } from "./service-plan-form";
 
 /** What an instrument's record says of its next visits, and the form for those who may change it. */
@@ -32,7 +32,7 @@ export function ServicePlanSection({
 
 function PlanFacts({ plan, locale }: { plan: ServicePlanRecord; locale: string }) {
   const days = plan.weekdays.map((day) => weekdayName(day, locale));
-  const hours = plan.hours ? `${clockOf(plan.hours.from)}–${clockOf(plan.hours.until)}` : null;
+  const hours = plan.hours ? `${timeOfMinute(plan.hours.from)}–${timeOfMinute(plan.hours.until)}` : null;
   return (
     <Facts
       facts={[

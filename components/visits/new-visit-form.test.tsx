@@ -33,7 +33,7 @@ async function show(action: ReturnType<typeof askOrBook>) {
       site={{ id: newId(), name: "Home", timeZone: "Europe/Dublin" }}
       instruments={[]}
       technicians={[{ id: newId(), name: "Ines" }]}
-      chosen={{ date: "2026-05-11", instrumentIds: [] }}
+      chosen={{ date: "2026-05-11", time: "09:00", instrumentIds: [] }}
       locale="en-GB"
       action={action}
     />,

@@ -39,9 +39,10 @@ export function NewVisitForm({
   technicians: readonly { id: string; name: string }[];
   chosen: {
     date: string;
+    time: string;
     instrumentIds: readonly string[];
     /** As the instrument's service plan has it. */
-    habit?: { technicianId: string | null; time: string | null; minutes: number; work: string } | undefined;
+    habit?: { technicianId: string | null; workMinutes: number; work: string } | undefined;
   };
   /** Set where this person may book own visits only. */
   ownId?: string | undefined;
@@ -59,8 +60,8 @@ export function NewVisitForm({
       siteId: site.id,
       technicianIds: ownId ? [ownId] : expected.map(({ id }) => id),
       date: chosen.date,
-      time: habit?.time ?? "09:00",
-      minutes: lengths.find((minutes) => minutes >= (habit?.minutes ?? 90)) ?? 90,
+      time: chosen.time,
+      minutes: lengths.find((minutes) => minutes >= (habit?.workMinutes ?? 90)) ?? 90,
       jobs: chosen.instrumentIds.map((instrumentId) => ({ instrumentId, work: habit?.work ?? "Tuning" })),
       state: "offered",
       notes: "",

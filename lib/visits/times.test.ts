@@ -1,10 +1,17 @@
 import { describe, expect, test } from "vitest";
-import { shownTime, siteTime } from "./times";
+import { offeredStart, shownTime, siteTime } from "./times";
 
 function faults(start: string, end: string, zone: string) {
   const read = siteTime({ start, end }, zone);
   return "faults" in read ? read.faults : null;
 }
+
+test("a booking opens on the wanted start, or today on the next full hour when that is over", () => {
+  expect(offeredStart("2026-05-15", "09:00", "2026-05-14T15:20")).toBe("09:00");
+  expect(offeredStart("2026-05-14", "09:00", "2026-05-14T07:20")).toBe("09:00");
+  expect(offeredStart("2026-05-14", "09:00", "2026-05-14T15:20")).toBe("16:00");
+  expect(offeredStart("2026-05-14", "09:00", "2026-05-14T23:40")).toBe("23:00");
+});
 
 describe("a visit's time held against the site's clocks", () => {
   test("an offset that is not the site's then is refused at its field", () => {

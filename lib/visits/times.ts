@@ -1,5 +1,14 @@
 import type { FieldErrors } from "@/lib/errors";
-import { type Fold, offsetsAt, offsetText, parseOffsetTime, withOffset } from "@/lib/wall-time";
+import {
+  type Fold,
+  minuteOfDay,
+  offsetsAt,
+  offsetText,
+  parseOffsetTime,
+  timeOfMinute,
+  type WallTime,
+  withOffset,
+} from "@/lib/wall-time";
 
 /** The time of a visit as the database keeps it. */
 export type SiteTime = {
@@ -80,4 +89,11 @@ export function shownTime(kept: Kept): { start: string; end: string; timeZone: s
     end: withOffset(kept.endsLocal, timeZone, kept.endsFold === 1 ? 1 : 0),
     timeZone,
   };
+}
+
+/** The start a booking opens with: the wanted one, or on the day itself the next full hour if that is over. */
+export function offeredStart(day: string, wanted: string, now: WallTime): string {
+  if (!now.startsWith(day)) return wanted;
+  const nextHour = 60 * Math.floor(minuteOfDay(now) / 60) + 60;
+  return timeOfMinute(Math.max(minuteOfDay(`${day}T${wanted}`), Math.min(nextHour, 23 * 60)));
 }

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { isDay } from "@/lib/dates";
 import { versionOrNone } from "@/lib/version";
+import { timeOfMinute } from "@/lib/wall-time";
 import { rhythm, type ServicePlanInput, type ServicePlanRecord, servicePlanInput } from "./schema";
 
 const blankOr = (is: (text: string) => boolean, message: string) =>
@@ -91,8 +92,8 @@ export function formOf(instrumentId: string, plan: ServicePlanRecord | null): Se
     restsUntil: plan?.restsUntil ?? "",
     technicianId: plan?.technicianId ?? "",
     weekdays: plan?.weekdays.map(String) ?? [],
-    hoursFrom: plan?.hours ? clockOf(plan.hours.from) : "",
-    hoursUntil: plan?.hours ? clockOf(plan.hours.until) : "",
+    hoursFrom: plan?.hours ? timeOfMinute(plan.hours.from) : "",
+    hoursUntil: plan?.hours ? timeOfMinute(plan.hours.until) : "",
     work: plan?.work ?? "Tuning",
     workMinutes: plan?.workMinutes ?? 90,
   };
@@ -101,8 +102,4 @@ export function formOf(instrumentId: string, plan: ServicePlanRecord | null): Se
 function minutesOf(text: string): number | null {
   const [, hours, minutes] = /^([01]\d|2[0-3]):([0-5]\d)$/.exec(text) ?? [];
   return hours && minutes ? 60 * Number(hours) + Number(minutes) : null;
-}
-
-export function clockOf(minute: number): string {
-  return `${String(Math.floor(minute / 60)).padStart(2, "0")}:${String(minute % 60).padStart(2, "0")}`;
 }

@@ -8,7 +8,6 @@ import { NewVisitForm } from "@/components/visits/new-visit-form";
 import { SitePicker } from "@/components/visits/site-picker";
 import { may, scopeOf } from "@/lib/auth/access";
 import { isDay } from "@/lib/dates";
-import { clockOf } from "@/lib/diary/service-plans/form";
 import { getServicePlan } from "@/lib/diary/service-plans/service";
 import { idParams } from "@/lib/doors/params";
 import { AppError } from "@/lib/errors";
@@ -18,6 +17,8 @@ import { shopClock } from "@/lib/shop-clock/service";
 import { siteListQuery } from "@/lib/sites/schema";
 import { findSites } from "@/lib/sites/service";
 import { bookingChoices } from "@/lib/visits/booking/service";
+import { offeredStart } from "@/lib/visits/times";
+import { timeOfMinute, wallTimeOf } from "@/lib/wall-time";
 import { bookVisitAction } from "../actions";
 
 export const metadata: Metadata = { title: "Book a visit" };
@@ -48,6 +49,7 @@ async function Book({ asked }: { asked: Asked }) {
   const only = instruments.length === 1 ? instruments.map(({ id }) => id) : [];
   const named = instruments.filter(({ id }) => id === asked.instrument).map(({ id }) => id);
   const plan = named[0] ? await getServicePlan(actor, named[0]) : null;
+  const date = isDay(asked.date) ? asked.date : site.today;
   return (
     <>
       <WorkHead
@@ -67,16 +69,14 @@ async function Book({ asked }: { asked: Asked }) {
         instruments={instruments}
         technicians={technicians}
         chosen={{
-          date: isDay(asked.date) ? asked.date : site.today,
+          date,
+          time: offeredStart(
+            date,
+            plan?.hours ? timeOfMinute(plan.hours.from) : "09:00",
+            wallTimeOf(new Date(), site.timeZone),
+          ),
           instrumentIds: named.length > 0 ? named : only,
-          habit: plan
-            ? {
-                technicianId: plan.technicianId,
-                time: plan.hours && clockOf(plan.hours.from),
-                minutes: plan.workMinutes,
-                work: plan.work,
-              }
-            : undefined,
+          habit: plan ?? undefined,
         }}
         ownId={scopeOf(actor.role, "visits.change") === "own" ? actor.memberId : undefined}
         locale={locale}
