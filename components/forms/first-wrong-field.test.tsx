@@ -60,7 +60,7 @@ it("does the same for a visit nobody comes to", async () => {
         { id: newId(), name: "Ines" },
         { id: newId(), name: "Jonas" },
       ]}
-      chosen={{ date: "2030-05-14", instrumentIds: [] }}
+      chosen={{ date: "2030-05-14", time: "09:00", instrumentIds: [] }}
       locale="en-GB"
       action={never}
     />,
