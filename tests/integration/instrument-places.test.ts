@@ -60,7 +60,7 @@ describe("an instrument's places", () => {
 
   it("refuses a move before the instrument came, on that day, or in the future", async () => {
     const { shop, flat, id } = await pianoAtHome();
-    for (const since of ["2020-01-01", "2021-05-01", "2999-01-01"]) {
+    for (const since of ["2020-01-01", "2021-05-01", "2199-01-01"]) {
       await expect(
         moveInstrument(shop.office, id, moved({ version: 1, siteId: flat, since })),
       ).rejects.toMatchObject({ code: "invalid", more: { fields: { since: expect.any(String) } } });
