@@ -1,9 +1,9 @@
 // @vitest-environment happy-dom
 import { act } from "react";
-import { createRoot, type Root } from "react-dom/client";
-import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { describe, expect, it, vi } from "vitest";
 import { z } from "zod";
 import type { ActionResult } from "@/lib/doors/action-result";
+import { mounted } from "@/tests/support/mounted";
 import { ActionForm, SubmitButton } from "./action-form";
 import { NumberInput, TextInput } from "./text-input";
 import { readNumber, useActionForm } from "./use-action-form";
@@ -15,20 +15,7 @@ const schema = z.object({
 
 type Answer = ActionResult<{ id: string }>;
 
-let root: Root;
-let host: HTMLElement;
-
-beforeEach(() => {
-  Reflect.set(globalThis, "IS_REACT_ACT_ENVIRONMENT", true);
-  host = document.createElement("div");
-  document.body.append(host);
-  root = createRoot(host);
-});
-
-afterEach(() => {
-  act(() => root.unmount());
-  host.remove();
-});
+const page = mounted();
 
 function TestForm({
   action,
@@ -47,32 +34,14 @@ function TestForm({
   );
 }
 
-function input(name: string): HTMLInputElement {
-  const found = host.querySelector<HTMLInputElement>(`input[name="${name}"]`);
-  if (!found) throw new Error(`no field ${name}`);
-  return found;
-}
-
-async function type(name: string, text: string) {
-  await act(async () => {
-    // React keeps its own record of the value; the prototype's setter goes around it as a key press would.
-    Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, "value")?.set?.call(input(name), text);
-    input(name).dispatchEvent(new Event("input", { bubbles: true }));
-  });
-}
-
-async function submit() {
-  await act(async () => {
-    host.querySelector("form")?.dispatchEvent(new Event("submit", { bubbles: true, cancelable: true }));
-    await new Promise((done) => setTimeout(done, 20));
-  });
-}
+const input = (name: string) => page.field(`input[name="${name}"]`);
+const type = (name: string, text: string) => page.type(input(name), text);
 
 describe("a form tied to a server action", () => {
   it("does not call the action while a field is wrong, and names the field", async () => {
     const action = vi.fn<(given: unknown) => Promise<Answer>>();
-    await act(async () => root.render(<TestForm action={action} />));
-    await submit();
+    await page.show(<TestForm action={action} />);
+    await page.submit();
     expect(action).not.toHaveBeenCalled();
     expect(input("name").getAttribute("aria-invalid")).toBe("true");
     const described = input("name").getAttribute("aria-describedby") ?? "";
@@ -83,13 +52,13 @@ describe("a form tied to a server action", () => {
   it("sends a decimal comma as a number and leaves an empty optional field out", async () => {
     const action = vi.fn(async (_: unknown): Promise<Answer> => ({ ok: true, data: { id: "1" } }));
     const onSuccess = vi.fn();
-    await act(async () => root.render(<TestForm action={action} onSuccess={onSuccess} />));
+    await page.show(<TestForm action={action} onSuccess={onSuccess} />);
     await type("name", "Castellan 186");
     await type("humidity", "57,5");
-    await submit();
+    await page.submit();
     expect(action).toHaveBeenLastCalledWith({ name: "Castellan 186", humidity: 57.5 });
     await type("humidity", "");
-    await submit();
+    await page.submit();
     expect(action).toHaveBeenLastCalledWith({ name: "Castellan 186", humidity: undefined });
     expect(onSuccess).toHaveBeenCalledTimes(2);
   });
@@ -103,14 +72,14 @@ describe("a form tied to a server action", () => {
         fields: { name: "Another instrument has it." },
       },
     });
-    await act(async () => root.render(<TestForm action={action} />));
+    await page.show(<TestForm action={action} />);
     await type("name", "Castellan 186");
     await type("humidity", "58");
-    await submit();
+    await page.submit();
     expect(input("name").value).toBe("Castellan 186");
     expect(input("humidity").value).toBe("58");
     expect(input("name").getAttribute("aria-invalid")).toBe("true");
-    const alert = host.querySelector("[role=alert]");
+    const alert = page.host().querySelector("[role=alert]");
     expect(alert?.textContent).toContain("This name is taken.");
     expect(alert?.textContent).toContain("Another instrument has it.");
     expect(document.activeElement).toBe(input("name"));
@@ -121,21 +90,21 @@ describe("a form tied to a server action", () => {
       ok: false,
       error: { code: "stale", message: "Somebody changed this meanwhile." },
     });
-    await act(async () => root.render(<TestForm action={action} />));
+    await page.show(<TestForm action={action} />);
     await type("name", "Castellan 186");
-    await submit();
+    await page.submit();
     expect(document.activeElement?.getAttribute("role")).toBe("alert");
   });
 
   it("goes to the first field that is wrong, in the order of the page, and from the summary to each", async () => {
     const action = vi.fn<(given: unknown) => Promise<Answer>>();
-    await act(async () => root.render(<TestForm action={action} />));
+    await page.show(<TestForm action={action} />);
     await type("name", "Castellan 186");
     await type("humidity", "140");
-    await submit();
+    await page.submit();
     expect(document.activeElement).toBe(input("humidity"));
     act(() => input("name").focus());
-    const link = [...host.querySelectorAll("button")].find(
+    const link = [...page.host().querySelectorAll("button")].find(
       ({ textContent }) => textContent === "At most 100 %.",
     );
     act(() => link?.click());
@@ -150,29 +119,29 @@ describe("a form tied to a server action", () => {
       return { ok: true, data: { id: "1" } };
     };
     const onSuccess = vi.fn();
-    await act(async () => root.render(<TestForm action={action} onSuccess={onSuccess} />));
+    await page.show(<TestForm action={action} onSuccess={onSuccess} />);
     await type("name", "Castellan 186");
-    await submit();
-    const alert = host.querySelector("[role=alert]");
+    await page.submit();
+    const alert = page.host().querySelector("[role=alert]");
     expect(alert?.textContent).toContain("did not answer");
     expect(alert?.querySelector("button[type=submit]")?.textContent).toBe("Send again");
     expect(input("name").value).toBe("Castellan 186");
-    await submit();
+    await page.submit();
     expect(onSuccess).toHaveBeenCalledOnce();
-    expect(host.querySelector("[role=alert]")).toBeNull();
+    expect(page.host().querySelector("[role=alert]")).toBeNull();
   });
 
   it("writes once when the button is pressed twice", async () => {
     let finish: (answer: Answer) => void = () => {};
     const action = vi.fn(() => new Promise<Answer>((done) => (finish = done)));
-    await act(async () => root.render(<TestForm action={action} />));
+    await page.show(<TestForm action={action} />);
     await type("name", "Castellan 186");
-    await submit();
-    await submit();
+    await page.submit();
+    await page.submit();
     expect(action).toHaveBeenCalledOnce();
-    expect(host.querySelector("button[type=submit]")?.getAttribute("aria-busy")).toBe("true");
+    expect(page.host().querySelector("button[type=submit]")?.getAttribute("aria-busy")).toBe("true");
     await act(async () => finish({ ok: true, data: { id: "1" } }));
-    expect(host.querySelector("button[type=submit]")?.getAttribute("aria-busy")).toBeNull();
+    expect(page.host().querySelector("button[type=submit]")?.getAttribute("aria-busy")).toBeNull();
   });
 
   it("lets the framework's redirect pass instead of calling it a network failure", async () => {
@@ -184,10 +153,10 @@ describe("a form tied to a server action", () => {
     const keep = (reason: unknown) => failures.push(reason);
     process.on("unhandledRejection", keep);
     try {
-      await act(async () => root.render(<TestForm action={action} />));
+      await page.show(<TestForm action={action} />);
       await type("name", "Castellan 186");
-      await submit();
-      expect(host.querySelector("[role=alert]")).toBeNull();
+      await page.submit();
+      expect(page.host().querySelector("[role=alert]")).toBeNull();
       expect(failures).toEqual([redirect]);
     } finally {
       process.off("unhandledRejection", keep);

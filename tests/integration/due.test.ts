@@ -7,7 +7,6 @@ import { findDue } from "@/lib/diary/due/service";
 import { addSiteEvent, findSiteEvents, removeSiteEvent } from "@/lib/diary/events/service";
 import { servicePlanInput } from "@/lib/diary/service-plans/schema";
 import { getServicePlan, removeServicePlan, saveServicePlan } from "@/lib/diary/service-plans/service";
-import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import {
   closeFactories,
@@ -18,6 +17,7 @@ import {
   makeVisit,
   owner as sql,
 } from "../support/factories";
+import { refusal } from "../support/refusal";
 
 afterAll(async () => {
   await closeFactories();
@@ -48,16 +48,6 @@ const halfYearly = (more: Record<string, unknown> = {}) =>
 
 const due = (actor: Actor, query: Record<string, unknown> = {}) =>
   findDue(actor, dueQuery.parse({ state: "any", ...query }));
-
-async function refusal(run: Promise<unknown>): Promise<AppError> {
-  try {
-    await run;
-  } catch (error) {
-    if (error instanceof AppError) return error;
-    throw error;
-  }
-  throw new Error("It was not refused");
-}
 
 describe("a service plan", () => {
   it("is written, read back, changed on its version and removed", async () => {

@@ -18,6 +18,7 @@ import {
   owner as sql,
 } from "../support/factories";
 import { newShop } from "../support/people";
+import { refusal } from "../support/refusal";
 
 afterAll(async () => {
   await closeFactories();
@@ -59,16 +60,6 @@ function asked(at: Scene, more: Partial<Parameters<typeof newVisit.parse>[0] & o
     ...summer,
     ...more,
   });
-}
-
-async function refusal(run: Promise<unknown>): Promise<AppError> {
-  try {
-    await run;
-  } catch (error) {
-    if (error instanceof AppError) return error;
-    throw error;
-  }
-  throw new Error("It was not refused");
 }
 
 const step = (visit: VisitRecord, to: VisitRecord["state"], more = {}) => ({
